@@ -1,0 +1,6 @@
+package cite
+
+// Sources on beams, plates and other structures.
+var ()
+
+var structures = []*Source{}
