@@ -1,0 +1,23 @@
+package regime
+
+import (
+	"regimed/regime/finding"
+	"regimed/regime/group"
+	"regimed/regime/input"
+	"regimed/regime/kind"
+	"regimed/regime/ladder"
+	"regimed/regime/scale"
+)
+
+// Answer is the record of one case: everything that a rendering shows, and no
+// word of prose.
+type Answer struct {
+	Case           *input.Case
+	Kind           *kind.Kind
+	Scales         *scale.Set
+	Groups         *group.Set
+	Findings       []finding.Finding // by the order of assumption.Catalogue
+	Recommendation ladder.Recommendation
+	finding.Study
+	Warnings []kind.Warning
+}

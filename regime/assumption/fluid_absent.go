@@ -1,0 +1,51 @@
+package assumption
+
+import (
+	"math"
+
+	"regimed/regime/cite"
+	"regimed/regime/finding"
+	"regimed/regime/group"
+)
+
+// FluidAbsent: the structure may be modelled dry.
+var FluidAbsent = &Entry{
+	ID:        "fluid-absent",
+	Title:     "No effect of the fluid on the motion",
+	LeavesOut: "added mass, fluid stiffness and fluid damping",
+	Estimated: "frequency: √(1 + μΓr) − 1, and half the stiffness of a film or cavity over that of the structure; response: (ζ_v + ζ_rad)/ζ",
+	Measures:  []finding.Measure{finding.Frequency, finding.Response},
+	Sources:   []*cite.Source{cite.Batchelor1967},
+	Estimate:  estimateFluidAbsent,
+}
+
+var (
+	absentInertia   = finding.Say("Leaving the fluid out shifts the natural frequency by {e:%}: the added mass is {added_mass_ratio} of the dry mass.")
+	absentStiffness = finding.Say("Leaving the fluid out shifts the natural frequency by {e:%}: the fluid's stiffness is {fluid_stiffness} of the structure's.")
+	absentDamping   = finding.Say("The fluid makes {e:%} of the total damping.")
+)
+
+func estimateFluidAbsent(x *finding.Context) {
+	switch {
+	case !x.Is(group.Fluid):
+		x.NotApplicable(noFluid)
+		return
+	case x.Is(group.StaticOnly):
+		x.NotApplicable(noFrequency)
+		return
+	}
+	inertia := finding.Part{Measure: finding.Frequency, Basis: finding.Canonical, Factor: x.Factors.Inertia,
+		Say: absentInertia, Source: cite.Batchelor1967}
+	if x.Has(group.FrequencyRatio) {
+		inertia.Estimate = 1/x.Get(group.FrequencyRatio) - 1
+		x.Add(inertia)
+	} else {
+		x.AddOrWait(inertia, group.AddedMassRatio, func(mu float64) float64 { return math.Sqrt(1+mu) - 1 })
+	}
+	x.AddOrWait(finding.Part{Measure: finding.Frequency, Basis: finding.Canonical, Factor: x.Factors.Viscous,
+		Say: absentStiffness, Source: cite.Batchelor1967}, group.FluidStiffness, func(v float64) float64 { return v / 2 })
+	if x.Has(group.DampingViscous) || x.Has(group.DampingRadiation) {
+		addShare(x, finding.Part{Measure: finding.Response, Basis: finding.Canonical, Factor: x.Factors.Viscous,
+			Say: absentDamping, Source: cite.Batchelor1967}, orZero(x, group.DampingViscous)+orZero(x, group.DampingRadiation))
+	}
+}

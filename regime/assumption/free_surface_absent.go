@@ -1,0 +1,62 @@
+package assumption
+
+import (
+	"math"
+
+	"regimed/regime/cite"
+	"regimed/regime/finding"
+	"regimed/regime/group"
+)
+
+// FreeSurfaceAbsent: the surface above may be left out.
+var FreeSurfaceAbsent = &Entry{
+	ID:        "free-surface-absent",
+	Title:     "No free surface",
+	LeavesOut: "the free surface above or around",
+	Estimated: "frequency: added mass below a rigid lid (ω²d/g < 0.05), below a pressure-free surface (ω²d/g > 10), the worse of the two between",
+	Measures:  []finding.Measure{finding.Frequency},
+	Sources:   []*cite.Source{cite.Newman1977, cite.Batchelor1967},
+	Estimate:  estimateFreeSurface,
+}
+
+var (
+	surfaceLid  = finding.Say("Without the surface, which acts as a rigid lid at ω√(d/g) = {dynamic_froude}, the wet frequency is off by {e:%}.")
+	surfaceFree = finding.Say("Without the surface, which is pressure-free at ω√(d/g) = {dynamic_froude}, the wet frequency is off by {e:%}.")
+	surfaceBoth = finding.Say("Without the surface, which makes waves at ω√(d/g) = {dynamic_froude}, the wet frequency is off by up to {e:%}.")
+)
+
+func estimateFreeSurface(x *finding.Context) {
+	switch {
+	case !x.Is(group.Fluid):
+		x.NotApplicable(noFluid)
+		return
+	case !x.Is(group.NearSurface):
+		x.NotApplicable(noSurface)
+		return
+	case x.Is(group.StaticOnly):
+		x.NotApplicable(noFrequency)
+		return
+	}
+	p := finding.Part{Measure: finding.Frequency, Basis: finding.Canonical, Factor: x.Factors.Inertia, Say: surfaceBoth, Source: cite.Newman1977}
+	if !x.Has(group.AddedMassRatio) || !x.Has(group.DynamicFroude) || !x.Has(group.SurfaceInertiaLid) || !x.Has(group.SurfaceInertiaFree) {
+		waitOn(x, p, group.AddedMassRatio, group.DynamicFroude, group.SurfaceInertiaLid, group.SurfaceInertiaFree)
+		return
+	}
+	mu, waves := x.Get(group.AddedMassRatio), x.Get(group.DynamicFroude)*x.Get(group.DynamicFroude)
+	lid, free := withoutSurface(mu, x.Get(group.SurfaceInertiaLid)), withoutSurface(mu, x.Get(group.SurfaceInertiaFree))
+	switch {
+	case waves < 0.05:
+		p.Estimate, p.Say = lid, surfaceLid
+	case waves > 10:
+		p.Estimate, p.Say = free, surfaceFree
+	default:
+		p.Estimate = math.Max(lid, free)
+	}
+	x.Add(p)
+}
+
+// withoutSurface is the error of the frequency, relative to the model that has
+// the surface, when the factor c on the added mass is left out.
+func withoutSurface(mu, c float64) float64 {
+	return math.Abs(math.Sqrt((1+mu*c)/(1+mu)) - 1)
+}

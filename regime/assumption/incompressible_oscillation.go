@@ -1,0 +1,47 @@
+package assumption
+
+import (
+	"regimed/regime/cite"
+	"regimed/regime/finding"
+	"regimed/regime/group"
+)
+
+// IncompressibleOscillation: sound may be left out.
+var IncompressibleOscillation = &Entry{
+	ID:        "incompressible-oscillation",
+	Title:     "Incompressible oscillation",
+	LeavesOut: "sound: compressibility of the oscillating fluid and radiation",
+	Estimated: "frequency: |√((1 + μΓr)/(1 + μ)) − 1| with Γ of the acoustic solution; response: ζ_rad/ζ; sound: 1",
+	Measures:  []finding.Measure{finding.Frequency, finding.Response, finding.Sound},
+	Sources:   []*cite.Source{cite.JungerFeit1986},
+	Estimate:  estimateIncompressibleOscillation,
+}
+
+var (
+	soundInertia = finding.Say("Without sound the wet frequency is off by {e:%}: at He = {compressibility} the added mass is {acoustic_inertia} times the incompressible one.")
+	soundDamping = finding.Say("Radiation makes {e:%} of the total damping: ζ_rad = {damping_radiation}.")
+	soundItself  = finding.Say("The radiated sound is asked for, and an incompressible fluid has none.")
+)
+
+func estimateIncompressibleOscillation(x *finding.Context) {
+	if !x.Is(group.Fluid) {
+		x.NotApplicable(noFluid)
+		return
+	}
+	if !x.Is(group.StaticOnly) {
+		p := finding.Part{Measure: finding.Frequency, Basis: finding.Canonical, Factor: x.Factors.Acoustic,
+			Say: soundInertia, Source: cite.JungerFeit1986}
+		if x.Has(group.AddedMassRatio) && x.Has(group.AcousticInertia) {
+			p.Estimate = inertiaError(x.Get(group.AddedMassRatio), x.Get(group.AcousticInertia))
+			x.Add(p)
+		} else {
+			waitOn(x, p, group.AcousticInertia, group.AddedMassRatio)
+		}
+		if x.Has(group.DampingRadiation) {
+			addShare(x, finding.Part{Measure: finding.Response, Basis: finding.Canonical, Factor: x.Factors.Acoustic,
+				Say: soundDamping, Source: cite.JungerFeit1986}, x.Get(group.DampingRadiation))
+		}
+	}
+	x.Add(finding.Part{Measure: finding.Sound, Basis: finding.Definition, Estimate: 1, Factor: 1,
+		Say: soundItself, Source: cite.JungerFeit1986})
+}

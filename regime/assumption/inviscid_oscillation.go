@@ -1,0 +1,46 @@
+package assumption
+
+import (
+	"regimed/regime/cite"
+	"regimed/regime/finding"
+	"regimed/regime/group"
+)
+
+// InviscidOscillation: the oscillating boundary layer may be left out.
+var InviscidOscillation = &Entry{
+	ID:        "inviscid-oscillation",
+	Title:     "Inviscid oscillation",
+	LeavesOut: "the oscillating boundary layer",
+	Estimated: "frequency: |√((1 + μΓr)/(1 + μ)) − 1| with Γ of the viscous solution; response: ζ_v/ζ",
+	Measures:  []finding.Measure{finding.Frequency, finding.Response},
+	Sources:   []*cite.Source{cite.Stokes1851, cite.Landau1987},
+	Estimate:  estimateInviscidOscillation,
+}
+
+var (
+	inviscidInertia = finding.Say("Without viscosity the wet frequency is off by {e:%}: the viscous layer makes the added mass {viscous_inertia} times the ideal one at S = {stokes}.")
+	inviscidDamping = finding.Say("Viscosity makes {e:%} of the total damping: ζ_v = {damping_viscous}.")
+)
+
+func estimateInviscidOscillation(x *finding.Context) {
+	switch {
+	case !x.Is(group.Fluid):
+		x.NotApplicable(noFluid)
+		return
+	case x.Is(group.StaticOnly):
+		x.NotApplicable(noFrequency)
+		return
+	}
+	p := finding.Part{Measure: finding.Frequency, Basis: finding.Canonical, Factor: x.Factors.Viscous,
+		Say: inviscidInertia, Source: cite.Stokes1851}
+	if x.Has(group.AddedMassRatio) && x.Has(group.ViscousInertia) {
+		p.Estimate = inertiaError(x.Get(group.AddedMassRatio), x.Get(group.ViscousInertia))
+		x.Add(p)
+	} else {
+		waitOn(x, p, group.ViscousInertia, group.AddedMassRatio)
+	}
+	if x.Has(group.DampingViscous) {
+		addShare(x, finding.Part{Measure: finding.Response, Basis: finding.Canonical, Factor: x.Factors.Viscous,
+			Say: inviscidDamping, Source: cite.Stokes1851}, x.Get(group.DampingViscous))
+	}
+}

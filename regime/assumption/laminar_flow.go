@@ -1,0 +1,43 @@
+package assumption
+
+import (
+	"math"
+
+	"regimed/regime/cite"
+	"regimed/regime/finding"
+	"regimed/regime/group"
+)
+
+// LaminarFlow: no turbulence. No class rests on it; it sets the axis
+// turbulence.
+var LaminarFlow = &Entry{
+	ID:        "laminar-flow",
+	Title:     "Laminar flow",
+	LeavesOut: "turbulence",
+	Estimated: "scale: Re in the transition band of the kind: the wake of a bluff body 190 to 300, a plate along the flow 3e5 to 3e6",
+	Measures:  []finding.Measure{finding.Scale},
+	Sources:   []*cite.Source{cite.Williamson1996, cite.Schlichting1979},
+	Estimate:  estimateLaminar,
+}
+
+var (
+	wakeTurbulent  = finding.Say("At Re = {reynolds} the wake lies {e} times the middle of its transition from 190 to 300.")
+	plateTurbulent = finding.Say("At Re = {length_reynolds} the boundary layer lies {e} times the middle of its transition from 3e5 to 3e6.")
+)
+
+func estimateLaminar(x *finding.Context) {
+	switch {
+	case !x.Is(group.Fluid):
+		x.NotApplicable(noFluid)
+		return
+	case !x.Any(group.Flow):
+		x.NotApplicable(noFlow)
+		return
+	}
+	b := x.Set.Band
+	p := finding.Part{Measure: finding.Scale, Basis: finding.Threshold, Factor: math.Sqrt(b.High / b.Low), Say: wakeTurbulent, Source: cite.Williamson1996}
+	if b.Length == group.LengthReynolds {
+		p.Say, p.Source = plateTurbulent, cite.Schlichting1979
+	}
+	x.AddOrWait(p, b.Length, func(re float64) float64 { return re / math.Sqrt(b.Low*b.High) })
+}

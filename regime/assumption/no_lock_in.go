@@ -1,0 +1,129 @@
+package assumption
+
+import (
+	"math"
+
+	"regimed/regime/cite"
+	"regimed/regime/criterion"
+	"regimed/regime/finding"
+	"regimed/regime/group"
+)
+
+// NoLockIn: vortex shedding does not lock to a mode.
+var NoLockIn = &Entry{
+	ID:        "no-lock-in",
+	Title:     "No lock-in of vortex shedding",
+	LeavesOut: "the feedback by which a vibrating body holds the shedding at its own frequency",
+	Estimated: "across the flow: the lesser of the position of St U/(f_w D) in the unstable band of the linear wake oscillator and (A/D)/0.02 of the published amplitudes, at the worst speed of operation and for the worst mode; along the flow, in liquids: the lesser of the position of U/(f_w D) in 1 … 4.5 and 1.8/Sc",
+	Measures:  []finding.Measure{finding.Stability},
+	Sources:   []*cite.Source{cite.DeLangre2006, cite.SkopGriffin1975, cite.GovardhanWilliamson2006, cite.DNVC205},
+	Hazard:    "Vortex-induced vibration can fatigue a structure within hours: the code in force for it, and its fatigue check, decide.",
+	Estimate:  estimateLockIn,
+}
+
+var (
+	lockInBand      = finding.Say("Shedding meets a mode: St U/(f_w D) comes to {lock_in_position} in operation, the band of lock-in runs from {wake_band_low} to {wake_band_high}; locked in, the amplitude reaches {vortex_amplitude} D.")
+	lockInBandOpen  = finding.Say("Shedding meets a mode: St U/(f_w D) comes to {lock_in_position} in operation, the band of lock-in begins at {wake_band_low} and has no upper end; locked in, the amplitude reaches {vortex_amplitude} D.")
+	lockInAmplitude = finding.Say("Locked in, the amplitude would be {vortex_amplitude} D, against 0.02 D below which lock-in is a forced vibration.")
+	lockInNoDamping = finding.Say("St U/(f_w D) comes to {lock_in_position} in operation, in the band from {wake_band_low} on; whether the vibration grows depends on the damping, which was not given.")
+	lockInInline    = finding.Say("Along the flow: U/(f_w D) comes to {inline_velocity} in operation, the in-line band runs from 1 to 4.5; 1.8/Sc is {inline_scruton}.")
+	noShedding      = finding.Say("No vortices are shed: Re = {reynolds} is below 47.")
+	notAcross       = finding.Say("The flow does not run across the structure.")
+	attached        = finding.Say("The body is streamlined without a blunt trailing edge: it sheds no street of vortices.")
+)
+
+// Amplitude below which lock-in is a forced vibration, over the diameter.
+const forcedAmplitude = 0.02
+
+func estimateLockIn(x *finding.Context) {
+	switch {
+	case !x.Is(group.Fluid):
+		x.NotApplicable(noFluid)
+		return
+	case !x.Any(group.Flow):
+		x.NotApplicable(noFlow)
+		return
+	case !x.Is(group.Cross):
+		x.NotApplicable(notAcross)
+		return
+	case !x.Is(group.Bluff):
+		x.NotApplicable(attached)
+		return
+	case x.Is(group.StaticOnly):
+		x.NotApplicable(noFrequency)
+		return
+	case x.Has(group.Strouhal) && x.Get(group.Strouhal) == 0:
+		x.NotApplicable(noShedding)
+		return
+	}
+	lockInAcross(x)
+	if x.Is(group.Liquid) {
+		lockInAlong(x)
+	}
+	x.Publish(criterion.All, "no-lock-in")
+}
+
+func lockInAcross(x *finding.Context) {
+	band := finding.Part{Measure: finding.Stability, Basis: finding.Canonical, Limit: 1, Factor: 1.15,
+		Say: lockInBand, Source: cite.DeLangre2006}
+	if !x.Has(group.LockInPosition) {
+		waitOn(x, band, group.LockInPosition, group.WakeBandLow)
+		return
+	}
+	position := x.Get(group.LockInPosition)
+	lo, hi := x.Get(group.WakeBandLow), math.Inf(1)
+	if x.Has(group.WakeBandHigh) {
+		hi = x.Get(group.WakeBandHigh)
+	} else {
+		band.Say = lockInBandOpen
+	}
+	band.Estimate, band.Inner = finding.Band(position, lo, hi, band.Factor)
+	if position > hi && !x.Is(group.ModesDerived) && band.Estimate < 1 {
+		band.Estimate = 1 // higher modes, which are not known, lie ahead
+	}
+	amplitude := finding.Part{Measure: finding.Stability, Basis: finding.Canonical, Limit: 1, Factor: 2,
+		Say: lockInAmplitude, Source: cite.SkopGriffin1975}
+	switch {
+	case band.Estimate*band.Factor <= 1:
+		x.Add(band) // the speeds stay off the band: the damping does not matter
+	case x.Has(group.VortexAmplitude):
+		amplitude.Estimate = x.Get(group.VortexAmplitude) / forcedAmplitude
+		x.Add(lesser(band, amplitude))
+	default:
+		amplitude.Say = lockInNoDamping
+		waitOn(x, amplitude, group.VortexAmplitude, group.DampingRatio)
+	}
+}
+
+func lockInAlong(x *finding.Context) {
+	if !x.Has(group.InlinePosition) {
+		return // waits for the same input as the band across
+	}
+	part := finding.Part{Measure: finding.Stability, Basis: finding.Threshold, Limit: 1, Factor: 1.15,
+		Say: lockInInline, Source: cite.DNVC205}
+	part.Estimate, part.Inner = x.Get(group.InlinePosition), math.Min(part.Factor, math.Pow(4.5, 0.25))
+	if part.Estimate*part.Factor <= 1 {
+		x.Add(part)
+		return
+	}
+	x.AddOrWait(part, group.InlineScruton, func(v float64) float64 { return math.Min(part.Estimate, v) })
+}
+
+// lesser returns the part that is further from its onset: both conditions are
+// needed for the hazard.
+func lesser(a, b finding.Part) finding.Part {
+	if b.Estimate < a.Estimate {
+		return b
+	}
+	return a
+}
+
+// waitOn waits for the first of the groups that is missing.
+func waitOn(x *finding.Context, p finding.Part, ids ...group.ID) {
+	for _, id := range ids {
+		if x.State(id) == group.Missing {
+			x.Wait(p, id, nil)
+			return
+		}
+	}
+}

@@ -1,0 +1,62 @@
+package assumption
+
+import (
+	"math"
+
+	"regimed/regime/canon"
+	"regimed/regime/cite"
+	"regimed/regime/finding"
+	"regimed/regime/group"
+)
+
+// QuasiSteady: the flow sees a structure that stands still.
+var QuasiSteady = &Entry{
+	ID:        "quasi-steady",
+	Title:     "Quasi-steady flow",
+	LeavesOut: "memory of the flow",
+	Estimated: "load: |C(k) − 1| of attached flow; bluff bodies: f_w/f_v against 1/3 (with St 0.2 a reduced velocity above 15)",
+	Measures:  []finding.Measure{finding.Load, finding.Scale},
+	Sources:   []*cite.Source{cite.Theodorsen1935, cite.Blevins1990},
+	Estimate:  estimateQuasiSteady,
+}
+
+var (
+	memoryLift = finding.Say("At k = {reduced_frequency} the flow's memory changes the load by {e:%}: |C(k) − 1|.")
+	memoryWake = finding.Say("The mode beats {e} times as fast as the wake sheds; memory fades below a third.")
+	memoryNone = finding.Say("The flow along a slender body has no memory: its load follows the motion of the section.")
+	noWake     = finding.Say("No vortices are shed at Re = {reynolds}: memory has no time scale of a wake.")
+)
+
+func estimateQuasiSteady(x *finding.Context) {
+	switch {
+	case !x.Is(group.Fluid):
+		x.NotApplicable(noFluid)
+	case !x.Any(group.Flow):
+		x.NotApplicable(noFlow)
+	case x.Is(group.StaticOnly):
+		x.NotApplicable(noFrequency)
+	case x.Is(group.Axial):
+		x.NotApplicable(memoryNone)
+	case !x.Is(group.Bluff):
+		x.AddOrWait(finding.Part{Measure: finding.Load, Basis: finding.Canonical, Factor: 1.5, Say: memoryLift, Source: cite.Theodorsen1935},
+			group.ReducedFrequency, memory)
+	case x.Has(group.Strouhal) && x.Get(group.Strouhal) == 0:
+		x.NotApplicable(noWake)
+	default:
+		x.AddOrWait(finding.Part{Measure: finding.Scale, Basis: finding.Threshold, Limit: 1.0 / 3, Factor: 1.5, Say: memoryWake, Source: cite.Blevins1990},
+			group.SheddingRatio, func(r float64) float64 { return 1 / r })
+	}
+}
+
+// memory is |C(k) − 1| of Theodorsen's function; ½ is its limit beyond the
+// range of the function.
+func memory(k float64) float64 {
+	re, im, err := canon.Theodorsen(k)
+	if err != nil {
+		if k < 1 {
+			return 0
+		}
+		return 0.5
+	}
+	return math.Hypot(re-1, im)
+}

@@ -1,0 +1,92 @@
+package assumption
+
+import (
+	"math"
+
+	"regimed/regime/finding"
+	"regimed/regime/group"
+)
+
+// Reasons why an effect cannot occur.
+var (
+	noFluid       = finding.Say("There is no fluid.")
+	noFlow        = finding.Say("There is no mean flow.")
+	noSurface     = finding.Say("There is no free surface within ten lengths.")
+	noWalls       = finding.Say("No wall, shell or neighbour was given.")
+	noGap         = finding.Say("There is no narrow gap.")
+	noFrequency   = finding.Say("No frequency is given or of interest: a static case.")
+	liquidIsDense = finding.Say("The fluid is a liquid: its molecules touch.")
+	gasCannot     = finding.Say("The fluid is a gas: it does not cavitate.")
+	noMotion      = finding.Say("The structure does not move for lack of a flow or a motion.")
+	rigidKind     = finding.Say("The kind has no shape of its own from which slopes and strains follow.")
+)
+
+// identity is the estimate that is the group itself.
+func identity(v float64) float64 { return v }
+
+// inertiaError is the error of the wet frequency when the added mass is μ
+// instead of μ·Γ: |√((1+μΓ)/(1+μ)) − 1|.
+func inertiaError(mu, gamma float64) float64 {
+	return math.Abs(math.Sqrt((1+mu*gamma)/(1+mu)) - 1)
+}
+
+// orZero is the value of a group, and 0 where it has none.
+func orZero(x *finding.Context, id group.ID) float64 {
+	if x.Has(id) {
+		return x.Get(id)
+	}
+	return 0
+}
+
+// fluidDamping is the sum of the damping ratios that the fluid adds.
+func fluidDamping(x *finding.Context) float64 {
+	return orZero(x, group.DampingViscous) + orZero(x, group.DampingRadiation) + orZero(x, group.DampingFlow)
+}
+
+// addShare adds the share of the total damping that is left out with the
+// damping ratio left. It waits for the structural damping where that is not
+// known.
+func addShare(x *finding.Context, p finding.Part, left float64) {
+	others := fluidDamping(x)
+	x.AddOrWait(p, group.DampingRatio, func(structural float64) float64 {
+		total := structural + math.Max(others, left)
+		if total <= 0 {
+			return 0
+		}
+		return left / total
+	})
+}
+
+// amplitudeOf returns the amplitude over a length of the kind: the given one,
+// or that of the limit cycle where a self-excited hazard is active.
+func amplitudeOf(x *finding.Context, id group.ID) (float64, bool) {
+	if x.Has(id) {
+		return x.Get(id), true
+	}
+	return 0, false
+}
+
+// selfExcited returns the worst finding among the hazards that feed on motion.
+func selfExcited(x *finding.Context) (worst *finding.Finding, e *Entry) {
+	for _, h := range []*Entry{NoLockIn, NoGalloping, NoFlutter, NoDivergence, NoBucklingByFlow} {
+		f := &x.Made[h.index]
+		p := f.Main()
+		if p == nil || p.Waits {
+			continue
+		}
+		if worst == nil || p.Utilisation*p.Factor > worst.Main().Utilisation*worst.Main().Factor {
+			worst, e = f, h
+		}
+	}
+	return worst, e
+}
+
+// waitingHazard returns the first self-excited hazard that waits for an input.
+func waitingHazard(x *finding.Context) *finding.Finding {
+	for _, h := range []*Entry{NoLockIn, NoGalloping, NoFlutter, NoDivergence, NoBucklingByFlow} {
+		if f := &x.Made[h.index]; f.Verdict == finding.Undetermined {
+			return f
+		}
+	}
+	return nil
+}

@@ -1,0 +1,56 @@
+package assumption
+
+import (
+	"math"
+
+	"regimed/regime/cite"
+	"regimed/regime/finding"
+	"regimed/regime/group"
+)
+
+// SingleMode: one mode at a time.
+var SingleMode = &Entry{
+	ID:        "single-mode",
+	Title:     "Single mode",
+	LeavesOut: "coupling of modes through the fluid, and modes that compete for one wake",
+	Estimated: "frequency: μ/(1 + μ)·ω₁²/|ω₂² − ω₁²| times the off-diagonal share of the added mass; scale: position of a second mode in the band of lock-in",
+	Measures:  []finding.Measure{finding.Frequency, finding.Scale},
+	Sources:   []*cite.Source{cite.Blevins1990, cite.ThisMethod},
+	Estimate:  estimateSingleMode,
+}
+
+var (
+	modesCouple  = finding.Say("The next mode at {next_mode} times the frequency, coupled through {mode_coupling:%} of the added mass, shifts this one by up to {e:%}.")
+	noNextMode   = finding.Say("The kind gives no next mode that the fluid could couple to this one.")
+	modesUniform = finding.Say("A uniform section in a uniform fluid couples no modes through the fluid.")
+	modesCompete = finding.Say("A second mode lies at {lock_in_next} of its band of lock-in: more than one mode competes for the wake.")
+)
+
+func estimateSingleMode(x *finding.Context) {
+	switch {
+	case !x.Is(group.Fluid):
+		x.NotApplicable(noFluid)
+		return
+	case x.Is(group.StaticOnly):
+		x.NotApplicable(noFrequency)
+		return
+	}
+	p := finding.Part{Measure: finding.Frequency, Basis: finding.Canonical, Factor: 1.5, Say: modesCouple, Source: cite.Blevins1990}
+	switch {
+	case x.Is(group.Uniform):
+		p.Basis, p.Say = finding.Definition, modesUniform
+		x.Add(p)
+	case x.State(group.NextMode) == group.Absent:
+		x.NotApplicable(noNextMode)
+		return
+	case !x.Has(group.AddedMassRatio):
+		waitOn(x, p, group.AddedMassRatio)
+	default:
+		mu, share := x.Get(group.AddedMassRatio), orZero(x, group.ModeCoupling)
+		x.AddOrWait(p, group.NextMode, func(ratio float64) float64 {
+			return share * mu / (1 + mu) / math.Max(math.Abs(ratio*ratio-1), 1e-9)
+		})
+	}
+	x.AddOrWait(finding.Part{Measure: finding.Scale, Basis: finding.Threshold, Limit: 1, Factor: 3, Say: modesCompete, Source: cite.ThisMethod},
+		group.LockInNext, identity)
+}

@@ -1,0 +1,59 @@
+package assumption
+
+import (
+	"regimed/regime/cite"
+	"regimed/regime/finding"
+	"regimed/regime/group"
+)
+
+// StillFluid: the mean flow may be left out.
+var StillFluid = &Entry{
+	ID:        "still-fluid",
+	Title:     "Fluid at rest",
+	LeavesOut: "the mean flow's effect on the motion, and its load",
+	Estimated: "frequency: ½ k_flow/k, or U_R against 1 where the kind has no flow stiffness of its own; response: ζ_flow/ζ; load: static deflection over the displacement of interest",
+	Measures:  []finding.Measure{finding.Frequency, finding.Response, finding.Load},
+	Sources:   []*cite.Source{cite.Blevins1990, cite.ThisMethod},
+	Estimate:  estimateStillFluid,
+}
+
+var (
+	stillStiffness = finding.Say("The mean flow shifts the natural frequency by {e:%}: its stiffness is {flow_stiffness} of the structure's.")
+	stillSpeed     = finding.Say("The flow passes {reduced_velocity} lengths in a period of the mode; below about 1 it hardly changes the motion.")
+	stillDamping   = finding.Say("The mean flow makes {e:%} of the total damping.")
+	stillLoad      = finding.Say("The mean flow deflects the structure by {e:%} of the amplitude of interest.")
+	stillThreshold = finding.Say("The mean flow deflects the structure by {static_deflection:%} of the flow length; above 1 % its load is worth a model.")
+)
+
+func estimateStillFluid(x *finding.Context) {
+	switch {
+	case !x.Is(group.Fluid):
+		x.NotApplicable(noFluid)
+		return
+	case !x.Any(group.Flow):
+		x.NotApplicable(noFlow)
+		return
+	}
+	if !x.Is(group.StaticOnly) {
+		stillFrequency(x)
+		if x.Has(group.DampingFlow) {
+			addShare(x, finding.Part{Measure: finding.Response, Basis: finding.Canonical, Factor: x.Factors.Flow,
+				Say: stillDamping, Source: cite.Blevins1990}, x.Get(group.DampingFlow))
+		}
+	}
+	load := finding.Part{Measure: finding.Load, Basis: finding.Canonical, Factor: 1.5, Say: stillLoad, Source: cite.Blevins1990}
+	if !x.Is(group.Amplitude) {
+		load.Basis, load.Limit, load.Factor, load.Say, load.Source = finding.Threshold, 1, 2, stillThreshold, cite.ThisMethod
+	}
+	x.AddOrWait(load, group.StaticDeflectionInterest, identity)
+}
+
+func stillFrequency(x *finding.Context) {
+	if x.State(group.FlowStiffness) != group.Absent {
+		x.AddOrWait(finding.Part{Measure: finding.Frequency, Basis: finding.Canonical, Factor: x.Factors.Flow,
+			Say: stillStiffness, Source: cite.Blevins1990}, group.FlowStiffness, func(v float64) float64 { return v / 2 })
+		return
+	}
+	x.AddOrWait(finding.Part{Measure: finding.Frequency, Basis: finding.Threshold, Limit: 1, Factor: 2,
+		Say: stillSpeed, Source: cite.Blevins1990}, group.ReducedVelocity, identity)
+}

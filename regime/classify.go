@@ -1,0 +1,30 @@
+package regime
+
+import (
+	"regimed/regime/assumption"
+	"regimed/regime/finding"
+	"regimed/regime/input"
+	"regimed/regime/kind"
+	"regimed/regime/ladder"
+)
+
+// Classify is the whole story: a case becomes scales, scales become groups,
+// groups are judged, and the cheapest class that holds is recommended.
+func Classify(c *input.Case) (*Answer, []input.Violation) {
+	resolved, warnings, violations := kind.Resolve(c)
+	if len(violations) > 0 {
+		return nil, violations
+	}
+	a := Decide(resolved, kind.StudyOf(c))
+	a.Case, a.Warnings = c, warnings
+	return a, nil
+}
+
+// Decide goes from a resolved case to the recommendation: the core.
+func Decide(r *kind.Resolved, s finding.Study) *Answer {
+	a := &Answer{Kind: r.Kind, Scales: r.Scales, Study: s}
+	a.Groups = r.Groups()
+	a.Findings = assumption.Judge(a.Groups, s)
+	a.Recommendation = ladder.Choose(r.Kind.Name, a.Groups, a.Findings)
+	return a
+}

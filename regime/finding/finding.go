@@ -1,0 +1,231 @@
+package finding
+
+import (
+	"regimed/regime/cite"
+	"regimed/regime/group"
+)
+
+// Basis says where an estimate comes from.
+type Basis uint8
+
+// The bases of an estimate.
+const (
+	Canonical  Basis = iota // a solved canonical problem, with and without the effect
+	Threshold               // a published threshold
+	Definition              // the effect is present or absent by definition
+)
+
+func (b Basis) String() string {
+	return [...]string{"canonical", "threshold", "definition"}[b]
+}
+
+// Part is one estimate of an assumption: an error, what it is measured
+// against, and how far the canonical geometry may differ from the real one.
+type Part struct {
+	Measure  Measure
+	Basis    Basis
+	Estimate float64
+	Limit    float64 // 0: the tolerance of the measure
+	Factor   float64 // model-form factor φ ≥ 1
+	Inner    float64 // factor in the test for invalid; 0: Factor
+	Say      *Sentence
+	Source   *cite.Source
+
+	// Wait is the group that is missing where the estimate could not be made;
+	// Hold is the value of it up to which (Least: from which) the assumption
+	// holds, NaN where there is none.
+	Waits bool
+	Wait  group.ID
+	Hold  float64
+	Least bool
+
+	Utilisation float64 // set by the judge
+}
+
+const maxParts = 6
+
+// Finding is the judgement of one assumption in one case.
+type Finding struct {
+	Verdict    Verdict
+	OfInterest bool      // false: no part is of interest; reported, rules out nothing
+	Reason     *Sentence // why it is not applicable
+	Governing  int8      // index of the part that governs; −1: none
+	n          int8
+	parts      [maxParts]Part
+	published  []Published
+}
+
+// Parts returns the estimates.
+func (f *Finding) Parts() []Part { return f.parts[:f.n] }
+
+// Main returns the part that governs, or nil.
+func (f *Finding) Main() *Part {
+	if f.Governing < 0 {
+		return nil
+	}
+	return &f.parts[f.Governing]
+}
+
+// RulesOut reports whether the finding rules out a class that rests on it.
+func (f *Finding) RulesOut() bool { return f.Verdict == Invalid && f.OfInterest }
+
+// Utilisation returns that of the governing part, and whether there is one.
+func (f *Finding) Utilisation() (float64, bool) {
+	if p := f.Main(); p != nil && !p.Waits {
+		return p.Utilisation, true
+	}
+	return 0, false
+}
+
+// Needs returns the groups that an undetermined finding waits for.
+func (f *Finding) Needs(dst []group.ID) []group.ID {
+	for i := range f.Parts() {
+		p := &f.parts[i]
+		if p.Waits {
+			dst = append(dst, p.Wait)
+		}
+	}
+	return dst
+}
+
+// Context is what an estimator sees: groups, traits, the tolerance, and the
+// findings that were made before it. It has no way to a unit.
+type Context struct {
+	*group.Set
+	Study
+	Made []Finding // by index in the catalogue
+	f    *Finding
+}
+
+// Study is how the analyst wants a case judged.
+type Study struct {
+	Tolerance Tolerance
+	Interest  Interest
+	Picked    *Criterion // the criterion that the case asks for, or nil
+}
+
+// Begin directs what follows into a finding.
+func (x *Context) Begin(f *Finding) {
+	x.f = f
+	f.Governing = -1
+	f.n = 0
+	f.Reason = nil
+}
+
+// NotApplicable records that the effect cannot occur.
+func (x *Context) NotApplicable(why *Sentence) { x.f.Reason = why }
+
+// Add records one estimate.
+func (x *Context) Add(p Part) {
+	if x.f.n == maxParts {
+		return
+	}
+	if p.Limit == 0 {
+		p.Limit = x.Tolerance.Limit(p.Measure)
+	}
+	if p.Inner == 0 {
+		p.Inner = p.Factor
+	}
+	x.f.parts[x.f.n] = p
+	x.f.n++
+}
+
+// Wait records an estimate that a missing group prevents. estimate is the
+// estimate as a function of that group: increasing (the assumption holds up to
+// a value), or decreasing (it holds from a value on).
+func (x *Context) Wait(p Part, missing group.ID, estimate func(v float64) float64) {
+	p.Waits = true
+	p.Wait = missing
+	if p.Limit == 0 {
+		p.Limit = x.Tolerance.Limit(p.Measure)
+	}
+	p.Hold, p.Least = hold(estimate, p.Limit/p.Factor)
+	x.Add(p)
+}
+
+// AddOrWait adds the part with the estimate at the group's value, or waits for
+// the group where it is missing. A group that does not arise adds nothing.
+func (x *Context) AddOrWait(p Part, id group.ID, estimate func(v float64) float64) {
+	switch x.State(id) {
+	case group.Known, group.Adopted:
+		p.Estimate = estimate(x.Get(id))
+		x.Add(p)
+	case group.Missing:
+		x.Wait(p, id, estimate)
+	}
+}
+
+// Conclude is the judge: it gives the finding its verdict from its parts.
+//
+// The part with the largest u·φ governs, each part against its own limit and
+// with its own φ. Parts whose measure is not of interest are left out; where
+// none is of interest all are judged, and the finding rules out nothing.
+func (x *Context) Conclude() {
+	f := x.f
+	if f.n == 0 {
+		f.Verdict = NotApplicable
+		f.OfInterest = true
+		if f.Reason == nil {
+			f.Reason = notArising
+		}
+		return
+	}
+	f.Reason = nil
+	f.OfInterest = false
+	for i := range f.Parts() {
+		p := &f.parts[i]
+		f.OfInterest = f.OfInterest || x.Interest.Has(p.Measure)
+		if !p.Waits {
+			p.Utilisation = Utilisation(p.Estimate, p.Limit)
+		}
+	}
+	f.Verdict = Valid
+	worst, waiting := -1.0, int8(-1)
+	for i := range f.Parts() {
+		p := &f.parts[i]
+		if f.OfInterest && !x.Interest.Has(p.Measure) {
+			continue
+		}
+		if p.Waits {
+			if waiting < 0 {
+				waiting = int8(i)
+			}
+			continue
+		}
+		if v := Judge(p.Utilisation, p.Factor, p.Inner); v > f.Verdict {
+			f.Verdict = v
+		}
+		if up := p.Utilisation * p.Factor; up > worst {
+			worst, f.Governing = up, int8(i)
+		}
+	}
+	if waiting >= 0 && f.Verdict != Invalid {
+		f.Verdict = Undetermined
+		f.Governing = waiting
+	}
+	if f.Verdict == Invalid && f.Governing >= 0 {
+		f.promoteInvalid(x)
+	}
+}
+
+// notArising is the reason where an estimator found nothing to estimate.
+var notArising = Say("What this assumption leaves out does not arise in this case.")
+
+// promoteInvalid lets an invalid part govern where a wider factor made a part
+// that is only marginal look worse.
+func (f *Finding) promoteInvalid(x *Context) {
+	g := &f.parts[f.Governing]
+	if Judge(g.Utilisation, g.Factor, g.Inner) == Invalid {
+		return
+	}
+	worst := -1.0
+	for i := range f.Parts() {
+		p := &f.parts[i]
+		if p.Waits || f.OfInterest && !x.Interest.Has(p.Measure) {
+			continue
+		}
+		if Judge(p.Utilisation, p.Factor, p.Inner) == Invalid && p.Utilisation > worst {
+			worst, f.Governing = p.Utilisation, int8(i)
+		}
+	}
+}

@@ -1,0 +1,334 @@
+package group
+
+// The groups. Append only: ids are a contract.
+const (
+	MassRatio ID = iota
+	ReducedVelocity
+	Reynolds
+	Stokes
+	Compressibility
+	Froude
+
+	AddedMassRatio
+	AddedMassRatioFree
+	MassNumber
+	ReducedVelocityWet
+	ReducedFrequency
+	Strouhal
+	SheddingRatio
+	Beta
+	ViscousDepthRatio
+	Mach
+	CoincidenceRatio
+	DynamicFroude
+	LengthReynolds
+
+	FrequencyRatio
+	ViscousInertia
+	ViscousDamping
+	AcousticInertia
+	AcousticDamping
+	SurfaceInertiaLid
+	SurfaceInertiaFree
+	FluidStiffness
+	FlowStiffness
+
+	DampingRatio
+	DampingViscous
+	DampingRadiation
+	DampingFlow
+	DampingTotal
+
+	Displacement
+	DisplacementSpan
+	DisplacementThickness
+	DisplacementGap
+	DisplacementDepth
+	Slope
+	StrainRatio
+	KeuleganCarpenter
+	DragDamping
+	MotionSpeedRatio
+	StaticDeflection
+	StaticDeflectionInterest
+	StaticDeflectionSpan
+	StaticDeflectionGap
+
+	Cauchy
+	Elastogravity
+	Scruton
+	SkopGriffin
+	MassDamping
+	Slenderness
+	SpanRatio
+	GapRatio
+	Knudsen
+	Squeeze
+	FilmReynolds
+	ThermalLayer
+	Bond
+	Weber
+	Cavitation
+	SuctionPeak
+	OscillationPressure
+	FluidLoading
+	DragCoefficient
+	LiftFluctuation
+	ThicknessRatio
+	BoundaryLayer
+	TurbulenceIntensity
+	StallRatio
+	PseudoStatic
+	NextMode
+	ModeCoupling
+	AcousticStep
+
+	WakeBandLow
+	WakeBandHigh
+	LockInPosition
+	LockInMode
+	LockInNext
+	VortexAmplitude
+	InlineVelocity
+	InlinePosition
+	InlineScruton
+	GallopingSpeed
+	DivergenceSpeed
+	FlutterSpeed
+	ConveyingSpeed
+	ConveyingMass
+	BucklingSpeed
+	CavityFrequency
+	OperatingLow
+	OperatingHigh
+
+	Count // number of groups
+)
+
+// Def says what a group is.
+type Def struct {
+	ID         string
+	Symbol     string
+	Title      string
+	Definition string
+	Core       bool   // every answer has it, as a value or as null with the reason
+	Bands      []Band // what ranges of its value mean; may be empty
+}
+
+// Band names a range of a group: it holds up to the value Below.
+type Band struct {
+	Below float64
+	Name  string
+}
+
+// Of returns the definition of a group.
+func Of(id ID) *Def { return &table[id] }
+
+// Find returns the group of that name, and whether there is one.
+func Find(name string) (ID, bool) {
+	for i := range table {
+		if table[i].ID == name {
+			return ID(i), true
+		}
+	}
+	return 0, false
+}
+
+const huge = 1e300
+
+var table = [Count]Def{
+	MassRatio: {ID: "mass_ratio", Symbol: "m*", Title: "mass ratio", Core: true,
+		Definition: "dry structural mass / mass of the displaced fluid"},
+	ReducedVelocity: {ID: "reduced_velocity", Symbol: "U_R", Title: "reduced velocity", Core: true,
+		Definition: "U/(f L), f the dry natural frequency, L the flow length"},
+	Reynolds: {ID: "reynolds", Symbol: "Re", Title: "Reynolds number", Core: true,
+		Definition: "U L/ν, L the flow length"},
+	Stokes: {ID: "stokes", Symbol: "S", Title: "Stokes number", Core: true,
+		Definition: "ω V²/ν, V the viscous length (radius, semi-width or gap), ω of the motion if forced, else of the wet mode"},
+	Compressibility: {ID: "compressibility", Symbol: "He", Title: "Helmholtz number", Core: true,
+		Definition: "ω L/c, ω of the motion if forced, else of the wet mode"},
+	Froude: {ID: "froude", Symbol: "Fr", Title: "Froude number", Core: true,
+		Definition: "U/√(g d), d the depth or draft where there is a free surface"},
+
+	AddedMassRatio: {ID: "added_mass_ratio", Symbol: "μ", Title: "added mass ratio",
+		Definition: "ideal added mass, confined as given / dry mass"},
+	AddedMassRatioFree: {ID: "added_mass_ratio_free", Symbol: "μ_free", Title: "added mass ratio in unbounded fluid",
+		Definition: "ideal added mass without walls / dry mass"},
+	MassNumber: {ID: "mass_number", Symbol: "ρ/ρ_s", Title: "mass number",
+		Definition: "density of the fluid / density of the solid"},
+	ReducedVelocityWet: {ID: "reduced_velocity_wet", Symbol: "V_R", Title: "reduced velocity, wet",
+		Definition: "U/(f_w L), f_w the wet natural frequency"},
+	ReducedFrequency: {ID: "reduced_frequency", Symbol: "k", Title: "reduced frequency",
+		Definition: "ω b/U, b half the length along the flow, ω of the wet mode"},
+	Strouhal: {ID: "strouhal", Symbol: "St", Title: "Strouhal number",
+		Definition: "f_v L/U, f_v the shedding frequency of the fixed body"},
+	SheddingRatio: {ID: "shedding_ratio", Symbol: "f_v/f_w", Title: "shedding frequency ratio",
+		Definition: "shedding frequency / wet natural frequency, at the speed given"},
+	Beta: {ID: "beta", Symbol: "β", Title: "frequency parameter",
+		Definition: "f D²/ν = 2S/π for a cylinder"},
+	ViscousDepthRatio: {ID: "viscous_depth_ratio", Symbol: "δ/V", Title: "viscous depth ratio",
+		Definition: "√(2ν/ω)/V, V the viscous length"},
+	Mach: {ID: "mach", Symbol: "M", Title: "Mach number", Definition: "U/c",
+		Bands: []Band{{0.3, "incompressible"}, {0.75, "subsonic"}, {1.25, "transonic"}, {5, "supersonic"}, {huge, "hypersonic"}}},
+	CoincidenceRatio: {ID: "coincidence_ratio", Symbol: "f/f_c", Title: "coincidence ratio",
+		Definition: "frequency of the motion / coincidence frequency, = (k₀/k_b)² for a free bending wave"},
+	DynamicFroude: {ID: "dynamic_froude", Symbol: "ω√(d/g)", Title: "dynamic Froude number",
+		Definition: "ω √(d/g), d the depth below the surface",
+		Bands:      []Band{{0.223606797749979, "the surface acts as a rigid lid"}, {3.1622776601683795, "the surface makes waves"}, {huge, "the surface is pressure-free"}}},
+	LengthReynolds: {ID: "length_reynolds", Symbol: "Re_ℓ", Title: "Reynolds number of the length",
+		Definition: "U ℓ/ν, ℓ the length along the flow"},
+
+	FrequencyRatio: {ID: "frequency_ratio", Symbol: "f_w/f", Title: "wet over dry frequency",
+		Definition: "1/√(1 + μ Γr), Γr at the wet frequency"},
+	ViscousInertia: {ID: "viscous_inertia", Symbol: "Γr", Title: "viscous inertia factor",
+		Definition: "added mass of the viscous solution / ideal added mass, at the wet frequency"},
+	ViscousDamping: {ID: "viscous_damping", Symbol: "Γi", Title: "viscous damping factor",
+		Definition: "damping force of the viscous solution / inertia force of the ideal added mass, at the wet frequency"},
+	AcousticInertia: {ID: "acoustic_inertia", Symbol: "Γr,ac", Title: "acoustic inertia factor",
+		Definition: "added mass in a compressible fluid / ideal added mass"},
+	AcousticDamping: {ID: "acoustic_damping", Symbol: "Γi,ac", Title: "acoustic damping factor",
+		Definition: "radiation force / inertia force of the ideal added mass"},
+	SurfaceInertiaLid: {ID: "surface_inertia_lid", Symbol: "C_lid", Title: "surface as a rigid lid",
+		Definition: "added mass below a rigid lid / added mass in unbounded fluid"},
+	SurfaceInertiaFree: {ID: "surface_inertia_free", Symbol: "C_free", Title: "pressure-free surface",
+		Definition: "added mass below a pressure-free surface / added mass in unbounded fluid"},
+	FluidStiffness: {ID: "fluid_stiffness", Symbol: "k_fluid/k", Title: "fluid stiffness ratio",
+		Definition: "stiffness of the film or cavity / structural stiffness of the mode"},
+	FlowStiffness: {ID: "flow_stiffness", Symbol: "k_flow/k", Title: "flow stiffness ratio",
+		Definition: "magnitude of the flow-induced stiffness / structural stiffness of the mode"},
+
+	DampingRatio: {ID: "damping_ratio", Symbol: "ζ_s", Title: "structural damping ratio, wet",
+		Definition: "dry ζ/√(1 + μ Γr): structural damping of the wet oscillator"},
+	DampingViscous: {ID: "damping_viscous", Symbol: "ζ_v", Title: "viscous damping ratio",
+		Definition: "½ μ Γi/(1 + μ Γr)"},
+	DampingRadiation: {ID: "damping_radiation", Symbol: "ζ_rad", Title: "radiation damping ratio",
+		Definition: "½ μ Γi,ac/(1 + μ Γr,ac)"},
+	DampingFlow: {ID: "damping_flow", Symbol: "ζ_flow", Title: "flow damping ratio",
+		Definition: "damping by the mean flow; across a cylinder C_D ρ U D/(4 ω m_w) for motion along the stream"},
+	DampingTotal: {ID: "damping_total", Symbol: "ζ", Title: "total damping ratio",
+		Definition: "ζ_s + ζ_v + ζ_rad + ζ_flow"},
+
+	Displacement: {ID: "displacement", Symbol: "ξ/L", Title: "displacement ratio",
+		Definition: "amplitude of the motion / flow length"},
+	DisplacementSpan: {ID: "displacement_span", Symbol: "ξ/ℓ", Title: "amplitude over span",
+		Definition: "amplitude of the motion / length of the structure"},
+	DisplacementThickness: {ID: "displacement_thickness", Symbol: "ξ/h", Title: "amplitude over thickness",
+		Definition: "amplitude / thickness of the plate, or / radius of gyration of the section of a beam"},
+	DisplacementGap: {ID: "displacement_gap", Symbol: "ξ/g", Title: "amplitude over gap",
+		Definition: "amplitude / nearest gap to a wall"},
+	DisplacementDepth: {ID: "displacement_depth", Symbol: "ξ/d", Title: "amplitude over depth",
+		Definition: "amplitude / depth below the free surface"},
+	Slope: {ID: "slope", Symbol: "w′", Title: "slope",
+		Definition: "largest slope of the mode at the amplitude of the motion"},
+	StrainRatio: {ID: "strain_ratio", Symbol: "ε/ε_lin", Title: "strain ratio",
+		Definition: "largest bending strain / strain up to which the material is linear"},
+	KeuleganCarpenter: {ID: "keulegan_carpenter", Symbol: "KC", Title: "Keulegan–Carpenter number",
+		Definition: "2π ξ/D"},
+	DragDamping: {ID: "drag_damping", Symbol: "ζ_d", Title: "equivalent damping of quadratic drag",
+		Definition: "(2/3π) C_D (ρD²/m_w)(ξ/D)"},
+	MotionSpeedRatio: {ID: "motion_speed_ratio", Symbol: "ω ξ/U", Title: "speed of the motion over speed of the flow",
+		Definition: "ω ξ/U"},
+	StaticDeflection: {ID: "static_deflection", Symbol: "δ/L", Title: "static deflection ratio",
+		Definition: "static deflection under the mean flow / flow length"},
+	StaticDeflectionInterest: {ID: "static_deflection_interest", Symbol: "δ/ξ", Title: "static deflection over displacement of interest",
+		Definition: "static deflection under the mean flow / amplitude of the motion, or / 1 % of the flow length where none is given"},
+	StaticDeflectionSpan: {ID: "static_deflection_span", Symbol: "δ/ℓ", Title: "static deflection over span",
+		Definition: "static deflection under the mean flow / length of the structure"},
+	StaticDeflectionGap: {ID: "static_deflection_gap", Symbol: "δ/g", Title: "static deflection over gap",
+		Definition: "static deflection under the mean flow / nearest gap to a wall"},
+
+	Cauchy: {ID: "cauchy", Symbol: "Cy", Title: "Cauchy number",
+		Definition: "ρ U²/E"},
+	Elastogravity: {ID: "elastogravity", Symbol: "ρgL/E", Title: "elastogravity number",
+		Definition: "ρ g L/E"},
+	Scruton: {ID: "scruton", Symbol: "Sc", Title: "Scruton number",
+		Definition: "4π m ζ/(ρ D²) per length; m dry in gas, with the added mass in liquid; ζ structural"},
+	SkopGriffin: {ID: "skop_griffin", Symbol: "S_G", Title: "Skop–Griffin parameter",
+		Definition: "2π³ St² α"},
+	MassDamping: {ID: "mass_damping", Symbol: "α", Title: "mass-damping parameter",
+		Definition: "(m* + C_A) ζ, ζ structural on the wet mass"},
+	Slenderness: {ID: "slenderness", Symbol: "D/ℓ", Title: "slenderness",
+		Definition: "diameter or width / length"},
+	SpanRatio: {ID: "span_ratio", Symbol: "L/ℓ", Title: "flow length over span",
+		Definition: "flow length / length across the flow"},
+	GapRatio: {ID: "gap_ratio", Symbol: "g/L", Title: "gap ratio",
+		Definition: "nearest gap to a wall / flow length"},
+	Knudsen: {ID: "knudsen", Symbol: "Kn", Title: "Knudsen number",
+		Definition: "√(πγ/2) ν/(c L), L the gap, the width or the diameter",
+		Bands:      []Band{{0.01, "continuum"}, {0.1, "slip"}, {10, "transitional"}, {huge, "free molecular"}}},
+	Squeeze: {ID: "squeeze", Symbol: "σ", Title: "squeeze number",
+		Definition: "12 η ω L²/(p g²), L the width, η corrected for rarefaction"},
+	FilmReynolds: {ID: "film_reynolds", Symbol: "ωg²/ν", Title: "film Reynolds number",
+		Definition: "ω g²/ν"},
+	ThermalLayer: {ID: "thermal_layer", Symbol: "(γ−1)δ_t/g", Title: "thermal layer over gap",
+		Definition: "(γ − 1) √(2ν/(ω Pr))/g"},
+	Bond: {ID: "bond", Symbol: "Bo", Title: "Bond number",
+		Definition: "ρ g L²/γ_s"},
+	Weber: {ID: "weber", Symbol: "We", Title: "Weber number",
+		Definition: "ρ U² L/γ_s"},
+	Cavitation: {ID: "cavitation", Symbol: "σ_c", Title: "cavitation number",
+		Definition: "(p − p_v)/(½ρU²), p absolute, at the highest speed of operation"},
+	SuctionPeak: {ID: "suction_peak", Symbol: "−Cp_min", Title: "suction peak",
+		Definition: "largest suction on the body / dynamic pressure"},
+	OscillationPressure: {ID: "oscillation_pressure", Symbol: "ρω²ξL/(p−p_v)", Title: "pressure of the oscillation",
+		Definition: "ρ ω² ξ L/(p − p_v)"},
+	FluidLoading: {ID: "fluid_loading", Symbol: "ε_f", Title: "fluid loading",
+		Definition: "ρ c/(m″ ω_c), ω_c the coincidence frequency"},
+	DragCoefficient: {ID: "drag_coefficient", Symbol: "C_D", Title: "drag coefficient",
+		Definition: "mean drag / (½ρU² × frontal area)"},
+	LiftFluctuation: {ID: "lift_fluctuation", Symbol: "C_L′", Title: "unsteady lift coefficient",
+		Definition: "r.m.s. lift / (½ρU² × frontal area)"},
+	ThicknessRatio: {ID: "thickness_ratio", Symbol: "τ", Title: "relative thickness",
+		Definition: "thickness / length along the flow"},
+	BoundaryLayer: {ID: "boundary_layer", Symbol: "δ*", Title: "displacement thickness ratio",
+		Definition: "displacement thickness of the boundary layers / thickness of the body; for a flush panel × k_b"},
+	TurbulenceIntensity: {ID: "turbulence_intensity", Symbol: "I_u", Title: "turbulence intensity",
+		Definition: "r.m.s. of the speed / mean speed"},
+	StallRatio: {ID: "stall_ratio", Symbol: "α/α_stall", Title: "incidence ratio",
+		Definition: "steady incidence / stall angle"},
+	PseudoStatic: {ID: "pseudo_static", Symbol: "c_flow ω/k_flow", Title: "flow damping over flow stiffness",
+		Definition: "flow damping force / flow stiffness force, at the wet frequency"},
+	NextMode: {ID: "next_mode", Symbol: "f₂/f₁", Title: "next mode",
+		Definition: "frequency of the next mode that the fluid can couple / frequency of this mode"},
+	ModeCoupling: {ID: "mode_coupling", Symbol: "m₁₂/m₁₁", Title: "modal coupling",
+		Definition: "off-diagonal share of the added mass (upper bound 1)"},
+	AcousticStep: {ID: "acoustic_step", Symbol: "ρcΔt/m″", Title: "added mass of one acoustic step",
+		Definition: "ρ c Δt/m″ with Δt a twentieth of the wet period, m″ the mass per wetted area"},
+
+	WakeBandLow: {ID: "wake_band_low", Symbol: "x_lo", Title: "lower edge of the wake band",
+		Definition: "1/(1 + √(A M)), of St U/(f_w D)"},
+	WakeBandHigh: {ID: "wake_band_high", Symbol: "x_hi", Title: "upper edge of the wake band",
+		Definition: "1/(1 − √(A M)), of St U/(f_w D); none for A M ≥ 1"},
+	LockInPosition: {ID: "lock_in_position", Symbol: "x", Title: "position in the wake band",
+		Definition: "St U/(f_w D) at the worst speed of operation and for the worst mode"},
+	LockInMode: {ID: "lock_in_mode", Symbol: "n", Title: "mode nearest to the wake band",
+		Definition: "number of the mode that is nearest to lock-in across the flow"},
+	LockInNext: {ID: "lock_in_next", Symbol: "u₂", Title: "second mode in the wake band",
+		Definition: "position of the next nearest mode in its band: 1 at an edge, above 1 inside"},
+	VortexAmplitude: {ID: "vortex_amplitude", Symbol: "A/D", Title: "amplitude of vortex-induced vibration",
+		Definition: "the larger of the published estimates for the locked-in amplitude / diameter"},
+	InlineVelocity: {ID: "inline_velocity", Symbol: "V_R", Title: "reduced velocity for in-line lock-in",
+		Definition: "U/(f_w D) at the worst speed of operation and for the worst mode"},
+	InlinePosition: {ID: "inline_position", Symbol: "u_il", Title: "position in the in-line band",
+		Definition: "min(V_R/1, 4.5/V_R) at the worst speed and mode"},
+	InlineScruton: {ID: "inline_scruton", Symbol: "1.8/Sc", Title: "in-line suppression by damping",
+		Definition: "1.8/Sc"},
+	GallopingSpeed: {ID: "galloping_speed", Symbol: "U/U_CG", Title: "galloping speed ratio",
+		Definition: "highest speed of operation / onset speed of galloping"},
+	DivergenceSpeed: {ID: "divergence_speed", Symbol: "U/U_D", Title: "divergence speed ratio",
+		Definition: "highest speed of operation / divergence speed"},
+	FlutterSpeed: {ID: "flutter_speed", Symbol: "U/U_F", Title: "flutter speed ratio",
+		Definition: "highest speed of operation / flutter speed"},
+	ConveyingSpeed: {ID: "conveying_speed", Symbol: "u", Title: "dimensionless flow speed",
+		Definition: "U ℓ √(m_a/(E I)), m_a the added mass per length in axial flow"},
+	ConveyingMass: {ID: "conveying_mass", Symbol: "β_c", Title: "mass share of the fluid",
+		Definition: "m_a/(m_a + m), per length"},
+	BucklingSpeed: {ID: "buckling_speed", Symbol: "U/U_B", Title: "buckling speed ratio",
+		Definition: "highest speed of operation / speed of buckling by flow"},
+	CavityFrequency: {ID: "cavity_frequency", Symbol: "f_w/f_a", Title: "cavity resonance ratio",
+		Definition: "wet natural frequency / first acoustic frequency of the cavity c/(2d)"},
+	OperatingLow: {ID: "operating_low", Symbol: "U_lo/U", Title: "lowest speed of operation",
+		Definition: "lowest speed in service / speed of the flow"},
+	OperatingHigh: {ID: "operating_high", Symbol: "U_hi/U", Title: "highest speed of operation",
+		Definition: "highest speed in service / speed of the flow"},
+}

@@ -1,0 +1,47 @@
+package group
+
+// Traits are what a verdict may depend on besides numbers.
+type Traits uint64
+
+// The traits. Fluid states first: a case may be in several.
+const (
+	Fluid         Traits = 1 << iota // there is a fluid
+	Still                            // it is at rest but for the motion
+	Cross                            // mean flow across the structure
+	Axial                            // mean flow along it
+	Grazing                          // mean flow over a surface
+	Internal                         // mean flow inside
+	Waves                            // surface waves
+	Contained                        // fluid held by the structure
+	Liquid                           // the fluid is a liquid
+	Gas                              // the fluid is a gas
+	Bluff                            // the flow separates by the shape
+	Streamlined                      // the flow stays attached
+	Circular                         // a circle to the cross flow
+	Confined                         // a wall, a shell or a neighbour is near
+	NearSurface                      // a free surface within ten lengths
+	Film                             // a wall nearer than a width: a film
+	ViscousSolved                    // the kind has a viscous Γ
+	Cantilever                       // clamped at one end, free elsewhere
+	Restrained                       // supports that hold the ends in the axis or the plane
+	Uniform                          // a uniform section in a uniform fluid
+	ModesDerived                     // higher frequencies follow from the kind
+	StaticOnly                       // no frequency, and none is of interest
+	LidImage                         // the surface acts as a rigid lid
+	FreeImage                        // the surface acts as pressure-free
+	Cavity                           // a closed cavity behind the structure
+	TaperedEnd                       // the free end in axial flow is tapered
+	Amplitude                        // the amplitude of the motion was given
+	Flexible                         // the structure bends: slopes and strains exist
+	PanelLike                        // a flush panel: no separation of its own
+	FrequencyLost                    // a frequency arises but is not known
+)
+
+// Flow are the traits that mean a mean flow.
+const Flow = Cross | Axial | Grazing | Internal
+
+// Is reports whether every one of the traits holds.
+func (t Traits) Is(want Traits) bool { return t&want == want }
+
+// Any reports whether at least one of the traits holds.
+func (t Traits) Any(want Traits) bool { return t&want != 0 }

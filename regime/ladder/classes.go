@@ -1,0 +1,103 @@
+package ladder
+
+import (
+	"slices"
+
+	"regimed/regime/assumption"
+	"regimed/regime/group"
+)
+
+// Ids that the mechanism asks for by name.
+const (
+	StaticAeroelastic = "static-aeroelastic"
+	lastModalRank     = 3 // classes that give modes without a flow
+	lastLumpedRank    = 8 // classes whose fluid inertia is lumped
+)
+
+// Groups of assumptions that rows share.
+var (
+	scales = []*assumption.Entry{assumption.Continuum, assumption.NoCavitation, assumption.NoSurfaceTension}
+	small  = []*assumption.Entry{assumption.SmallDisplacement, assumption.SmallStroke, assumption.LinearStructure}
+	self   = []*assumption.Entry{assumption.NoLockIn, assumption.NoGalloping, assumption.NoFlutter}
+	static = []*assumption.Entry{assumption.NoDivergence, assumption.NoBucklingByFlow}
+	forced = []*assumption.Entry{assumption.NoAcousticResonance}
+)
+
+func on(groups ...[]*assumption.Entry) []*assumption.Entry { return slices.Concat(groups...) }
+
+func and(entries ...*assumption.Entry) []*assumption.Entry { return entries }
+
+// Fluid states by what a class can be asked for.
+const (
+	anyFlow  = group.Cross | group.Axial | group.Grazing | group.Internal
+	anyState = group.Still | anyFlow | group.Waves | group.Contained
+	still    = group.Still | group.Contained
+)
+
+// Classes is the ladder, ordered by rank of cost; among equal ranks the
+// earlier row goes first. The last class rests on nothing.
+var Classes = []Class{
+	{ID: "dry-structure", Title: "Dry structure", Solves: "dry modes, no fluid", Rank: 1,
+		Domain:  Domain{States: anyState, Dry: true},
+		RestsOn: on(scales, and(assumption.FluidAbsent, assumption.StillFluid, assumption.SmallDisplacement, assumption.LinearStructure), self, static, forced),
+		Axes:    Axes{Fluid: "none", Compressible: "no", Viscous: "no", FreeSurface: "none", Turbulence: "none", Structure: "linear-modal", Coupling: "none", FluidInertia: "none", Phases: "single"}},
+	{ID: "added-mass", Title: "Added mass from potential flow", Solves: "modes with the added mass of potential flow", Rank: 2,
+		Domain:  Domain{States: anyState, Bars: group.Film},
+		RestsOn: on(scales, and(assumption.StillFluid, assumption.InviscidOscillation, assumption.IncompressibleOscillation, assumption.FreeSurfaceAbsent), small, self, static, forced),
+		Axes:    Axes{Fluid: "added-mass", Compressible: "no", Viscous: "no", FreeSurface: "none", Turbulence: "none", Structure: "linear-modal", Coupling: "analytic", Phases: "single"}},
+	{ID: "viscous-added-mass", Title: "Added mass and damping from viscous flow", Solves: "modes with the added mass and damping of the viscous solution", Rank: 3,
+		Domain:  Domain{States: anyState, Bars: group.Film, Needs: group.ViscousSolved},
+		RestsOn: on(scales, and(assumption.StillFluid, assumption.IncompressibleOscillation, assumption.FreeSurfaceAbsent), small, self, static, forced),
+		Axes:    Axes{Fluid: "viscous-still", Compressible: "no", Viscous: "yes", FreeSurface: "none", Turbulence: "none", Structure: "linear-modal", Coupling: "analytic", Phases: "single"}},
+	{ID: "thin-film", Title: "Thin film", Solves: "the Reynolds equation in the gap, with slip, and the modes of the structure", Rank: 3,
+		Domain:  Domain{States: group.Still, Needs: group.Film},
+		RestsOn: and(assumption.SlipFilm, assumption.Lubrication, assumption.StillFluid, assumption.SmallDisplacement, assumption.LinearStructure),
+		Axes:    Axes{Fluid: "film", Viscous: "yes", FreeSurface: "none", Turbulence: "none", Structure: "linear-modal", Coupling: "analytic", Phases: "single"}},
+	{ID: "steady-load", Title: "Steady load on the undeformed shape", Solves: "steady flow on the undeformed shape, then the static structure", Rank: 4,
+		Domain:  Domain{States: anyFlow},
+		RestsOn: on(scales, and(assumption.OneWay, assumption.RigidStructure, assumption.SteadyFlow, assumption.SmallDisplacement, assumption.LinearStructure), self, static, forced),
+		Axes:    Axes{Fluid: "steady", Coupling: "one-way"}},
+	{ID: "conveying-beam", Title: "Beam in axial flow", Solves: "eigenvalues of a beam with plug flow", Rank: 4,
+		Domain:  Domain{Kinds: []string{"cylinder"}, States: group.Axial},
+		RestsOn: on(scales, and(assumption.Slender, assumption.IncompressibleFlow), small),
+		Axes:    Axes{Fluid: "one-dimensional", Compressible: "no", Viscous: "no", FreeSurface: "none", Structure: "linear-modal", Coupling: "analytic", Phases: "single"}},
+	{ID: "diffraction-radiation", Title: "Diffraction and radiation of linear waves", Solves: "linear potential waves and a rigid or modal body", Rank: 5,
+		Domain:  Domain{Kinds: []string{"cylinder", "plate", "generic"}, States: group.Still | group.Waves, Needs: group.NearSurface},
+		RestsOn: on(scales, and(assumption.LinearFreeSurface, assumption.InviscidOscillation), small, and(assumption.NoLockIn)),
+		Axes:    Axes{Fluid: "free-surface", Compressible: "no", Viscous: "no", FreeSurface: "linear", Turbulence: "none", Structure: "linear-modal", Coupling: "analytic", Phases: "single"}},
+	{ID: StaticAeroelastic, Title: "Static aeroelasticity", Solves: "steady flow and static structure, iterated", Rank: 5,
+		Domain:  Domain{States: group.Cross | group.Grazing | group.Axial},
+		RestsOn: on(scales, and(assumption.PseudoStatic, assumption.SteadyFlow, assumption.SmallDisplacement), self, and(assumption.NoStall)),
+		Axes:    Axes{Fluid: "steady", Coupling: "two-way-implicit"}},
+	{ID: "quasi-steady", Title: "Quasi-steady flow", Solves: "steady coefficients that follow the motion", Rank: 5,
+		Domain:  Domain{States: group.Cross | group.Grazing},
+		RestsOn: on(scales, and(assumption.QuasiSteady), small, and(assumption.NoLockIn, assumption.NoStall)),
+		Axes:    Axes{Fluid: "quasi-steady", Structure: "linear-modal", Coupling: "analytic"}},
+	{ID: "acoustic-structure", Title: "Acoustic fluid and structure", Solves: "the Helmholtz equation in the fluid and the structure, two-way", Rank: 6,
+		Domain:  Domain{States: still},
+		RestsOn: on(scales, and(assumption.StillFluid, assumption.InviscidOscillation, assumption.IsothermalWalls, assumption.FreeSurfaceAbsent), small, self, static),
+		Axes:    Axes{Fluid: "acoustic", Compressible: "yes", Viscous: "no", FreeSurface: "none", Turbulence: "none", Structure: "linear-modal", Coupling: "monolithic-or-implicit", Phases: "single"}},
+	{ID: "wake-model", Title: "Wake oscillator", Solves: "structural modes with a wake oscillator", Rank: 6,
+		Domain:  Domain{Kinds: []string{"cylinder"}, States: group.Cross},
+		RestsOn: on(scales, and(assumption.CalibratedWake, assumption.IncompressibleFlow, assumption.SingleMode, assumption.SmallDisplacement, assumption.NoGalloping, assumption.NoFlutter, assumption.NoDivergence)),
+		Axes:    Axes{Fluid: "wake-model", Compressible: "no", Structure: "linear-modal", Coupling: "analytic", Phases: "single"}},
+	{ID: "linear-unsteady", Title: "Linear unsteady flow", Solves: "unsteady potential flow in the frequency domain", Rank: 7,
+		Domain:  Domain{Kinds: []string{"plate", "generic"}, States: anyFlow &^ group.Internal},
+		RestsOn: on(scales, and(assumption.InviscidFlow, assumption.LinearCompressible), small, and(assumption.NoStall, assumption.NoLockIn)),
+		Axes:    Axes{Fluid: "linear-unsteady", Viscous: "no", FreeSurface: "none", Turbulence: "none", Structure: "linear-modal", Coupling: "analytic", Phases: "single"}},
+	{ID: "thermoviscous-acoustic", Title: "Thermoviscous acoustics", Solves: "the linearised Navier–Stokes equations with heat conduction", Rank: 7,
+		Domain:  Domain{States: still},
+		RestsOn: on(scales, and(assumption.StillFluid, assumption.FreeSurfaceAbsent), small, self, static),
+		Axes:    Axes{Fluid: "thermoviscous", Compressible: "yes", Viscous: "yes", FreeSurface: "none", Turbulence: "none", Structure: "linear-modal", Coupling: "monolithic-or-implicit", Phases: "single"}},
+	{ID: "unsteady-load", Title: "Unsteady load on the rigid shape", Solves: "unsteady flow on the rigid shape, then the dynamic structure with lumped added mass", Rank: 8,
+		Domain:  Domain{States: anyFlow | group.Waves},
+		RestsOn: and(assumption.OneWay, assumption.RigidStructure, assumption.SmallDisplacement),
+		Axes:    Axes{Fluid: "resolved", Coupling: "one-way"}},
+	{ID: "two-way-explicit", Title: "Two-way, explicit", Solves: "resolved flow and structure, one exchange a step", Rank: 9,
+		Domain:  Domain{States: anyState},
+		RestsOn: and(assumption.ExplicitCoupling),
+		Axes:    Axes{Fluid: "resolved", Coupling: "two-way-explicit"}},
+	{ID: "two-way-implicit", Title: "Two-way, implicit", Solves: "resolved flow and structure, iterated to convergence each step", Rank: 10,
+		Domain: Domain{States: anyState, Dry: true},
+		Axes:   Axes{Fluid: "resolved", Coupling: "two-way-implicit"}},
+}
