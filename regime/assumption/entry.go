@@ -69,7 +69,7 @@ func Find(id string) *Entry {
 
 // Judge makes the findings of one case, in the order of the catalogue.
 func Judge(g *group.Set, s finding.Study) []finding.Finding {
-	x := &finding.Context{Set: g, Study: s, Made: make([]finding.Finding, len(Catalogue))}
+	x := finding.NewContext(g, s, len(Catalogue))
 	for i, e := range Catalogue {
 		x.Begin(&x.Made[i])
 		e.Estimate(x)

@@ -626,3 +626,21 @@ func BenchmarkStrouhal(b *testing.B) {
 		flowSink, _, _, _ = Strouhal(4321, SectionCircle, 1)
 	}
 }
+
+// Optional arguments come last, so that positions can be left out.
+func TestFlowOptionalArgumentsComeLast(t *testing.T) {
+	entries := 0
+	for _, e := range flowEntries {
+		optional := false
+		for _, a := range e.Args {
+			if optional && !a.Optional {
+				t.Errorf("%s: %s follows an optional argument", e.Name, a.Name)
+			}
+			optional = optional || a.Optional
+		}
+		entries++
+	}
+	if entries != 35 {
+		t.Errorf("%d entries", entries)
+	}
+}

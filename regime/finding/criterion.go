@@ -49,7 +49,7 @@ func (x *Context) Publish(list []*Criterion, assumption string) {
 		u = Utilisation(u, 1)
 		x.f.published = append(x.f.published, Published{Criterion: c, Verdict: Judge(u, 1, 1), Utilisation: u, Picked: picked})
 		if picked {
-			x.f.n = 0
+			x.arena = x.arena[:x.start]
 			x.Add(Part{Measure: Stability, Basis: Threshold, Estimate: u, Limit: 1, Factor: 1, Say: c.Say, Source: c.Source})
 		}
 	}

@@ -42,21 +42,18 @@ type Part struct {
 	Utilisation float64 // set by the judge
 }
 
-const maxParts = 6
-
 // Finding is the judgement of one assumption in one case.
 type Finding struct {
 	Verdict    Verdict
 	OfInterest bool      // false: no part is of interest; reported, rules out nothing
 	Reason     *Sentence // why it is not applicable
 	Governing  int8      // index of the part that governs; −1: none
-	n          int8
-	parts      [maxParts]Part
+	parts      []Part
 	published  []Published
 }
 
 // Parts returns the estimates.
-func (f *Finding) Parts() []Part { return f.parts[:f.n] }
+func (f *Finding) Parts() []Part { return f.parts }
 
 // Main returns the part that governs, or nil.
 func (f *Finding) Main() *Part {
@@ -93,8 +90,18 @@ func (f *Finding) Needs(dst []group.ID) []group.ID {
 type Context struct {
 	*group.Set
 	Study
-	Made []Finding // by index in the catalogue
-	f    *Finding
+	Made  []Finding // by index in the catalogue
+	f     *Finding
+	arena []Part // parts of all findings, one after the other
+	start int    // where those of the present finding begin
+}
+
+// Room is the number of parts that a case usually needs.
+const Room = 80
+
+// NewContext makes the context for a number of findings.
+func NewContext(g *group.Set, s Study, findings int) *Context {
+	return &Context{Set: g, Study: s, Made: make([]Finding, findings), arena: make([]Part, 0, Room)}
 }
 
 // Study is how the analyst wants a case judged.
@@ -107,9 +114,8 @@ type Study struct {
 // Begin directs what follows into a finding.
 func (x *Context) Begin(f *Finding) {
 	x.f = f
+	x.start = len(x.arena)
 	f.Governing = -1
-	f.n = 0
-	f.Reason = nil
 }
 
 // NotApplicable records that the effect cannot occur.
@@ -117,17 +123,13 @@ func (x *Context) NotApplicable(why *Sentence) { x.f.Reason = why }
 
 // Add records one estimate.
 func (x *Context) Add(p Part) {
-	if x.f.n == maxParts {
-		return
-	}
 	if p.Limit == 0 {
 		p.Limit = x.Tolerance.Limit(p.Measure)
 	}
 	if p.Inner == 0 {
 		p.Inner = p.Factor
 	}
-	x.f.parts[x.f.n] = p
-	x.f.n++
+	x.arena = append(x.arena, p)
 }
 
 // Wait records an estimate that a missing group prevents. estimate is the
@@ -162,7 +164,8 @@ func (x *Context) AddOrWait(p Part, id group.ID, estimate func(v float64) float6
 // none is of interest all are judged, and the finding rules out nothing.
 func (x *Context) Conclude() {
 	f := x.f
-	if f.n == 0 {
+	f.parts = x.arena[x.start:len(x.arena):len(x.arena)]
+	if len(f.parts) == 0 {
 		f.Verdict = NotApplicable
 		f.OfInterest = true
 		if f.Reason == nil {

@@ -231,9 +231,6 @@ func (c *cylinder) addedMass(r *Resolver, displaced, contents float64, dry bool)
 	}
 	if !math.IsNaN(gap) {
 		r.derive(scale.Gap, gap, units.Length, "nearest gap")
-		if gap < c.d/10 {
-			r.warn(WallGap, "narrow-gap", "The gap is narrow: see the finding on the film between the walls.")
-		}
 	}
 	r.derive(scale.AddedMassFree, displaced+contents, units.MassPerLength, "ρπD²/4, and contents")
 	how := "ρπD²/4, and contents"
@@ -483,8 +480,7 @@ func (c *cylinder) along(r *Resolver) {
 
 // Groups puts the groups that are the cylinder's own.
 func (c *cylinder) Groups(s *scale.Set, g *group.Set) {
-	g.Factors = group.Factors{Inertia: 1.15, Viscous: 1.15, Acoustic: 1.15, Flow: 1.5, Buckling: 1.5, Flutter: 2,
-		Stiffening: c.stiffening(), StallPerRadian: 1}
+	g.Factors = c.factorsOf(s)
 	g.Band = group.Transition{Low: 190, High: 300, Length: group.Reynolds}
 	c.still(s, g)
 	c.slender(s, g)
@@ -495,6 +491,22 @@ func (c *cylinder) Groups(s *scale.Set, g *group.Set) {
 		c.axialGroups(s, g)
 	}
 	massDamping(s, g, c.massRatio, 1, math.Pi/4)
+}
+
+// factorsOf are the model-form factors: the solutions are exact for a long
+// cylinder, alone or in a shell; a wall and sound in a confined space are cousins.
+func (c *cylinder) factorsOf(s *scale.Set) group.Factors {
+	f := group.Factors{Inertia: 1.15, Viscous: 1.15, Acoustic: 1.15, Flow: 1.5, Buckling: 1.5, Flutter: 2, Stiffening: c.stiffening(), StallPerRadian: 1}
+	if c.d/s.X(scale.Span) > 0.2 {
+		f.Inertia, f.Viscous = 1.5, 1.5
+	}
+	if s.Has(scale.WallGap) {
+		f.Viscous, f.Acoustic = 2, 1.5
+	}
+	if s.Has(scale.ShellDiameter) {
+		f.Acoustic = 1.5
+	}
+	return f
 }
 
 // bucklingSpeeds are UL√(ρA/EI) at which an axial flow buckles a beam: the

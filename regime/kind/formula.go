@@ -176,6 +176,7 @@ func FormulaOf(id group.ID) *Formula {
 // needed, the group waits for the first input that is missing; where they do
 // not arise, neither does the group.
 func formulas(s *scale.Set, g *group.Set) {
+	var trial *scale.Set // scales in which a missing one is tried
 	for i := range Formulas {
 		f := &Formulas[i]
 		if x := f.Value(s); !math.IsNaN(x) {
@@ -186,7 +187,10 @@ func formulas(s *scale.Set, g *group.Set) {
 		if need == "" {
 			continue
 		}
-		g.Miss(f.Group, inputNeed(s, f, missing, need))
+		if trial == nil {
+			trial = s.With(missing, math.NaN())
+		}
+		g.Miss(f.Group, inputNeed(trial, f, missing, need))
 	}
 }
 
@@ -229,12 +233,17 @@ func missingScale(s *scale.Set, from []scale.ID) (scale.ID, string) {
 
 // inputNeed finds how the group follows from the missing scale: as a power,
 // where the input is the scale itself and everything else is known.
-func inputNeed(s *scale.Set, f *Formula, missing scale.ID, need string) group.Need {
-	n := group.Need{Input: need, Unit: s.Value(missing).Kind.SI()}
+func inputNeed(trial *scale.Set, f *Formula, missing scale.ID, need string) group.Need {
+	v := trial.Value(missing)
+	n := group.Need{Input: need, Unit: v.Kind.SI()}
 	if scale.Of(missing).Input != need {
 		return n
 	}
-	one, two := f.Value(s.With(missing, 1)), f.Value(s.With(missing, 2))
+	v.X = 1
+	one := f.Value(trial)
+	v.X = 2
+	two := f.Value(trial)
+	v.X = math.NaN()
 	if !(one > 0) || !(two > 0) || math.IsInf(one, 0) {
 		return n
 	}

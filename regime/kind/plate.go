@@ -492,6 +492,7 @@ func (p *plate) Groups(s *scale.Set, g *group.Set) {
 	}
 	g.Traits |= group.ViscousSolved
 	p.still(s, g)
+	p.pressures(s, g)
 	p.coupling(s, g)
 	if s.Has(scale.WallGap) {
 		p.filmGroups(s, g)
@@ -605,6 +606,21 @@ func (p *plate) sound(k0 float64, g *group.Set) {
 	g.Put(group.AcousticDamping, resistance/(k0*p.a*ideal))
 }
 
+// pressures puts the pressure of the oscillation, ρω²ξ/k_b under a bending wave.
+func (p *plate) pressures(s *scale.Set, g *group.Set) {
+	over := p.kb * p.a
+	switch g.State(group.OscillationPressure) {
+	case group.Known:
+		g.Put(group.OscillationPressure, g.Get(group.OscillationPressure)/over)
+	case group.Missing:
+		n := g.Need(group.OscillationPressure)
+		n.Coefficient *= math.Pow(over, 1/n.Power)
+		if !math.IsNaN(n.Coefficient) && !math.IsInf(n.Coefficient, 0) {
+			g.Miss(group.OscillationPressure, n)
+		}
+	}
+}
+
 // coupling bounds what the fluid couples: the next mode of the same parity, and
 // an off-diagonal share of at most 1 (Cauchy and Schwarz).
 func (p *plate) coupling(s *scale.Set, g *group.Set) {
@@ -689,11 +705,33 @@ func (p *plate) grazingGroups(s *scale.Set, g *group.Set) {
 		}
 		return
 	}
-	if mach < 1 {
+	switch {
+	case p.edges == "CFFF":
+		p.flag(s, g)
+		return
+	case mach < 1:
 		p.subsonic(s, g, mach)
 		return
 	}
 	p.supersonic(s, g, mach)
+}
+
+// flag puts flutter of a plate clamped at its leading edge, which comes before
+// divergence.
+func (p *plate) flag(s *scale.Set, g *group.Set) {
+	needs := []scale.ID{scale.SpeedHigh, scale.Density, scale.DryMass, scale.Thickness, scale.Young}
+	mass := s.X(scale.DryMass)
+	critical, err := canon.FlagCritical(s.X(scale.Density)*p.a/mass, p.b/p.a)
+	onset := critical / p.a * math.Sqrt(s.X(scale.Bending)/mass)
+	if err != nil || math.IsNaN(onset) {
+		waitFor(s, g, needs, group.FlutterSpeed, group.FlowStiffness, group.PseudoStatic)
+		return
+	}
+	g.Flutter = 2
+	g.Put(group.FlutterSpeed, s.X(scale.SpeedHigh)/onset)
+	ratio := s.X(scale.Speed) / onset
+	g.Put(group.FlowStiffness, ratio*ratio)
+	g.Put(group.PseudoStatic, 2*2*math.Pi*s.X(scale.FrequencyWet)/(s.X(scale.Speed)*p.kb))
 }
 
 // subsonic puts divergence of a panel between the waves of a potential flow:

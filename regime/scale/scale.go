@@ -152,13 +152,10 @@ func (s *Set) Needs(id ID) string {
 	return s.v[id].Needs
 }
 
-// With returns a copy of the set in which one scale has another value.
+// With returns a copy of the set in which one scale has another number.
 func (s *Set) With(id ID, x float64) *Set {
 	c := *s
 	c.v[id].X = x
-	if c.v[id].Origin == Absent {
-		c.v[id].Origin = Derived
-	}
 	return &c
 }
 
