@@ -97,12 +97,13 @@ func (w *wake) operate(r *Resolver, fd float64) {
 	}
 }
 
-// strouhalNear is the Strouhal number at the speed of operation that comes
-// nearest to a reduced velocity of 5, where a mode of frequency f and f·D = fd
-// would lock in.
+// strouhalNear is the lowest Strouhal number at the speed of operation that
+// comes nearest to a reduced velocity of 5, where a mode of frequency f and
+// f·D = fd would lock in: the lowest makes the band widest and the amplitude
+// largest.
 func (w *wake) strouhalNear(r *Resolver, fd float64) float64 {
 	u := math.Max(r.X(scale.SpeedLow), math.Min(5*fd, r.X(scale.SpeedHigh)))
-	st, _, _ := w.strouhalAt(r.reynoldsAt(u))
+	_, st, _ := w.strouhalAt(r.reynoldsAt(u))
 	if st == 0 || math.IsNaN(st) {
 		return w.st
 	}

@@ -1,0 +1,156 @@
+package api
+
+import (
+	"errors"
+	"io"
+	"mime"
+	"net"
+	"net/http"
+	"strconv"
+	"strings"
+	"sync"
+
+	"github.com/labstack/echo/v4"
+
+	"regimed/api/render"
+	"regimed/regime"
+	"regimed/regime/input"
+)
+
+// space is the room that one request needs for its body and its answer.
+type space struct {
+	body, answer []byte
+}
+
+// spacePool keeps spaces, since most requests need as much as the last one.
+type spacePool struct{ pool sync.Pool }
+
+// Sizes of a space: of a new one, and up to which one is kept.
+const (
+	usualBody   = 4 << 10
+	usualAnswer = 32 << 10
+	largestKept = 256 << 10
+)
+
+func (p *spacePool) get() *space {
+	if s, ok := p.pool.Get().(*space); ok {
+		return s
+	}
+	return &space{body: make([]byte, 0, usualBody), answer: make([]byte, 0, usualAnswer)}
+}
+
+func (p *spacePool) put(s *space) {
+	if cap(s.body) <= largestKept && cap(s.answer) <= largestKept {
+		p.pool.Put(s)
+	}
+}
+
+// classify answers a case. Nothing here uses reflection, and both buffers are
+// used again: decoding and rendering keep no reference to them.
+func (s *Server) classify(c echo.Context) error {
+	only, err := answerFields(c)
+	if err != nil {
+		return err
+	}
+	if err := acceptsJSON(c); err != nil {
+		return err
+	}
+	room := s.spaces.get()
+	defer s.spaces.put(room)
+	if room.body, err = s.readBody(c, room.body[:0]); err != nil {
+		return err
+	}
+	kase, violations, err := input.Decode(room.body, s.schema)
+	if err != nil {
+		return malformed(err)
+	}
+	if len(violations) > 0 {
+		return violated(invalidCase, "The case", violations)
+	}
+	answer, violations := regime.Classify(kase)
+	if len(violations) > 0 {
+		return violated(invalidCase, "The case", violations)
+	}
+	room.answer = render.AppendJSON(room.answer[:0], answer, only)
+	return send(c, http.StatusOK, typeJSON, room.answer)
+}
+
+// acceptsJSON refuses a body that is not announced as plain JSON in UTF-8.
+func acceptsJSON(c echo.Context) error {
+	h := c.Request().Header
+	if coding := h.Get(echo.HeaderContentEncoding); coding != "" && !strings.EqualFold(coding, "identity") {
+		c.Response().Header().Set(echo.HeaderAcceptEncoding, "identity")
+		return problem(unsupportedMedia, "The body is compressed; send it as it is.")
+	}
+	if isJSON(h.Get(echo.HeaderContentType)) {
+		return nil
+	}
+	c.Response().Header().Set("Accept-Post", echo.MIMEApplicationJSON)
+	c.Response().Header().Set(echo.HeaderAccept, echo.MIMEApplicationJSON)
+	return problem(unsupportedMedia, "The Content-Type must be application/json, in UTF-8.")
+}
+
+func isJSON(contentType string) bool {
+	if contentType == echo.MIMEApplicationJSON || contentType == typeJSON {
+		return true // the spellings that clients use; no need to take them apart
+	}
+	media, parameters, err := mime.ParseMediaType(contentType)
+	if err != nil || media != echo.MIMEApplicationJSON {
+		return false
+	}
+	for name, value := range parameters {
+		if name != "charset" || !strings.EqualFold(value, "utf-8") {
+			return false
+		}
+	}
+	return true
+}
+
+// readBody reads the body into dst, up to the limit, whether its length was
+// announced or not.
+func (s *Server) readBody(c echo.Context, dst []byte) ([]byte, error) {
+	r := c.Request()
+	limit := s.config.BodyLimit
+	if r.ContentLength > limit {
+		return dst, s.bodyTooLarge(c)
+	}
+	// The reader of net/http also closes the connection of a caller who sends
+	// more, rather than reading on.
+	body := http.MaxBytesReader(c.Response().Writer, r.Body, limit)
+	dst, err := appendAll(dst, body)
+	if err == nil {
+		return dst, nil
+	}
+	var tooMany *http.MaxBytesError
+	if errors.As(err, &tooMany) {
+		return dst, s.bodyTooLarge(c)
+	}
+	var network net.Error
+	if errors.As(err, &network) && network.Timeout() {
+		c.Response().Header().Set(echo.HeaderConnection, "close")
+		return dst, problem(requestTimeout, "The body did not arrive in time.")
+	}
+	return dst, problem(badRequest, "The body broke off before its end.")
+}
+
+func (s *Server) bodyTooLarge(c echo.Context) error {
+	c.Response().Header().Set(echo.HeaderConnection, "close")
+	return problem(tooLarge, "The body is larger than "+strconv.FormatInt(s.config.BodyLimit, 10)+" bytes.")
+}
+
+// appendAll reads to the end, into the room that dst has as far as it goes.
+func appendAll(dst []byte, r io.Reader) ([]byte, error) {
+	for {
+		if len(dst) == cap(dst) {
+			dst = append(dst, 0)[:len(dst)]
+		}
+		n, err := r.Read(dst[len(dst):cap(dst)])
+		dst = dst[:len(dst)+n]
+		if err == io.EOF {
+			return dst, nil
+		}
+		if err != nil {
+			return dst, err
+		}
+	}
+}

@@ -1,0 +1,17 @@
+// Package api serves the classification over HTTP.
+//
+// It translates and decides nothing: a body becomes a case, an answer becomes
+// JSON, and everything that goes wrong becomes problem details (RFC 9457) with
+// one media type, application/problem+json. The contract is
+// openapi/openapi.yaml; tests hold the two against each other both ways.
+//
+//	POST /v1/classify            a case in, the answer out
+//	GET  /v1/catalog             what the engine knows, by catalogue
+//	GET  /v1/catalog/{name}      one catalogue
+//	GET  /v1/canon/{name}        one canonical solution, arguments in the query
+//	GET  /v1/schema/case         JSON Schema of a case
+//	GET  /problems/{id}          what a problem type means
+//	GET  /healthz /readyz /version /openapi.yaml /openapi.json
+//
+// Where there is a GET there is a HEAD.
+package api

@@ -1,0 +1,144 @@
+package api
+
+import (
+	"errors"
+	"fmt"
+	"net/url"
+	"reflect"
+	"strings"
+
+	"github.com/go-playground/validator/v10"
+	"github.com/labstack/echo/v4"
+
+	"regimed/api/render"
+	"regimed/regime/input"
+)
+
+// validate checks what comes in a query. Names in its errors are those of the
+// parameters.
+var validate = newValidator()
+
+func newValidator() *validator.Validate {
+	v := validator.New(validator.WithRequiredStructEnabled())
+	v.RegisterTagNameFunc(func(f reflect.StructField) string { return f.Tag.Get("query") })
+	if err := v.RegisterValidation("member", isMember); err != nil {
+		panic("api: " + err.Error()) // only for a name that the package refuses
+	}
+	return v
+}
+
+func isMember(f validator.FieldLevel) bool {
+	_, err := render.ParseFields([]string{f.Field().String()})
+	return err == nil
+}
+
+// classifyQuery are the parameters of a classification.
+type classifyQuery struct {
+	Fields []string `query:"fields" validate:"max=32,dive,required,max=64,member"`
+}
+
+// answerFields reads which members of the answer are wanted.
+func answerFields(c echo.Context) (render.Fields, error) {
+	if c.Request().URL.RawQuery == "" {
+		return render.All, nil
+	}
+	values, violations, err := parameters(c, "fields")
+	if err != nil {
+		return 0, err
+	}
+	var q classifyQuery
+	if values.Has("fields") {
+		q.Fields = strings.Split(values.Get("fields"), ",")
+	}
+	violations = append(violations, check(&q, values)...)
+	if len(violations) > 0 {
+		return 0, violated(invalidQuery, "The query", violations)
+	}
+	only, err := render.ParseFields(q.Fields)
+	if err != nil {
+		return 0, problem(invalidQuery, "The answer has no such member.")
+	}
+	return only, nil
+}
+
+// noParameters refuses every parameter.
+func noParameters(c echo.Context) error {
+	if c.Request().URL.RawQuery == "" {
+		return nil
+	}
+	_, violations, err := parameters(c)
+	if err != nil {
+		return err
+	}
+	if len(violations) > 0 {
+		return violated(invalidQuery, "The query", violations)
+	}
+	return nil
+}
+
+// parameters takes the query apart. A name that is not known, or that is given
+// twice, is a violation.
+func parameters(c echo.Context, known ...string) (url.Values, []input.Violation, error) {
+	values, err := url.ParseQuery(c.Request().URL.RawQuery)
+	if err != nil {
+		return nil, nil, problem(badRequest, "The query is not encoded as a URL wants it.")
+	}
+	var bad input.Violations
+	for name, list := range values {
+		pointer := "/" + escapePointer(name)
+		switch {
+		case !contains(known, name):
+			bad.Add(pointer, input.UnknownField, unknownParameter(name, known), jsonString(list[0]))
+		case len(list) > 1:
+			bad.Add(pointer, input.Duplicate, fmt.Sprintf("%s is given %d times.", name, len(list)), jsonString(list[1]))
+		}
+	}
+	return values, bad.List(), nil
+}
+
+func unknownParameter(name string, known []string) string {
+	switch near := input.Nearest(name, known); {
+	case len(known) == 0:
+		return "This path takes no parameters."
+	case len(near) > 0:
+		return fmt.Sprintf("No parameter is called %s. Did you mean %s?", quoted(name), strings.Join(near, " or "))
+	}
+	return fmt.Sprintf("No parameter is called %s; known are %s.", quoted(name), strings.Join(known, ", "))
+}
+
+// check validates the parameters in a struct.
+func check(q any, values url.Values) []input.Violation {
+	err := validate.Struct(q)
+	var failures validator.ValidationErrors
+	if !errors.As(err, &failures) {
+		return nil
+	}
+	var bad input.Violations
+	for _, f := range failures {
+		name, _, _ := strings.Cut(f.Field(), "[") // "fields[2]" is the third of a list in one parameter
+		value, isText := f.Value().(string)
+		if !isText {
+			value = values.Get(name)
+		}
+		bad.Add("/"+name, codeOf(f.Tag()), sentenceOf(name, f.Tag(), f.Param(), value), jsonString(value))
+	}
+	return bad.List()
+}
+
+func codeOf(tag string) input.Code {
+	if tag == "member" {
+		return input.UnknownChoice
+	}
+	return input.OutOfRange
+}
+
+func sentenceOf(name, tag, bound, value string) string {
+	switch tag {
+	case "member":
+		_, err := render.ParseFields([]string{value})
+		return err.Error()
+	case "required":
+		return name + " has an empty element."
+	}
+	return fmt.Sprintf("%s is too long: at most %s are read.", name, bound)
+}

@@ -1,0 +1,95 @@
+package main
+
+import (
+	"fmt"
+	"slices"
+
+	"github.com/spf13/cobra"
+
+	"regimed/api/render"
+	"regimed/regime"
+)
+
+// formats are the forms of an answer; the first is the default.
+var formats = []string{"text", "json"}
+
+func newClassify() *cobra.Command {
+	var format string
+	var fields []string
+	var page render.TextOptions
+	cmd := &cobra.Command{
+		Use:   "classify FILE|-",
+		Short: "Answer a case: the cheapest class of model that holds, and why",
+		Long: `Reads a case in JSON or YAML, from a file or, for -, from standard input, and
+prints the answer: as text for people, or as JSON, byte for byte what the
+service answers to the same case.
+
+The ending of the name says which of the two it is: .json, .yaml or .yml. Without
+one a document that begins with { is JSON, and any other YAML. YAML is read by
+the core schema of its version 1.2: 2 m is a string, yes and on are strings.
+
+What is wrong with a case is said all at once, one violation a line: file, line,
+JSON Pointer, code, and a sentence that says what would be right. Status 2.`,
+		Example: `  regimed classify riser.yaml
+  regimed classify --format json riser.json
+  regimed classify --format json --fields recommendation,findings riser.yaml
+  generate-case | regimed classify -`,
+		Args:              exactly(1),
+		ValidArgsFunction: completeCases,
+		RunE: func(cmd *cobra.Command, args []string) error {
+			write, err := writerOf(format, fields, page)
+			if err != nil {
+				return err
+			}
+			d, err := readDocument(args[0], cmd.InOrStdin())
+			if err != nil {
+				return said(cmd, err)
+			}
+			a, err := d.classify()
+			if err != nil {
+				return said(cmd, err)
+			}
+			_, err = cmd.OutOrStdout().Write(write(a))
+			return err
+		},
+	}
+	cmd.Flags().StringVarP(&format, "format", "f", formats[0], "form of the answer: text or json")
+	cmd.Flags().StringSliceVar(&fields, "fields", nil, "members of the JSON answer, separated by commas (default all)")
+	cmd.Flags().IntVar(&page.Width, "width", 96, "columns of the text, from 72 to 160")
+	cmd.Flags().BoolVar(&page.Colour, "colour", false, "set the text in the colours of a terminal")
+	completeFlag(cmd, "format", completeFrom(func() []string { return formats }))
+	completeFlag(cmd, "fields", completeFrom(render.FieldNames))
+	completeFlag(cmd, "width", cobra.NoFileCompletions)
+	return cmd
+}
+
+// said prints what is wrong with a document as it stands, one a line.
+func said(cmd *cobra.Command, err error) error {
+	cmd.PrintErrln(err)
+	return status(statusRefuse)
+}
+
+// writerOf returns what writes an answer in a format.
+func writerOf(format string, fields []string, page render.TextOptions) (func(*regime.Answer) []byte, error) {
+	if err := knownFormat(format); err != nil {
+		return nil, err
+	}
+	if format == "json" {
+		only, err := render.ParseFields(fields)
+		if err != nil {
+			return nil, &usageError{err}
+		}
+		return func(a *regime.Answer) []byte { return render.AppendJSON(nil, a, only) }, nil
+	}
+	if len(fields) > 0 {
+		return nil, &usageError{fmt.Errorf("--fields needs --format json")}
+	}
+	return func(a *regime.Answer) []byte { return render.AppendText(nil, a, page) }, nil
+}
+
+func knownFormat(format string) error {
+	if slices.Contains(formats, format) {
+		return nil
+	}
+	return &usageError{fmt.Errorf("no format is called %q: text or json", format)}
+}

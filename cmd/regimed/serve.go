@@ -1,0 +1,59 @@
+package main
+
+import (
+	"fmt"
+	"log/slog"
+	"net"
+	"os"
+	"os/signal"
+	"syscall"
+	"time"
+
+	"github.com/spf13/cobra"
+
+	"regimed/api"
+)
+
+func newServe() *cobra.Command {
+	var listen string
+	var config api.Config
+	cmd := &cobra.Command{
+		Use:   "serve",
+		Short: "Answer cases over HTTP",
+		Long: `Serves POST /v1/classify, the catalogues and the canonical solutions over HTTP.
+The contract stands at /openapi.yaml.
+
+On SIGTERM or an interrupt it stops without losing a request: /readyz says 503,
+every connection closes after its next answer, and when --drain is over the
+server stops accepting and finishes what it has begun. A second signal ends it at
+once.`,
+		Example: `  regimed serve
+  regimed serve --listen 0.0.0.0:8610 --drain 10s
+  curl -d @riser.json -H 'Content-Type: application/json' localhost:8610/v1/classify`,
+		Args: exactly(0),
+		RunE: func(cmd *cobra.Command, _ []string) error {
+			listener, err := net.Listen("tcp", listen)
+			if err != nil {
+				return err
+			}
+			ctx, stop := signal.NotifyContext(cmd.Context(), os.Interrupt, syscall.SIGTERM)
+			defer stop()
+			go func() {
+				<-ctx.Done()
+				stop() // from now on a signal ends the process
+			}()
+			config.Logger = slog.New(slog.NewJSONHandler(cmd.ErrOrStderr(), nil))
+			fmt.Fprintf(cmd.OutOrStdout(), "listening on http://%s\n", listener.Addr())
+			return api.New(config).Run(ctx, listener)
+		},
+	}
+	flags := cmd.Flags()
+	flags.StringVar(&listen, "listen", "127.0.0.1:8610", "address and port")
+	flags.DurationVar(&config.DrainDelay, "drain", 5*time.Second, "from \"not ready\" to the end of accepting; more than the balancer needs to notice")
+	flags.DurationVar(&config.ShutdownTimeout, "shutdown-timeout", 15*time.Second, "for requests in flight at the end")
+	flags.Int64Var(&config.BodyLimit, "body-limit", 1<<20, "largest body of a request in bytes")
+	for _, name := range []string{"listen", "drain", "shutdown-timeout", "body-limit"} {
+		completeFlag(cmd, name, cobra.NoFileCompletions)
+	}
+	return cmd
+}

@@ -1,0 +1,209 @@
+package main
+
+import (
+	"bytes"
+	"fmt"
+	"net/http"
+	"net/http/httptest"
+	"os"
+	"path/filepath"
+	"slices"
+
+	"github.com/go-json-experiment/json"
+	"github.com/go-json-experiment/json/jsontext"
+
+	"regimed/api"
+)
+
+// example is a request to the server, and what of its answer is shown.
+type example struct {
+	name, summary string
+	request       *http.Request
+	status        int
+	show          func(jsontext.Value) (jsontext.Value, error) // nil: the whole answer
+}
+
+// cases are the files of the request examples, with their summaries.
+var cases = []struct{ name, file, summary string }{
+	{"CaseMarineRiser", "marine-riser.json", "A steel riser across a current"},
+	{"CaseWetModes", "wet-modes.json", "Modes of a plate in still water, fluid by values"},
+	{"CaseUncertain", "uncertain.json", "Uncertain inputs and a tolerance of the caller's own"},
+}
+
+// server answers the examples; stopping is one that is about to stop.
+var server, stopping = api.New(api.Config{}).Handler(), drained()
+
+func drained() http.Handler {
+	s := api.New(api.Config{})
+	s.Drain()
+	return s.Handler()
+}
+
+// examples are the examples of the contract, as YAML.
+func examples(folder string) ([]byte, error) {
+	list := object{}
+	bodies := map[string][]byte{}
+	for _, c := range cases {
+		body, err := os.ReadFile(filepath.Join(folder, c.file))
+		if err != nil {
+			return nil, err
+		}
+		bodies[c.name] = body
+		list = append(list, shown(c.name, c.summary, body))
+	}
+	for _, e := range requests(bodies) {
+		value, err := e.answer()
+		if err != nil {
+			return nil, fmt.Errorf("%s: %w", e.name, err)
+		}
+		list = append(list, shown(e.name, e.summary, value))
+	}
+	schema, err := head(api.CaseSchema(), "$schema", "$id", "title", "description", "type", "required", "additionalProperties")
+	if err != nil {
+		return nil, err
+	}
+	return toYAML(append(list,
+		shown("CanonArguments", "The Stokes number", jsontext.Value(`{"R": 36}`)),
+		shown("CaseSchemaHead", "The head of the schema", schema),
+		shown("ContractHead", "The first line", jsontext.Value(`"openapi: 3.1.0\n"`)),
+		shown("ContractJSONHead", "The head", jsontext.Value(`{"openapi": "3.1.0"}`)),
+	))
+}
+
+func shown(name, summary string, value jsontext.Value) api.Member {
+	return api.Member{Name: name, Value: object{{Name: "summary", Value: summary}, {Name: "value", Value: value}}}
+}
+
+// requests are the examples of answers.
+func requests(bodies map[string][]byte) []example {
+	list := []example{
+		{name: "AnswerMarineRiser", summary: "The whole answer", request: post("/v1/classify", bodies["CaseMarineRiser"]), status: 200},
+		{name: "AnswerWetModes", summary: "Trimmed by ?fields=recommendation", request: post("/v1/classify?fields=recommendation", bodies["CaseWetModes"]), status: 200},
+		{name: "CatalogIndex", summary: "All catalogues", request: get("/v1/catalog"), status: 200},
+		{name: "CanonResult", summary: "A cylinder at a Stokes number of 36", request: get("/v1/canon/OscillatingCylinder?R=36"), status: 200},
+		{name: "ProblemIndex", summary: "The first type", request: get("/problems"), status: 200, show: firstOf("problems")},
+		{name: "ProblemType", summary: "Invalid case", request: get("/problems/invalid-case"), status: 200},
+		{name: "Health", summary: "It lives", request: get("/healthz"), status: 200},
+		{name: "Ready", summary: "It is ready", request: get("/readyz"), status: 200},
+		{name: "Version", summary: "Engine and rules", request: get("/version"), status: 200},
+		{name: "ProblemInvalidCase", summary: "Several mistakes at once", request: post("/v1/classify", []byte(mistaken)), status: 422},
+		{name: "ProblemInvalidQuery", summary: "An argument that is no number", request: get("/v1/canon/OscillatingCylinder?R=many"), status: 422},
+		{name: "ProblemMalformedJSON", summary: "A body that ends too early", request: post("/v1/classify", []byte(`{"structure": {"kind": "cylinder"`)), status: 400},
+		{name: "ProblemNotFound", summary: "A name that is not known", request: get("/v1/canon/OscillatingCilinder"), status: 404},
+		{name: "ProblemMethodNotAllowed", summary: "A method that the path does not answer", request: request(http.MethodDelete, "/v1/catalog", nil), status: 405},
+		{name: "ProblemRequestTimeout", summary: "A body that did not arrive", request: late(), status: 408},
+		{name: "ProblemPayloadTooLarge", summary: "A body of two megabytes", request: post("/v1/classify", make([]byte, 2<<20)), status: 413},
+		{name: "ProblemUnsupportedMediaType", summary: "A form", request: form(), status: 415},
+		{name: "ProblemUnavailable", summary: "A server that is about to stop", request: get("/readyz"), status: 503},
+	}
+	for _, name := range api.CatalogNames() {
+		list = append(list, example{name: "Catalog" + titled(name), summary: "The first record", request: get("/v1/catalog/" + name), status: 200, show: firstOf("records")})
+	}
+	return list
+}
+
+// mistaken has a wrong dimension, an unknown name, a number without unit and a
+// unit that is not known.
+const mistaken = `{"structure": {"kind": "cylinder", "diameter": "0.3 kg", "lenght": "40 m", "frequency_dry": 1.2},
+	"fluid": "seawater", "flow": {"speed": "2 knotts"}}`
+
+func titled(name string) string { return string(name[0]-'a'+'A') + name[1:] }
+
+func get(path string) *http.Request { return request(http.MethodGet, path, nil) }
+
+func post(path string, body []byte) *http.Request { return request(http.MethodPost, path, body) }
+
+func request(method, path string, body []byte) *http.Request {
+	r := httptest.NewRequest(method, path, bytes.NewReader(body))
+	r.Header.Set("Content-Type", "application/json")
+	r.Header.Set("X-Request-ID", "example")
+	return r
+}
+
+func form() *http.Request {
+	r := post("/v1/classify", []byte("kind=cylinder"))
+	r.Header.Set("Content-Type", "application/x-www-form-urlencoded")
+	return r
+}
+
+// late is a request whose body does not arrive.
+func late() *http.Request {
+	r := post("/v1/classify", nil)
+	r.Body, r.ContentLength = overdue{}, 100
+	return r
+}
+
+type overdue struct{}
+
+func (overdue) Read([]byte) (int, error) { return 0, os.ErrDeadlineExceeded }
+func (overdue) Close() error             { return nil }
+
+// answer asks the server.
+func (e *example) answer() (jsontext.Value, error) {
+	handler := server
+	if e.status == http.StatusServiceUnavailable {
+		handler = stopping
+	}
+	w := httptest.NewRecorder()
+	handler.ServeHTTP(w, e.request)
+	if w.Code != e.status {
+		return nil, fmt.Errorf("status %d, wanted %d: %s", w.Code, e.status, w.Body)
+	}
+	if e.show == nil {
+		return w.Body.Bytes(), nil
+	}
+	return e.show(w.Body.Bytes())
+}
+
+// firstOf keeps the first element of a list in an answer.
+func firstOf(list string) func(jsontext.Value) (jsontext.Value, error) {
+	return func(v jsontext.Value) (jsontext.Value, error) {
+		members, err := parse(v)
+		if err != nil {
+			return nil, err
+		}
+		for i := range members {
+			if members[i].Name != list {
+				continue
+			}
+			var elements []jsontext.Value
+			if err := json.Unmarshal(members[i].Value.(jsontext.Value), &elements); err != nil {
+				return nil, err
+			}
+			members[i].Value = elements[:min(1, len(elements))]
+		}
+		return json.Marshal(members)
+	}
+}
+
+// head keeps some members of an object.
+func head(v jsontext.Value, names ...string) (jsontext.Value, error) {
+	members, err := parse(v)
+	if err != nil {
+		return nil, err
+	}
+	members = slices.DeleteFunc(members, func(m api.Member) bool { return !slices.Contains(names, m.Name) })
+	return json.Marshal(members)
+}
+
+// parse takes an object apart into its members, in order.
+func parse(v jsontext.Value) (object, error) {
+	dec := jsontext.NewDecoder(bytes.NewReader(v))
+	if _, err := dec.ReadToken(); err != nil {
+		return nil, err
+	}
+	var members object
+	for dec.PeekKind() == '"' {
+		name, err := dec.ReadToken()
+		if err != nil {
+			return nil, err
+		}
+		key := name.String()
+		value, err := dec.ReadValue()
+		if err != nil {
+			return nil, err
+		}
+		members = append(members, api.Member{Name: key, Value: value.Clone()})
+	}
+	return members, nil
+}
