@@ -62,7 +62,9 @@ func TestOrdinaryCases(t *testing.T) {
 		{"steel panel, one side in water", `{` + panel + `,"fluid":"water"}`, "added-mass", absent, math.Sqrt(1+0.409496*998.2/78.5) - 1, 0.002},
 		// k₀/k_b at the wet frequency: 2π·19.6/1482/(π√2)
 		{"the same: subsonic bending wave", `{` + panel + `,"fluid":"water"}`, "added-mass",
-			func(a *regime.Answer) float64 { return math.Sqrt(a.Groups.Get(group.CoincidenceRatio) * a.Groups.Get(group.FrequencyRatio)) }, 0.0188, 0.03},
+			func(a *regime.Answer) float64 {
+				return math.Sqrt(a.Groups.Get(group.CoincidenceRatio) * a.Groups.Get(group.FrequencyRatio))
+			}, 0.0188, 0.03},
 		{"silicon cantilever in water", `{"structure":{"kind":"plate","length":"397 um","width":"29 um","thickness":"2 um","material":"silicon","edges":"CFFF"},"fluid":"water"}`,
 			"viscous-added-mass", of(group.Stokes), 8, 0.25},
 		{"silicon plate over a film of air", `{"structure":{"kind":"plate","length":"0.5 mm","width":"0.5 mm","thickness":"5 um","material":"silicon","edges":"CCCC","frequency_dry":"10 kHz"},"fluid":"air","motion":{"frequency":"10 kHz"},"surroundings":{"wall_gap":"2 um"}}`,

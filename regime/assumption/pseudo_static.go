@@ -17,7 +17,10 @@ var PseudoStatic = &Entry{
 	Estimate:  estimatePseudoStatic,
 }
 
-var pseudoStatic = finding.Say("The damping force of the flow is {e} times its stiffness force at the wet frequency.")
+var (
+	pseudoStatic   = finding.Say("The damping force of the flow is {e} times its stiffness force at the wet frequency.")
+	onlyFlowDamped = finding.Say("The flow damps this shape and has no stiffness on it: a model that keeps the stiffness alone keeps nothing.")
+)
 
 func estimatePseudoStatic(x *finding.Context) {
 	switch {
@@ -27,6 +30,8 @@ func estimatePseudoStatic(x *finding.Context) {
 		x.NotApplicable(noFlow)
 	case x.Is(group.StaticOnly):
 		x.NotApplicable(noFrequency)
+	case x.Has(group.FlowStiffness) && x.Get(group.FlowStiffness) == 0:
+		x.Add(finding.Part{Measure: finding.Frequency, Basis: finding.Definition, Factor: 1.5, Estimate: 1, Say: onlyFlowDamped, Source: cite.BisplinghoffAshleyHalfman1955})
 	default:
 		x.AddOrWait(finding.Part{Measure: finding.Frequency, Basis: finding.Canonical, Factor: 1.5, Say: pseudoStatic, Source: cite.BisplinghoffAshleyHalfman1955},
 			group.PseudoStatic, identity)

@@ -54,8 +54,8 @@ func stillFluidError(got, want float64) float64 {
 	return math.Abs(got-want) / math.Abs(want)
 }
 
-// The table was computed from the defining formulas in the file, with 30 to 90
-// decimal digits of working precision: the shell by the quotient of cross
+// The values of the table were computed apart from this package from the defining
+// formulas, with 30 to 90 decimal digits of working precision: the shell by the quotient of cross
 // products with nothing rearranged, the film by the series over the other index,
 // the images by their recurrence. Each part must be right by itself.
 func TestStillFluidAgainstHighPrecision(t *testing.T) {

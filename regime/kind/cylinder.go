@@ -626,7 +626,6 @@ func (c *cylinder) crossGroups(s *scale.Set, g *group.Set) {
 	c.wake.groups(s, g)
 	g.Drop(group.ReducedFrequency)
 	g.Put(group.FlowStiffness, 0) // by symmetry: drag does not change with the place
-	g.Put(group.PseudoStatic, 1e6)
 	if cd := g.Get(group.DragCoefficient); !math.IsNaN(cd) {
 		wet := s.X(scale.DryMass) + s.X(scale.AddedMass)
 		g.Put(group.DampingFlow, cd*s.X(scale.Density)*s.X(scale.Speed)*c.d/(4*2*math.Pi*s.X(scale.FrequencyWet)*wet))

@@ -364,10 +364,6 @@ func (b *generic) reaction(s *scale.Set, g *group.Set) {
 	}
 	k := s.X(scale.DryMass) * math.Pow(2*math.Pi*s.X(scale.FrequencyDry), 2)
 	putOrWait(s, g, group.FlowStiffness, b.flow/k, scale.DryMass, scale.FrequencyDry)
-	if b.flow == 0 {
-		g.Put(group.PseudoStatic, 1e6)
-		return
-	}
 	putOrWait(s, g, group.PseudoStatic, omega*drag/b.flow, scale.FrequencyWet, scale.Speed, scale.Density)
 }
 

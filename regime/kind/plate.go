@@ -780,7 +780,6 @@ func (p *plate) supersonic(s *scale.Set, g *group.Set, mach float64) {
 	putOrWait(s, g, group.FlowStiffness, 0*modal, scale.DryMass, scale.FrequencyDry)
 	zeta := rho * s.X(scale.Speed) / root / (2 * 2 * math.Pi * s.X(scale.FrequencyWet) * (s.X(scale.DryMass) + s.X(scale.AddedMass)))
 	g.Put(group.DampingFlow, zeta)
-	g.Put(group.PseudoStatic, 1e6)
 }
 
 // panelLayer puts the displacement thickness of the boundary layer at the
