@@ -22,6 +22,7 @@ var (
 	stillSpeed     = finding.Say("The flow passes {reduced_velocity} lengths in a period of the mode; below about 1 it hardly changes the motion.")
 	stillDamping   = finding.Say("The mean flow makes {e:%} of the total damping.")
 	stillLoad      = finding.Say("The mean flow deflects the structure by {e:%} of the amplitude of interest.")
+	stillStatic    = finding.Say("The case is a static one: the load of the mean flow is all that is asked for.")
 	stillThreshold = finding.Say("The mean flow deflects the structure by {static_deflection:%} of the flow length; above 1 % its load is worth a model.")
 )
 
@@ -34,7 +35,9 @@ func estimateStillFluid(x *finding.Context) {
 		x.NotApplicable(noFlow)
 		return
 	}
-	if !x.Is(group.StaticOnly) {
+	if x.Is(group.StaticOnly) {
+		x.Add(finding.Part{Measure: finding.Load, Basis: finding.Definition, Estimate: 1, Factor: 1, Say: stillStatic, Source: cite.ThisMethod})
+	} else {
 		stillFrequency(x)
 		if x.Has(group.DampingFlow) {
 			addShare(x, finding.Part{Measure: finding.Response, Basis: finding.Canonical, Factor: x.Factors.Flow,

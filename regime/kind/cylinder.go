@@ -368,13 +368,14 @@ func (c *cylinder) motion(r *Resolver) {
 			r.derive(scale.CurvatureLength, 1/(k*c.d/2), units.Length, "ξ over the strain w″ D/2 of the mode")
 		}
 	}
-	if ei, m := r.X(scale.Bending), r.X(scale.DryMass); ei > 0 && m > 0 && r.Has(scale.Young) {
-		inner := 0.0
-		if wall := r.c.X(cylWall); !math.IsNaN(wall) {
-			inner = c.d - 2*wall
-		}
-		r.derive(scale.SectionRadius, math.Sqrt(c.d*c.d+inner*inner)/4, units.Length, "√(D² + D_i²)/4")
+	if c.spring {
+		return
 	}
+	inner := 0.0
+	if wall := r.c.X(cylWall); !math.IsNaN(wall) {
+		inner = c.d - 2*wall
+	}
+	r.derive(scale.SectionRadius, math.Sqrt(c.d*c.d+inner*inner)/4, units.Length, "√(D² + D_i²)/4")
 }
 
 func (c *cylinder) strain(r *Resolver) {
@@ -383,9 +384,6 @@ func (c *cylinder) strain(r *Resolver) {
 	}
 	r.Need(scale.CurvatureLength, cylLength.Path())
 	r.Value(scale.CurvatureLength).Kind = units.Length
-	if !r.Has(scale.SectionRadius) {
-		r.Need(scale.SectionRadius, Young.Path())
-	}
 }
 
 var modeFactors = map[canon.BeamSupport]float64{
@@ -605,10 +603,10 @@ func (c *cylinder) slender(s *scale.Set, g *group.Set) {
 	} else {
 		putOrWait(s, g, group.Slope, slope, scale.Span, scale.Amplitude)
 	}
-	if r := s.X(scale.SectionRadius); !math.IsNaN(r) && !s.Has(scale.Amplitude) {
-		g.Miss(group.DisplacementThickness, group.Need{Input: s.Needs(scale.Amplitude), Unit: "m", Coefficient: r, Power: 1})
+	if r := s.X(scale.SectionRadius); s.Has(scale.Amplitude) {
+		g.Put(group.DisplacementThickness, s.X(scale.Amplitude)/r)
 	} else {
-		putOrWait(s, g, group.DisplacementThickness, s.X(scale.Amplitude)/r, scale.SectionRadius, scale.Amplitude)
+		g.Miss(group.DisplacementThickness, group.Need{Input: s.Needs(scale.Amplitude), Unit: "m", Coefficient: r, Power: 1})
 	}
 }
 

@@ -94,7 +94,7 @@ func newPlate(r *Resolver) Physics {
 	r.interestOf()
 	p.deform(r)
 	if r.Is(group.Grazing) {
-		p.grazing(r)
+		p.limitCycle(r)
 	}
 	return p
 }
@@ -475,8 +475,27 @@ func (p *plate) deform(r *Resolver) {
 	}
 }
 
-// grazing solves the flow over a panel.
-func (p *plate) grazing(*Resolver) {}
+// flagAmplitude is the amplitude of a flag past its threshold over its length:
+// limit cycles are measured between 0.1 and 0.3 (Eloy et al. 2008, from memory).
+const flagAmplitude = 0.2
+
+// flutterOnset is the speed at which a plate clamped at its leading edge
+// flutters.
+func (p *plate) flutterOnset(s *scale.Set) float64 {
+	mass := s.X(scale.DryMass)
+	critical, err := canon.FlagCritical(s.X(scale.Density)*p.a/mass, p.b/p.a)
+	if err != nil {
+		return math.NaN()
+	}
+	return critical / p.a * math.Sqrt(s.X(scale.Bending)/mass)
+}
+
+// limitCycle gives a flag past its threshold the amplitude of its limit cycle.
+func (p *plate) limitCycle(r *Resolver) {
+	if p.edges == "CFFF" && r.X(scale.SpeedHigh) > p.flutterOnset(r.Set) && !r.Is(group.Amplitude) {
+		r.derive(scale.Amplitude, flagAmplitude*p.a, units.Length, "limit cycle of a flag, 0.2 L")
+	}
+}
 
 // Groups puts the groups that are the plate's own.
 func (p *plate) Groups(s *scale.Set, g *group.Set) {
@@ -720,10 +739,8 @@ func (p *plate) grazingGroups(s *scale.Set, g *group.Set) {
 // divergence.
 func (p *plate) flag(s *scale.Set, g *group.Set) {
 	needs := []scale.ID{scale.SpeedHigh, scale.Density, scale.DryMass, scale.Thickness, scale.Young}
-	mass := s.X(scale.DryMass)
-	critical, err := canon.FlagCritical(s.X(scale.Density)*p.a/mass, p.b/p.a)
-	onset := critical / p.a * math.Sqrt(s.X(scale.Bending)/mass)
-	if err != nil || math.IsNaN(onset) {
+	onset := p.flutterOnset(s)
+	if math.IsNaN(onset) {
 		waitFor(s, g, needs, group.FlutterSpeed, group.FlowStiffness, group.PseudoStatic)
 		return
 	}
