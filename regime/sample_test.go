@@ -155,7 +155,7 @@ func asAnalystsWrite(e *entry, k units.Kind, x float64) string {
 	n := len(e.f.Name)
 	switch {
 	case e.gauge:
-		return quoted(decimal(x) + " Pa(g)")
+		return quoted(decimal(x) + " Pag")
 	case e.spread > 0 && n%3 == 0:
 		return `{"value":` + decimal(x) + `,"std":` + decimal(x*e.spread) + `,"unit":` + quoted(k.SI()) + `}`
 	case e.spread > 0 && n%3 == 1:

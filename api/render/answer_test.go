@@ -133,8 +133,12 @@ func dry(t testing.TB) *regime.Answer {
 	return regime.Decide(r, usual)
 }
 
-// answers are all of them, by name.
+// answers are all of them, and the classified ones, by name.
 func answers(t testing.TB) map[string]*regime.Answer {
 	t.Helper()
-	return map[string]*regime.Answer{"panel": panel(t), "riser": riser(t), "dry": dry(t)}
+	all := map[string]*regime.Answer{"panel": panel(t), "riser": riser(t), "dry": dry(t)}
+	for name, doc := range classified {
+		all["classified "+name] = classify(t, doc)
+	}
+	return all
 }

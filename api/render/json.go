@@ -116,19 +116,24 @@ func appendScales(dst []byte, a *regime.Answer) []byte {
 }
 
 func appendGroups(dst []byte, a *regime.Answer) []byte {
+	var w written
 	dst = append(dst, '{')
 	for id := range group.Count {
 		if shownGroup(a.Groups, id) {
-			dst = appendGroup(dst, a, id)
+			dst = appendGroup(dst, a, id, &w)
 		}
 	}
 	return append(dst, '}')
 }
 
-func appendGroup(dst []byte, a *regime.Answer, id group.ID) []byte {
+// written says where in the answer a scale stands already as a string, so that
+// it can be copied: the same few make most groups.
+type written [scale.Count]struct{ from, to int }
+
+func appendGroup(dst []byte, a *regime.Answer, id group.ID, w *written) []byte {
 	dst = append(comma(dst), groupHeads[id]...)
 	dst = number(dst, "value", a.Groups.Get(id))
-	dst = appendWith(name(dst, "with"), a, id)
+	dst = appendWith(name(dst, "with"), a, id, w)
 	if b := groupBand(a, id); b != "" {
 		dst = member(dst, "band", b)
 	}
@@ -143,16 +148,21 @@ func appendGroup(dst []byte, a *regime.Answer, id group.ID) []byte {
 }
 
 // appendWith appends the scales that a group is made of, as people write them.
-func appendWith(dst []byte, a *regime.Answer, id group.ID) []byte {
+func appendWith(dst []byte, a *regime.Answer, id group.ID, w *written) []byte {
 	dst = append(dst, '{')
 	if f := formulaOf[id]; f != nil {
 		for i, s := range f.From {
 			if !a.Scales.Has(s) {
 				continue
 			}
-			var start int
-			dst, start = open(name(dst, withKey(f.From, i)))
-			dst = seal(units.AppendFormat(dst, a.Scales.X(s), a.Scales.Value(s).Kind), start)
+			dst = name(dst, withKey(f.From, i))
+			if at := w[s]; at.to > 0 {
+				dst = append(dst, dst[at.from:at.to]...)
+				continue
+			}
+			opened, start := open(dst)
+			dst = seal(units.AppendFormat(opened, a.Scales.X(s), a.Scales.Value(s).Kind), start)
+			w[s].from, w[s].to = start-1, len(dst)
 		}
 	}
 	return append(dst, '}')

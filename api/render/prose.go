@@ -51,22 +51,67 @@ func counts(a *regime.Answer, f *finding.Finding, p *finding.Part) bool {
 }
 
 // appendSaid appends a sentence with its numbers. The part may be nil where the
-// sentence has none of its places.
+// sentence has none of its places. A clause whose number is not known is left
+// out: one after a semicolon, or the lead before a colon.
 func appendSaid(dst []byte, a *regime.Answer, s *finding.Sentence, p *finding.Part) []byte {
+	start := len(dst)
+	dst, whole := appendClauses(dst, a, s, p)
+	if whole {
+		return dst
+	}
+	if lead := bytes.Index(dst[start:], []byte(": ")); lead >= 0 && bytes.Contains(dst[start:start+lead], []byte(unknown)) {
+		dst = append(dst[:start], dst[start+lead+len(": "):]...)
+		if c := dst[start]; c >= 'a' && c <= 'z' {
+			dst[start] -= 'a' - 'A'
+		}
+	}
+	return dst
+}
+
+// unknown stands for a number that is not known, where the clause around it
+// can't be left out.
+const unknown = "an unknown value"
+
+// appendClauses appends a sentence without the clauses after a semicolon whose
+// number is not known. It reports whether no other number was missing.
+func appendClauses(dst []byte, a *regime.Answer, s *finding.Sentence, p *finding.Part) (said []byte, whole bool) {
+	start, skipping := len(dst), false
+	whole = true
 	for i := range s.Segments {
 		g := &s.Segments[i]
-		dst = append(dst, g.Text...)
+		rest := g.Text
+		if skipping {
+			if rest = rest[endOfClause(rest):]; rest == "" {
+				continue
+			}
+			skipping = false
+		}
+		dst = append(dst, rest...)
 		if g.Place == finding.None {
 			continue
 		}
 		x := placeValue(a, g, p)
-		if math.IsNaN(x) {
-			dst = append(dst, "(unknown)"...)
+		if !math.IsNaN(x) {
+			dst = appendAmount(dst, x, g.Percent)
 			continue
 		}
-		dst = appendAmount(dst, x, g.Percent)
+		if clause := bytes.LastIndex(dst[start:], []byte("; ")); clause >= 0 {
+			dst, skipping = dst[:start+clause], true
+			continue
+		}
+		dst, whole = append(dst, unknown...), false
 	}
-	return dst
+	return dst, whole
+}
+
+// endOfClause returns where a clause ends: at a semicolon or a full stop.
+func endOfClause(s string) int {
+	for i := range len(s) {
+		if s[i] == ';' || s[i] == '.' && (i+1 == len(s) || s[i+1] == ' ') {
+			return i
+		}
+	}
+	return len(s)
 }
 
 func placeValue(a *regime.Answer, g *finding.Segment, p *finding.Part) float64 {

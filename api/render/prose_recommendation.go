@@ -120,19 +120,19 @@ func moot(dst []*assumption.Entry, a *regime.Answer) []*assumption.Entry {
 
 func appendMoot(dst []byte, list []*assumption.Entry) []byte {
 	dst = append(dst, "It also rests on "...)
-	dst = appendIDs(dst, list)
+	dst = appendIDs(dst, list, " and ")
 	if len(list) == 1 {
 		return append(dst, ", whose effect cannot occur in this case."...)
 	}
 	return append(dst, ", whose effects cannot occur in this case."...)
 }
 
-// appendIDs appends "a, b and c".
-func appendIDs(dst []byte, list []*assumption.Entry) []byte {
+// appendIDs appends "a, b and c", with the word that stands before the last.
+func appendIDs(dst []byte, list []*assumption.Entry, last string) []byte {
 	for i, e := range list {
 		switch {
 		case i > 0 && i == len(list)-1:
-			dst = append(dst, " and "...)
+			dst = append(dst, last...)
 		case i > 0:
 			dst = append(dst, ", "...)
 		}
@@ -149,7 +149,7 @@ func appendRejected(dst []byte, a *regime.Answer, r *ladder.Rejected) []byte {
 		return append(dst, " does not hold."...)
 	}
 	dst = append(dst, " is ruled out by "...)
-	dst = appendIDs(dst, r.Because)
+	dst = appendIDs(dst, r.Because, " and ")
 	worst := worstOf(a, r.Because)
 	if len(r.Because) == 1 {
 		dst = append(dst, ", since "...)

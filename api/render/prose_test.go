@@ -128,6 +128,28 @@ func TestDissent(t *testing.T) {
 	}
 }
 
+// TestUnknownNumbers leaves out what can't be said, and nothing else.
+func TestUnknownNumbers(t *testing.T) {
+	g := group.New()
+	g.Put(group.Mach, 0.2)
+	a := &regime.Answer{Groups: g, Study: usual}
+	rows := map[string]string{
+		"M is {mach}; Re is {reynolds}.":                            "M is 0.2.",
+		"M is {mach}; Re is {reynolds} D; M is {mach:%} of 1.5 D.":  "M is 0.2; M is 20 % of 1.5 D.",
+		"M is {mach}; Re is {reynolds} of 0.5 or {stokes}. Take M.": "M is 0.2. Take M.",
+		"Re is {reynolds}; M is {mach}.":                            "Re is an unknown value; M is 0.2.",
+		"Re is {reynolds} at most: the flow is slow, M = {mach}.":   "The flow is slow, M = 0.2.",
+	}
+	for from, want := range rows {
+		if got := string(appendSaid(nil, a, finding.Say(from), nil)); got != want {
+			t.Errorf("%s\ngot  %s\nwant %s", from, got, want)
+		}
+	}
+	if len(rows) != 5 {
+		t.Errorf("%d rows", len(rows))
+	}
+}
+
 // TestHeldComesMostLoadedFirst also counts that nothing of the class is lost:
 // what a class rests on is held, a condition, or cannot occur.
 func TestHeldComesMostLoadedFirst(t *testing.T) {

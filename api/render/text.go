@@ -58,8 +58,8 @@ func (p *page) recommendation(a *regime.Answer) {
 	p.wrap(plain, "  Solves ", p.room)
 	p.axes(&r.Axes)
 	if r.Beside != nil {
-		p.room = append(appendClass(p.room[:0], r.Beside), " gives the natural frequencies; the recommended class has none of its own."...)
-		p.wrap(plain, "  Beside it, ", p.room)
+		p.room = append(appendClass(append(p.room[:0], "Beside it, "...), r.Beside), " gives the natural frequencies; the recommended class has none of its own."...)
+		p.wrap(plain, "  ", p.room)
 	}
 	p.subject(a)
 }
@@ -214,13 +214,13 @@ func (p *page) settled(r *ladder.Recommendation) {
 			continue
 		}
 		p.room = append(p.room[:0], "If "...)
-		sep := ""
+		var list []*assumption.Entry
 		for _, s := range r.IfSettled[i:] {
 			if s.Class == c {
-				p.room = append(append(p.room, sep...), s.Entry.ID...)
-				sep = " or "
+				list = append(list, s.Entry)
 			}
 		}
+		p.room = appendIDs(p.room, list, " or ")
 		p.room = append(p.room, " turns out not to hold, the class becomes "...)
 		p.wrap(yellow, "  - ", append(appendClass(p.room, c), '.'))
 	}
@@ -305,9 +305,34 @@ func (p *page) foot(a *regime.Answer) {
 func (p *page) groups(a *regime.Answer) {
 	p.heading("Dimensionless groups")
 	for id := range group.Count {
-		if shownGroup(a.Groups, id) {
+		if group.Of(id).Core || a.Groups.Has(id) {
 			p.group(a, id)
 		}
+	}
+	p.waitingGroups(a)
+}
+
+// waitingGroups lists the groups that wait for an input, by input.
+func (p *page) waitingGroups(a *regime.Answer) {
+	waits := func(id group.ID) bool { return !group.Of(id).Core && a.Groups.State(id) == group.Missing }
+	var done [group.Count]bool
+	for id := range group.Count {
+		if !waits(id) || done[id] {
+			continue
+		}
+		need := a.Groups.Need(id).Input
+		p.room = appendGroupReason(p.room[:0], a, id)
+		p.room = append(p.room[:len(p.room)-1], ": "...)
+		sep := ""
+		for other := id; other < group.Count; other++ {
+			if waits(other) && a.Groups.Need(other).Input == need {
+				done[other] = true
+				p.room = append(append(p.room, sep...), group.Of(other).Title...)
+				p.room = append(append(append(p.room, " ("...), group.Of(other).Symbol...), ')')
+				sep = ", "
+			}
+		}
+		p.wrap(dim, "  ", append(p.room, '.'))
 	}
 }
 

@@ -225,7 +225,7 @@ func (p *page) moot(a *regime.Answer) {
 		}
 		reason := string(appendBecause(nil, a, f))
 		p.room = append(p.room[:0], strings.TrimSuffix(reason, ".")...)
-		sep := ": "
+		sep := " ("
 		for j := i; j < len(a.Findings); j++ {
 			g := &a.Findings[j]
 			if g.Main() == nil && !done[j] && string(appendBecause(nil, a, g)) == reason {
@@ -233,7 +233,7 @@ func (p *page) moot(a *regime.Answer) {
 				sep, done[j] = ", ", true
 			}
 		}
-		p.wrap(dim, "   ", append(p.room, '.'))
+		p.wrap(dim, "   ", append(p.room, ")."...))
 	}
 }
 

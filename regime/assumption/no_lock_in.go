@@ -24,6 +24,7 @@ var NoLockIn = &Entry{
 var (
 	lockInBand      = finding.Say("Shedding meets a mode: St U/(f_w D) comes to {lock_in_position} in operation, the band of lock-in runs from {wake_band_low} to {wake_band_high}; locked in, the amplitude reaches {vortex_amplitude} D.")
 	lockInBandOpen  = finding.Say("Shedding meets a mode: St U/(f_w D) comes to {lock_in_position} in operation, the band of lock-in begins at {wake_band_low} and has no upper end; locked in, the amplitude reaches {vortex_amplitude} D.")
+	lockInOff       = finding.Say("Shedding keeps off the modes: St U/(f_w D) comes to {lock_in_position} at the most unfavourable speed of operation, the band of lock-in begins at {wake_band_low}.")
 	lockInAmplitude = finding.Say("Locked in, the amplitude would be {vortex_amplitude} D, against 0.02 D below which lock-in is a forced vibration.")
 	lockInNoDamping = finding.Say("St U/(f_w D) comes to {lock_in_position} in operation, in the band from {wake_band_low} on; whether the vibration grows depends on the damping, which was not given.")
 	lockInInline    = finding.Say("Along the flow: U/(f_w D) comes to {inline_velocity} in operation, the in-line band runs from 1 to 4.5; 1.8/Sc is {inline_scruton}.")
@@ -85,6 +86,7 @@ func lockInAcross(x *finding.Context) {
 		Say: lockInAmplitude, Source: cite.SkopGriffin1975}
 	switch {
 	case band.Estimate*band.Factor <= 1:
+		band.Say = lockInOff
 		x.Add(band) // the speeds stay off the band: the damping does not matter
 	case x.Has(group.VortexAmplitude):
 		amplitude.Estimate = x.Get(group.VortexAmplitude) / forcedAmplitude

@@ -18,7 +18,7 @@ var PseudoStatic = &Entry{
 }
 
 var (
-	pseudoStatic   = finding.Say("The damping force of the flow is {e} times its stiffness force at the wet frequency.")
+	pseudoStatic   = finding.Say("The damping force of the flow is {e:%} of its stiffness force at the wet frequency.")
 	onlyFlowDamped = finding.Say("The flow damps this shape and has no stiffness on it: a model that keeps the stiffness alone keeps nothing.")
 )
 

@@ -21,7 +21,7 @@ var RigidStructure = &Entry{
 
 var (
 	shapeChange = finding.Say("The flow's stiffness, {flow_stiffness} of the structure's, changes the load by {e:%}.")
-	placeTilt   = finding.Say("The deformed structure tilts by about {displacement_span} at most: the load changes by {e:%}.")
+	placeTilt   = finding.Say("The tilt of the deformed structure changes the load by {e:%}.")
 	placeGap    = finding.Say("The deformation takes {e:%} of the gap that shapes the flow.")
 	placeLength = finding.Say("The deformation is {e:%} of the length over which the flow varies.")
 )

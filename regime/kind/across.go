@@ -304,7 +304,7 @@ func waitFor(s *scale.Set, g *group.Set, from []scale.ID, ids ...group.ID) {
 // massDamping puts the mass-damping numbers of a section: mass ratio m*, added
 // mass coefficient C_A of the section, displaced area over D².
 func massDamping(s *scale.Set, g *group.Set, massRatio, addedCoefficient, area float64) {
-	if !g.Has(group.DampingRatio) && g.State(group.DampingRatio) != group.Missing {
+	if !g.Is(group.Fluid) || !g.Has(group.DampingRatio) && g.State(group.DampingRatio) != group.Missing {
 		return
 	}
 	zeta := s.X(scale.Damping)
