@@ -18,7 +18,7 @@ func newSchema() *cobra.Command {
 cases while they are written. The program itself checks more: dimensions, kinds
 of quantity, and what fields must agree on.`,
 		Example: `  regimed schema > case.schema.json`,
-		Args:    exactly(0),
+		Args:    arguments(0, 0, "this command takes none"),
 		RunE: func(cmd *cobra.Command, _ []string) error {
 			_, err := cmd.OutOrStdout().Write(api.CaseSchema())
 			return err
@@ -34,7 +34,7 @@ func newVersion() *cobra.Command {
 presets in force, and the version of Go that built it. Two answers with the same
 digest were judged by the same rules.`,
 		Example: `  regimed version`,
-		Args:    exactly(0),
+		Args:    arguments(0, 0, "this command takes none"),
 		RunE: func(cmd *cobra.Command, _ []string) error {
 			_, err := fmt.Fprintf(cmd.OutOrStdout(), "regimed %s\ncatalogue %s\nbuilt with %s\n", render.Version, render.Catalogue(), runtime.Version())
 			return err

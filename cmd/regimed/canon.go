@@ -87,11 +87,26 @@ func allowed(a *canon.Arg) string {
 		}
 		return s
 	}
-	s := fmt.Sprintf("%g to %g", a.Min, a.Max)
+	s := bounds(a.Min, a.Max)
 	if a.Optional {
 		s += fmt.Sprintf("; else %g", a.Default)
 	}
 	return s
+}
+
+// endless is from where on a bound stands for none.
+const endless = 1e300
+
+func bounds(least, most float64) string {
+	switch {
+	case least <= -endless && most >= endless:
+		return "any number"
+	case least <= -endless:
+		return fmt.Sprintf("up to %g", most)
+	case most >= endless:
+		return fmt.Sprintf("from %g on", least)
+	}
+	return fmt.Sprintf("%g to %g", least, most)
 }
 
 // evaluate evaluates a canonical solution, and writes it as the service does.

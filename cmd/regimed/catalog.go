@@ -199,12 +199,12 @@ func appendTable(dst []byte, rows [][]string) []byte {
 	return dst
 }
 
-// appendInFull appends entries as YAML, which people read with ease.
+// appendInFull appends entries as YAML documents, which people read with ease.
 func appendInFull(dst []byte, records []jsontext.Value) ([]byte, error) {
 	var b bytes.Buffer
 	for i, r := range records {
 		if i > 0 {
-			b.WriteByte('\n')
+			b.WriteString("---\n")
 		}
 		var node yaml.Node
 		if err := yaml.Unmarshal(r, &node); err != nil { // JSON is YAML

@@ -4,6 +4,7 @@ import (
 	"errors"
 	"fmt"
 	"io"
+	"math"
 
 	"github.com/spf13/cobra"
 
@@ -43,7 +44,7 @@ are not, 2 on bad input or an unknown name.`,
 		Example: `  regimed check --expect class=added-mass pile.yaml
   regimed check --expect 'one-way=valid|marginal' --expect 'reynolds>1e4' *.yaml
   regimed check --quiet situations/*.yaml`,
-		Args:              asUsage(cobra.MinimumNArgs(1)),
+		Args:              arguments(1, math.MaxInt, "name one file or more"),
 		ValidArgsFunction: completeCases,
 		RunE: func(cmd *cobra.Command, files []string) error {
 			common, err := parseExpectations(texts)

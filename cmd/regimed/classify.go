@@ -34,7 +34,7 @@ JSON Pointer, code, and a sentence that says what would be right. Status 2.`,
   regimed classify --format json riser.json
   regimed classify --format json --fields recommendation,findings riser.yaml
   generate-case | regimed classify -`,
-		Args:              exactly(1),
+		Args:              arguments(1, 1, "name one file, or - for standard input"),
 		ValidArgsFunction: completeCases,
 		RunE: func(cmd *cobra.Command, args []string) error {
 			write, err := writerOf(format, fields, page)

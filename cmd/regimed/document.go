@@ -315,15 +315,17 @@ func (d *document) classify() (*regime.Answer, error) {
 	return a, nil
 }
 
-// merge adds violations of the case to those of the document. Where reading
-// the document refused a value already, the case only misses it.
+// merge adds violations of the case to those of the document. A value that was
+// refused already reached the case as null: that null is no violation of its own.
 func (d *document) merge(ofCase []input.Violation) []input.Violation {
 	all := slices.Clone(d.bad)
 	for _, v := range ofCase {
 		v.Pointer = d.within + v.Pointer
-		if !slices.ContainsFunc(d.bad, func(b input.Violation) bool { return b.Pointer == v.Pointer }) {
-			all = append(all, v)
+		refused := func(b input.Violation) bool { return b.Pointer == v.Pointer }
+		if v.Value == "null" && v.Code == input.WrongType && slices.ContainsFunc(d.bad, refused) {
+			continue
 		}
+		all = append(all, v)
 	}
 	return all
 }

@@ -77,13 +77,11 @@ Statuses: 0 done or all expectations met; 1 an expectation is not met;
 	return root
 }
 
-// exactly demands a number of arguments, and calls anything else a wrong use.
-func exactly(n int) cobra.PositionalArgs { return asUsage(cobra.ExactArgs(n)) }
-
-func asUsage(check cobra.PositionalArgs) cobra.PositionalArgs {
-	return func(cmd *cobra.Command, args []string) error {
-		if err := check(cmd, args); err != nil {
-			return &usageError{err}
+// arguments demands a number of arguments, and says what is wanted otherwise.
+func arguments(least, most int, want string) cobra.PositionalArgs {
+	return func(_ *cobra.Command, args []string) error {
+		if len(args) < least || len(args) > most {
+			return &usageError{fmt.Errorf("got %s: %s", count(len(args), "argument"), want)}
 		}
 		return nil
 	}

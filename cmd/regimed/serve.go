@@ -30,7 +30,7 @@ once.`,
 		Example: `  regimed serve
   regimed serve --listen 0.0.0.0:8610 --drain 10s
   curl -d @riser.json -H 'Content-Type: application/json' localhost:8610/v1/classify`,
-		Args: exactly(0),
+		Args: arguments(0, 0, "serve takes only flags"),
 		RunE: func(cmd *cobra.Command, _ []string) error {
 			listener, err := net.Listen("tcp", listen)
 			if err != nil {
