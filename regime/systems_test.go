@@ -91,7 +91,7 @@ func TestUnitsDoNotMatter(t *testing.T) {
 		if err != nil || len(bad) > 0 {
 			rt.Fatalf("%v %v\n%s", err, bad, pretty(other))
 		}
-		if d := (comparison{relative: 1e-12}).answers(a, b); d != "" {
+		if d := (comparison{relative: conditioning(s)}).answers(a, b); d != "" {
 			rt.Fatalf("%s\n%s\n%s", d, pretty(s.document(inSI)), pretty(other))
 		}
 	})
@@ -103,4 +103,15 @@ func TestUnitsDoNotMatter(t *testing.T) {
 			}
 		}
 	}
+}
+
+// conditioning is the relative difference that rounding the input may make:
+// 1e-12, but ten times that for a rectangular plate, whose frequency is the
+// smallest eigenvalue of a matrix and keeps about 12 digits when the ratio of
+// its sides changes by the last bit.
+func conditioning(s *sample) float64 {
+	if s.kind == "plate" && s.has("structure.width") {
+		return 1e-11
+	}
+	return 1e-12
 }

@@ -194,7 +194,7 @@ func (p conveyingPipe) carry(from pipeLine, u float64, omega complex128, xi, h f
 var conveyingPipeEntry = &Entry{
 	Name:     "ConveyingPipe",
 	Problem:  "flow speed at which a pipe that conveys fluid flutters or buckles",
-	Equation: "α η̇ + η + (u² − γ(1 − ξ))η″ + 2√β u η̇′ + γη′ + η̈ = 0; lowest u at which the boundary determinant vanishes for a real ω; pinned π, clamped 2π, clamped–pinned 4.4934 at γ = 0",
+	Equation: "α η̇'''' + η'''' + (u² − γ(1 − ξ))η″ + 2√β u η̇′ + γη′ + η̈ = 0; lowest u at which the boundary determinant vanishes for a real ω; pinned π, clamped 2π, clamped–pinned 4.4934 at γ = 0",
 	Args: []Arg{
 		{Name: "beta", Symbol: "β", Doc: "fluid over total mass per length", Min: pipeBetaMin, Max: pipeBetaMax},
 		{Name: "gamma", Symbol: "γ", Doc: "(M + m)gL³/(EI), positive for a hanging pipe", Min: pipeGammaMin, Max: pipeGammaMax, Optional: true},
