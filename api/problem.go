@@ -33,7 +33,7 @@ type ViolationItem struct {
 	Pointer string         `json:"pointer"`
 	Code    input.Code     `json:"code"`
 	Detail  string         `json:"detail"`
-	Value   jsontext.Value `json:"value,omitempty"` // as received
+	Value   jsontext.Value `json:"value,omitzero"` // as received
 }
 
 func (p *Problem) Error() string { return p.Title + ": " + p.Detail }

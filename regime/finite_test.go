@@ -1,6 +1,7 @@
 package regime_test
 
 import (
+	"fmt"
 	"math"
 	"strings"
 	"testing"
@@ -112,7 +113,7 @@ func notFinite(a *regime.Answer) string {
 			return "group " + group.Of(id).ID
 		}
 		if n := a.Groups.Need(id); a.Groups.State(id) == group.Missing && (n.Input == "" || !finite(n.Coefficient) || !finite(n.Power)) {
-			return "need of group " + group.Of(id).ID
+			return fmt.Sprintf("need of group %s: %+v", group.Of(id).ID, n)
 		}
 	}
 	f := a.Groups.Factors
@@ -127,8 +128,8 @@ func notFinite(a *regime.Answer) string {
 		}
 	}
 	for i := range a.Findings {
-		if !soundFinding(&a.Findings[i]) {
-			return "finding " + assumption.Catalogue[i].ID
+		if f := &a.Findings[i]; !soundFinding(f) {
+			return fmt.Sprintf("finding %s: %s %+v", assumption.Catalogue[i].ID, f.Verdict, f.Parts())
 		}
 	}
 	return notFiniteWords(a.Warnings)

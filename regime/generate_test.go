@@ -161,6 +161,9 @@ func (d *drawer) cylinder() {
 		d.name("structure.support", support)
 	}
 	length := diameter * d.log(2, 800)
+	if d.chance(1) { // where a rule for "slender" may end
+		length = diameter * pick(d, 5.0, 15, 10)
+	}
 	if d.chance(6) {
 		d.quantity("structure.length", written(length))
 	}
@@ -407,7 +410,14 @@ func (d *drawer) surroundings() {
 	if d.kind != "plate" && !d.has("surroundings.wall_gap") {
 		d.maybe(2, "surroundings.shell_diameter", 2.02*radius, 20*radius)
 	}
-	d.maybe(2, "surroundings.depth_below_surface", 1.1*radius, 40*radius)
+	if d.chance(1) { // where a rule for "near" may end
+		d.quantity("surroundings.depth_below_surface", 10*l)
+	} else {
+		d.maybe(2, "surroundings.depth_below_surface", 1.1*radius, 40*radius)
+	}
+	if d.chance(1) && d.has("surroundings.wall_gap") {
+		d.quantity("surroundings.wall_gap", l)
+	}
 	if d.kind == "plate" {
 		d.maybe(2, "surroundings.backing_depth", 0.01*l, 5*l)
 	}

@@ -37,7 +37,7 @@ func estimateFluidAbsent(x *finding.Context) {
 	inertia := finding.Part{Measure: finding.Frequency, Basis: finding.Canonical, Factor: x.Factors.Inertia,
 		Say: absentInertia, Source: cite.Batchelor1967}
 	if x.Has(group.FrequencyRatio) {
-		inertia.Estimate = 1/x.Get(group.FrequencyRatio) - 1
+		inertia.Estimate = math.Abs(1/x.Get(group.FrequencyRatio) - 1)
 		x.Add(inertia)
 	} else {
 		x.AddOrWait(inertia, group.AddedMassRatio, func(mu float64) float64 { return math.Sqrt(1+mu) - 1 })

@@ -32,7 +32,11 @@ func estimateCavitation(x *finding.Context) {
 		return
 	}
 	p := finding.Part{Measure: finding.Stability, Basis: finding.Threshold, Factor: 1.3, Say: cavitationFlow, Source: cite.Brennen1995}
-	if x.Any(group.Flow) && x.Has(group.SuctionPeak) {
+	switch {
+	case !x.Any(group.Flow):
+	case !x.Has(group.SuctionPeak):
+		waitOn(x, p, group.SuctionPeak)
+	default:
 		peak := x.Get(group.SuctionPeak)
 		x.AddOrWait(p, group.Cavitation, func(sigma float64) float64 {
 			if sigma <= 0 {
@@ -42,6 +46,7 @@ func estimateCavitation(x *finding.Context) {
 		})
 	}
 	if x.Is(group.StaticOnly) {
+		x.NotApplicable(noMotion)
 		return
 	}
 	p.Say, p.Factor = cavitationMotion, 2

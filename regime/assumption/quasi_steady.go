@@ -21,10 +21,11 @@ var QuasiSteady = &Entry{
 }
 
 var (
-	memoryLift = finding.Say("At k = {reduced_frequency} the flow's memory changes the load by {e:%}: |C(k) − 1|.")
-	memoryWake = finding.Say("The mode beats {e} times as fast as the wake sheds; memory fades below a third.")
-	memoryNone = finding.Say("The flow along a slender body has no memory: its load follows the motion of the section.")
-	noWake     = finding.Say("No vortices are shed at Re = {reynolds}: memory has no time scale of a wake.")
+	memoryLift  = finding.Say("At k = {reduced_frequency} the flow's memory changes the load by {e:%}: |C(k) − 1|.")
+	memoryWake  = finding.Say("The mode beats {e} times as fast as the wake sheds; memory fades below a third.")
+	memoryNone  = finding.Say("The flow along a slender body has no memory: its load follows the motion of the section.")
+	memoryAlong = finding.Say("The flow does not run across the bluff body: there is no street of vortices that remembers.")
+	noWake      = finding.Say("No vortices are shed at Re = {reynolds}: memory has no time scale of a wake.")
 )
 
 func estimateQuasiSteady(x *finding.Context) {
@@ -37,6 +38,8 @@ func estimateQuasiSteady(x *finding.Context) {
 		x.NotApplicable(noFrequency)
 	case x.Is(group.Axial):
 		x.NotApplicable(memoryNone)
+	case x.Is(group.Bluff) && !x.Is(group.Cross):
+		x.NotApplicable(memoryAlong)
 	case !x.Is(group.Bluff):
 		x.AddOrWait(finding.Part{Measure: finding.Load, Basis: finding.Canonical, Factor: 1.5, Say: memoryLift, Source: cite.Theodorsen1935},
 			group.ReducedFrequency, memory)

@@ -36,7 +36,7 @@ func estimateSteadyFlow(x *finding.Context) {
 		x.NotApplicable(noFlow)
 		return
 	}
-	if x.Is(group.Bluff) {
+	if x.Is(group.Bluff | group.Cross) {
 		sheddingPart(x)
 	} else if !x.Has(group.TurbulenceIntensity) {
 		x.Add(finding.Part{Measure: finding.Load, Basis: finding.Definition, Estimate: 0, Factor: 1.5, Say: steadyShape, Source: cite.Blevins1990})

@@ -31,6 +31,10 @@ type Entry struct {
 	Factor   float64        // model-form factor φ ≥ 1 when used for this very geometry
 	Sources  []*cite.Source // at least one
 	Note     string         // limits, traps, what it does not cover; may be empty
+	Limits   []Limit        // what the outputs approach at the ends of the range
+	// Over names the argument over which the entry is drawn; empty: the first
+	// that is a continuous number, or else the first that is a number.
+	Over string
 	// Eval evaluates the entry. It may rely on the arguments having been
 	// checked by Evaluate against their ranges; it returns a RangeError for
 	// conditions that tie arguments together.
@@ -44,13 +48,108 @@ type Arg struct {
 	Doc      string
 	Min, Max float64 // inclusive; not used with Choices
 	Choices  []string
+	Whole    bool // a whole number, such as that of a mode
 	Optional bool
 	Default  float64 // used when Optional and not given; index for Choices
+	// Typical is a value in the middle of practice, for pictures: index for
+	// Choices. Zero stands for none: the default, or else one out of the window.
+	Typical float64
+	// From and To are the window that a picture shows; both zero: the range, or
+	// its readable part.
+	From, To float64
 }
 
 // Output is one result.
 type Output struct {
 	ID, Symbol, Doc string
+	Unbounded       bool // +Inf is a result too: it says that there is no such value
+}
+
+// UncertaintyID is the id of the output in which a solution that is cut short
+// (a set of modes, a series, a rule of integration) says by how much, relative,
+// what was left out may change its first output.
+const UncertaintyID = "uncertainty"
+
+// uncertaintyOutput is that output of the entries whose doc is the usual one.
+var uncertaintyOutput = Output{ID: UncertaintyID, Symbol: "δ", Doc: "relative change of the first value that what was left out may make"}
+
+// End is an end of the range of the argument over which an entry is drawn.
+type End int
+
+// The two ends.
+const (
+	Low End = iota
+	High
+)
+
+// Limit is what an output approaches at one end of the range: an asymptote, or
+// the value of a simpler problem.
+type Limit struct {
+	Name   string // the formula, "thin layer: 1 + 2δ/a"
+	Output string // id of the output
+	End    End
+	// Within is the relative distance that is left at that end of the range, the
+	// other arguments at their usual values; a test holds it.
+	Within float64
+	// Value is the limit as a function of all arguments, in their order.
+	Value func(args []float64) float64
+}
+
+// Sweep returns the index of the argument over which the entry is drawn, or −1
+// if all of its arguments are choices.
+func (e *Entry) Sweep() int {
+	if e.Over != "" {
+		return slices.IndexFunc(e.Args, func(a Arg) bool { return a.Name == e.Over })
+	}
+	i := slices.IndexFunc(e.Args, func(a Arg) bool { return len(a.Choices) == 0 && !a.Whole })
+	if i < 0 {
+		i = slices.IndexFunc(e.Args, func(a Arg) bool { return len(a.Choices) == 0 })
+	}
+	return i
+}
+
+// Usual returns a value in the middle of practice.
+func (a *Arg) Usual() float64 {
+	switch from, to := a.Window(); {
+	case a.Typical != 0 || len(a.Choices) > 0:
+		return a.Typical
+	case a.Optional:
+		return a.Default
+	case a.Whole:
+		return a.Min
+	case from > 0:
+		return math.Sqrt(from * to)
+	default:
+		return (from + to) / 2
+	}
+}
+
+// The readable part of a range that spans too many decades for a picture.
+const (
+	readableFrom    = 1e-3
+	readableTo      = 1e4
+	readableDecades = 1e7
+)
+
+// Window returns the part of the range that a picture shows.
+func (a *Arg) Window() (from, to float64) {
+	if a.From != 0 || a.To != 0 {
+		return a.From, a.To
+	}
+	from, to = a.Min, a.Max
+	if a.Whole {
+		return from, math.Min(to, from+19)
+	}
+	if to > readableTo && (from <= 0 || to/from > readableDecades) {
+		to = readableTo
+	}
+	if from < -readableTo {
+		from = -readableTo
+	}
+	if from >= 0 && from < readableFrom && to >= 100 {
+		from = readableFrom
+	}
+	return from, to
 }
 
 // RangeError says that an argument lies outside the range in which a canonical
@@ -115,8 +214,13 @@ func (e *Entry) Evaluate(args []float64) ([]float64, error) {
 			if full[i] != math.Trunc(full[i]) || full[i] < 0 || full[i] >= float64(n) {
 				return nil, &RangeError{Function: e.Name, Arg: a.Name, Value: full[i], Reason: "want one of " + strings.Join(a.Choices, ", ")}
 			}
-		} else if err := inRange(e.Name, a.Name, full[i], a.Min, a.Max); err != nil {
+			continue
+		}
+		if err := inRange(e.Name, a.Name, full[i], a.Min, a.Max); err != nil {
 			return nil, err
+		}
+		if a.Whole && full[i] != math.Trunc(full[i]) {
+			return nil, &RangeError{Function: e.Name, Arg: a.Name, Value: full[i], Min: a.Min, Max: a.Max, Reason: "want a whole number"}
 		}
 	}
 	return e.Eval(full)

@@ -1,6 +1,8 @@
 package finding
 
 import (
+	"math"
+
 	"regimed/regime/cite"
 	"regimed/regime/group"
 )
@@ -128,6 +130,9 @@ func (x *Context) Add(p Part) {
 	}
 	if p.Inner == 0 {
 		p.Inner = p.Factor
+	}
+	if math.IsInf(p.Estimate, 1) { // a square that overflows: as bad as can be
+		p.Estimate = maxUtilisation * p.Limit
 	}
 	x.arena = append(x.arena, p)
 }

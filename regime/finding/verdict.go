@@ -132,11 +132,15 @@ func Margin(utilisation float64) float64 { return -math.Log10(utilisation) }
 //	valid     u·φ ≤ 1
 //	marginal  u/φ ≤ 1 < u·φ
 //	invalid   u/φ > 1
+//
+// with ≤ to nine digits, so that a case on the very edge gets the same verdict in
+// any units.
 func Judge(utilisation, factor, inner float64) Verdict {
+	const edge = 1 + 1e-9
 	switch {
-	case utilisation*factor <= 1:
+	case utilisation*factor <= edge:
 		return Valid
-	case utilisation/inner <= 1:
+	case utilisation/inner <= edge:
 		return Marginal
 	default:
 		return Invalid

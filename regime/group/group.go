@@ -60,7 +60,10 @@ func (n Need) InputFor(g float64) float64 {
 	if n.Power == 0 || !(g > 0) {
 		return math.NaN()
 	}
-	return n.Coefficient * math.Pow(g, 1/n.Power)
+	if x := n.Coefficient * math.Pow(g, 1/n.Power); !math.IsInf(x, 1) {
+		return x
+	}
+	return math.NaN()
 }
 
 // Transition is the band of the Reynolds number in which the flow of this kind
@@ -116,6 +119,13 @@ func (s *Set) Adopt(id ID, x float64) {
 
 // Miss records that a group arises but waits for an input.
 func (s *Set) Miss(id ID, n Need) {
+	if n.Input == "" { // what it follows from has no value and waits for none
+		s.Put(id, math.NaN())
+		return
+	}
+	if !(n.Coefficient > 0) || math.IsInf(n.Coefficient, 1) { // no length or mass that can be computed with
+		n.Coefficient, n.Power = 0, 0
+	}
 	s.x[id] = math.NaN()
 	s.state[id] = Missing
 	s.need[id] = n

@@ -193,7 +193,7 @@ func (w *wake) dragCoefficient(re float64) float64 {
 	if w.roughness > 0 && re > canon.DragCrisisStart {
 		return roughDrag(w.roughness)
 	}
-	cd, _, _, err := canon.CylinderDrag(re)
+	cd, _, _, err := canon.CylinderDrag(math.Min(re, 1e8))
 	if err != nil {
 		return math.NaN()
 	}
@@ -220,6 +220,20 @@ func roughDrag(k float64) float64 {
 	default:
 		return 1.05
 	}
+}
+
+// displacementThickness is δ*/ℓ of a plate along the flow at the Reynolds number
+// of its length. Below 100, where no layer is thin, it follows the laminar law on,
+// which falls short and still tells that an inviscid flow is out of the question.
+func displacementThickness(re float64) float64 {
+	if re < 100 {
+		return 1.72079 / math.Sqrt(math.Max(re, 1e-12))
+	}
+	layer, err := canon.FlatPlate(math.Min(re, 1e9), re > 5e5)
+	if err != nil {
+		return math.NaN()
+	}
+	return layer.DisplacementThickness
 }
 
 // groups puts what the wake makes.
@@ -258,6 +272,9 @@ func (w *wake) groups(s *scale.Set, g *group.Set) {
 
 func (w *wake) putModes(s *scale.Set, g *group.Set) {
 	v := s.X(scale.Speed) / (s.X(scale.FrequencyWet) * s.X(scale.Length))
+	if math.IsInf(v, 1) { // a frequency too low to compute with
+		return
+	}
 	for i, ratio := range w.modes {
 		if i == group.MaxModes || i > 0 && w.xHigh/ratio < 1/1.5 {
 			break

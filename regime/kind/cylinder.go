@@ -255,7 +255,7 @@ func (c *cylinder) surface(r *Resolver) {
 	switch {
 	case cover < 0:
 		r.violations.Add(DepthBelowSurface.Pointer(), input.OutOfRange, "The axis lies less than a radius below the surface: a cylinder that pierces it is not solved.", nil)
-	case d <= 10*c.d:
+	case atMost(d, 10*c.d):
 		c.cover = cover / c.d
 		r.trait(group.NearSurface)
 	}
@@ -495,7 +495,7 @@ func (c *cylinder) Groups(s *scale.Set, g *group.Set) {
 // cylinder, alone or in a shell; a wall and sound in a confined space are cousins.
 func (c *cylinder) factorsOf(s *scale.Set) group.Factors {
 	f := group.Factors{Inertia: 1.15, Viscous: 1.15, Acoustic: 1.15, Flow: 1.5, Buckling: 1.5, Flutter: 2, Stiffening: c.stiffening(), StallPerRadian: 1}
-	if c.d/s.X(scale.Span) > 0.2 {
+	if ratio := c.d / s.X(scale.Span); s.Has(scale.Span) && !atMost(ratio, 0.2) {
 		f.Inertia, f.Viscous = 1.5, 1.5
 	}
 	if s.Has(scale.WallGap) {
@@ -659,16 +659,16 @@ func (c *cylinder) axialGroups(s *scale.Set, g *group.Set) {
 	c.boundaryLayer(s, g)
 	needs := []scale.ID{scale.Speed, scale.Span, scale.Bending, scale.DryMass, scale.Density}
 	if math.IsNaN(c.u) || c.u == 0 && math.IsNaN(c.bucklingU) && math.IsNaN(c.flutterU) {
-		waitFor(s, g, needs, group.ConveyingSpeed, group.FlowStiffness, group.BucklingSpeed)
+		waitFor(s, g, needs, group.ConveyingSpeed, group.FlowStiffness, group.BucklingSpeed, group.PseudoStatic)
 		if !s.Has(scale.Bending) {
-			for _, id := range []group.ID{group.ConveyingSpeed, group.FlowStiffness, group.BucklingSpeed} {
+			for _, id := range []group.ID{group.ConveyingSpeed, group.FlowStiffness, group.BucklingSpeed, group.PseudoStatic} {
 				g.Miss(id, group.Need{Input: Young.Path(), Unit: "Pa"})
 			}
 		}
 		return
 	}
 	g.Put(group.ConveyingSpeed, c.u)
-	g.Put(group.ConveyingMass, c.beta)
+	putOrWait(s, g, group.ConveyingMass, c.beta, scale.DryMass)
 	high := s.X(scale.SpeedHigh)
 	switch {
 	case !math.IsNaN(c.bucklingU):
@@ -683,7 +683,7 @@ func (c *cylinder) axialGroups(s *scale.Set, g *group.Set) {
 	// gyroscopic (Coriolis) force of the flow over its centrifugal one
 	omega := 2 * math.Pi * s.X(scale.FrequencyWet)
 	k := math.Pi / s.X(scale.Span)
-	g.Put(group.PseudoStatic, 2*omega/(s.X(scale.Speed)*k))
+	putOrWait(s, g, group.PseudoStatic, 2*omega/(s.X(scale.Speed)*k), scale.FrequencyWet, scale.Speed)
 }
 
 func (c *cylinder) boundaryLayer(s *scale.Set, g *group.Set) {
@@ -692,8 +692,5 @@ func (c *cylinder) boundaryLayer(s *scale.Set, g *group.Set) {
 		g.Miss(group.BoundaryLayer, g.Need(group.LengthReynolds))
 		return
 	}
-	layer, err := canon.FlatPlate(re, re > 5e5)
-	if err == nil {
-		g.Put(group.BoundaryLayer, layer.DisplacementThickness*s.X(scale.Span)/c.d)
-	}
+	g.Put(group.BoundaryLayer, displacementThickness(re)*s.X(scale.Span)/c.d)
 }

@@ -239,18 +239,17 @@ func inputNeed(trial *scale.Set, f *Formula, missing scale.ID, need string) grou
 	if scale.Of(missing).Input != need {
 		return n
 	}
-	v.X = 1
-	one := f.Value(trial)
-	v.X = 2
-	two := f.Value(trial)
+	at := func(x float64) float64 { v.X = x; return f.Value(trial) }
+	one, two, eight := at(1), at(2), at(8)
 	v.X = math.NaN()
-	if !(one > 0) || !(two > 0) || math.IsInf(one, 0) {
+	power := math.Log2(two / one)
+	c := math.Pow(one, -1/power)
+	// a pressure less the vapour pressure is no power of the latter, however
+	// little the two values differ
+	if math.IsNaN(c) || math.IsInf(c, 0) || c == 0 || !(math.Abs(math.Log2(eight/one)-3*power) <= 1e-9*math.Abs(power)) {
 		return n
 	}
-	n.Power = math.Log2(two / one)
-	if n.Power == 0 {
-		return n
-	}
-	n.Coefficient = math.Pow(one, -1/n.Power)
+	n.Power = power
+	n.Coefficient = c
 	return n
 }

@@ -93,7 +93,7 @@ func (b *generic) body(r *Resolver) {
 	if !r.c.Has(genShape) {
 		r.warn(genShape, "assumed", "The body is taken as bluff.")
 	}
-	if d := r.X(scale.Depth); d <= 10*b.l && r.Is(group.Fluid) {
+	if d := r.X(scale.Depth); atMost(d, 10*b.l) && r.Is(group.Fluid) {
 		r.trait(group.NearSurface)
 	}
 	gap := r.X(scale.WallGap)
@@ -413,7 +413,7 @@ func (b *generic) gallop(s *scale.Set, g *group.Set, high float64) {
 	default:
 		sc := 4 * math.Pi * b.massRatio * math.Pi / 4 * s.X(scale.Damping)
 		onset := 2 * sc * s.X(scale.FrequencyDry) * b.l / b.galloping
-		putOrWait(s, g, group.GallopingSpeed, high/math.Max(onset, 1e-9*high), scale.SpeedHigh, scale.FrequencyDry, scale.DryMass)
+		putOrWait(s, g, group.GallopingSpeed, high/math.Max(onset, 1e-9*high), scale.SpeedHigh, scale.FrequencyDry, scale.DryMass, scale.DisplacedMass)
 	}
 }
 
@@ -444,8 +444,6 @@ func (b *generic) boundaryLayer(s *scale.Set, g *group.Set) {
 	case math.IsNaN(thickness):
 		g.Miss(group.BoundaryLayer, group.Need{Input: genThickness.Path(), Unit: "m"})
 	default:
-		if layer, err := canon.FlatPlate(re, re > 5e5); err == nil {
-			g.Put(group.BoundaryLayer, 2*layer.DisplacementThickness*b.l/thickness)
-		}
+		g.Put(group.BoundaryLayer, 2*displacementThickness(re)*b.l/thickness)
 	}
 }

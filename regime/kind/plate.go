@@ -197,7 +197,7 @@ func (p *plate) supports(r *Resolver) {
 	p.x, p.y = beamOf(p.edges[0], p.edges[2]), beamOf(p.edges[1], p.edges[3])
 	if p.x == canon.ClampedFree && p.y == canon.FreeFree {
 		r.trait(group.Cantilever)
-		p.strip = p.n == 1 && p.a >= p.b
+		p.strip = p.n == 1 && atMost(p.b, p.a)
 	}
 }
 
@@ -366,7 +366,7 @@ func (p *plate) addedMass(r *Resolver, rho float64) {
 		r.Need(id, r.Needs(scale.Density))
 		r.Value(id).Kind = units.MassPerArea
 	}
-	if d := r.X(scale.Depth); d <= 10*p.a && r.Is(group.Fluid) {
+	if d := r.X(scale.Depth); atMost(d, 10*p.a) && r.Is(group.Fluid) {
 		r.trait(group.NearSurface)
 	}
 	viscous := p.b / 2
@@ -394,7 +394,7 @@ func (p *plate) wall(r *Resolver, rho, free float64, how string) {
 	}
 	r.derive(scale.Gap, gap, units.Length, "to the wall")
 	r.trait(group.Confined)
-	p.film = gap < width
+	p.film = !atMost(width, gap)
 	if p.film {
 		r.trait(group.Film)
 	}
@@ -807,8 +807,5 @@ func (p *plate) panelLayer(s *scale.Set, g *group.Set) {
 		g.Miss(group.BoundaryLayer, g.Need(group.LengthReynolds))
 		return
 	}
-	layer, err := canon.FlatPlate(re, re > 5e5)
-	if err == nil {
-		g.Put(group.BoundaryLayer, layer.DisplacementThickness*p.a*p.alongWave())
-	}
+	g.Put(group.BoundaryLayer, displacementThickness(re)*p.a*p.alongWave())
 }

@@ -10,6 +10,10 @@ import (
 	"regimed/units"
 )
 
+// atMost says whether x is not above a limit, but for the last digits: the
+// same length in two units must lie on the same side of a rule.
+func atMost(x, limit float64) bool { return x <= limit*(1+1e-9) }
+
 // band warns, and never refuses, where a value lies outside what is usual.
 func (r *Resolver) band(f *input.Field, id scale.ID, lo, hi float64, mistake string) {
 	if !r.c.Has(f) {

@@ -1,0 +1,66 @@
+package regime_test
+
+import (
+	"slices"
+	"testing"
+
+	"pgregory.net/rapid"
+
+	"regimed/regime/assumption"
+	"regimed/regime/finding"
+)
+
+// neverInvalid are assumptions that no case can make invalid, with the reason.
+var neverInvalid = map[string]string{}
+
+// Drawn cases bring out every verdict of every assumption, and an assumption
+// that is not applicable says why in words of its own.
+func TestEveryAssumptionGetsEveryVerdict(t *testing.T) {
+	seen := make([]map[finding.Verdict]int, len(assumption.Catalogue))
+	for i := range seen {
+		seen[i] = map[finding.Verdict]int{}
+	}
+	unsaid := map[string]int{}
+	c := newTally()
+	rapid.Check(t, func(rt *rapid.T) {
+		a := c.classify(rt, cases().Draw(rt, "case"), asAnalystsWrite)
+		if a == nil {
+			return
+		}
+		if len(a.Findings) != len(assumption.Catalogue) {
+			rt.Fatalf("%d findings of %d assumptions", len(a.Findings), len(assumption.Catalogue))
+		}
+		for i := range a.Findings {
+			f := &a.Findings[i]
+			seen[i][f.Verdict]++
+			if f.Verdict != finding.NotApplicable {
+				continue
+			}
+			if f.Reason == nil || f.Reason.Text == "" {
+				rt.Fatalf("%s is not applicable without a reason", assumption.Catalogue[i].ID)
+			}
+			if f.Reason.Text == "What this assumption leaves out does not arise in this case." {
+				unsaid[assumption.Catalogue[i].ID]++
+			}
+		}
+	})
+	c.require(t, 0.95, false)
+	for i, e := range assumption.Catalogue {
+		t.Logf("%-28s %v", e.ID, seen[i])
+		if seen[i][finding.Valid]+seen[i][finding.Marginal] == 0 {
+			t.Errorf("%s never holds in a drawn case", e.ID)
+		}
+		if _, never := neverInvalid[e.ID]; (seen[i][finding.Invalid] == 0) != never {
+			t.Errorf("%s is invalid in %d drawn cases", e.ID, seen[i][finding.Invalid])
+		}
+	}
+	for _, e := range assumption.Catalogue {
+		if n := unsaid[e.ID]; n > 0 && !slices.Contains(mayBeUnsaid, e.ID) {
+			t.Errorf("%s is not applicable in %d drawn cases without a reason of its own", e.ID, n)
+		}
+	}
+}
+
+// mayBeUnsaid are assumptions that no class rests on and that need no reason of
+// their own where they don't arise.
+var mayBeUnsaid = []string{"two-dimensional"}
