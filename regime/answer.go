@@ -7,6 +7,7 @@ import (
 	"regimed/regime/kind"
 	"regimed/regime/ladder"
 	"regimed/regime/scale"
+	"regimed/regime/setup"
 )
 
 // Answer is the record of one case: everything that a rendering shows, and no
@@ -18,6 +19,7 @@ type Answer struct {
 	Groups         *group.Set
 	Findings       []finding.Finding // by the order of assumption.Catalogue
 	Recommendation ladder.Recommendation
+	Setup          []setup.Figure
 	finding.Study
 	Warnings []kind.Warning
 }

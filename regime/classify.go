@@ -6,10 +6,12 @@ import (
 	"regimed/regime/input"
 	"regimed/regime/kind"
 	"regimed/regime/ladder"
+	"regimed/regime/setup"
 )
 
 // Classify is the whole story: a case becomes scales, scales become groups,
-// groups are judged, and the cheapest class that holds is recommended.
+// groups are judged, the cheapest class that holds is recommended, and figures
+// for setting it up follow.
 func Classify(c *input.Case) (*Answer, []input.Violation) {
 	resolved, warnings, violations := kind.Resolve(c)
 	if len(violations) > 0 {
@@ -17,6 +19,7 @@ func Classify(c *input.Case) (*Answer, []input.Violation) {
 	}
 	a := Decide(resolved, kind.StudyOf(c))
 	a.Case, a.Warnings = c, warnings
+	a.Setup = setup.Figures(a.Scales, a.Groups, &a.Recommendation)
 	return a, nil
 }
 

@@ -21,6 +21,7 @@ const (
 	Groups
 	Findings
 	Recommendation
+	Setup
 	Frequencies
 	Warnings
 	Cautions
@@ -32,7 +33,7 @@ const (
 const All = fieldsEnd - 1
 
 var fieldNames = []string{"digest", "engine", "title", "reference", "kind", "study", "scales", "groups", "findings",
-	"recommendation", "frequencies", "warnings", "cautions"}
+	"recommendation", "setup", "frequencies", "warnings", "cautions"}
 
 // FieldNames lists the top-level members by name, in the order of the answer.
 func FieldNames() []string { return append([]string(nil), fieldNames...) }

@@ -39,6 +39,9 @@ func AppendJSON(dst []byte, a *regime.Answer, only Fields) []byte {
 	if only.Has(Recommendation) {
 		dst = appendRecommendation(name(dst, "recommendation"), a)
 	}
+	if only.Has(Setup) {
+		dst = appendSetup(name(dst, "setup"), a)
+	}
 	if only.Has(Frequencies) {
 		dst = appendFrequencies(name(dst, "frequencies"), a)
 	}
@@ -164,6 +167,23 @@ func appendWith(dst []byte, a *regime.Answer, id group.ID, w *written) []byte {
 			dst = seal(units.AppendFormat(opened, a.Scales.X(s), a.Scales.Value(s).Kind), start)
 			w[s].from, w[s].to = start-1, len(dst)
 		}
+	}
+	return append(dst, '}')
+}
+
+func appendSetup(dst []byte, a *regime.Answer) []byte {
+	dst = append(dst, '{')
+	for i := range a.Setup {
+		f := &a.Setup[i]
+		dst = append(name(dst, f.Row.ID), '{')
+		dst = member(dst, "title", f.Row.Title)
+		dst = number(dst, "value", f.Value)
+		dst = member(dst, "unit", f.Row.Kind.SI())
+		dst = member(dst, "rule", f.Row.Rule)
+		var start int
+		dst, start = open(name(dst, "source"))
+		dst = seal(appendSource(dst, f.Row.Source), start)
+		dst = append(flag(dst, "governs", f.Governs), '}')
 	}
 	return append(dst, '}')
 }

@@ -13,6 +13,7 @@ func appendRecommendation(dst []byte, a *regime.Answer) []byte {
 	dst = member(dst, "title", r.Class.Title)
 	dst = number(dst, "rank", float64(r.Class.Rank))
 	dst = member(dst, "solves", r.Class.Solves)
+	dst = flag(dst, "provisional", r.Provisional)
 	dst = append(name(dst, "axes"), '{')
 	for i := range ladder.AxisList {
 		x := &ladder.AxisList[i]

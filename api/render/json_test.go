@@ -53,7 +53,7 @@ func keysOf(dst map[string]bool, path string, v any) {
 		}
 	case map[string]any:
 		for k, e := range v {
-			if path == "scales" || path == "groups" || path == "findings" || strings.HasSuffix(path, ".with") {
+			if path == "scales" || path == "groups" || path == "findings" || path == "setup" || strings.HasSuffix(path, ".with") {
 				k = "*"
 			}
 			next := strings.TrimPrefix(path+"."+k, ".")
@@ -79,18 +79,19 @@ kind
 recommendation recommendation.axes recommendation.axes.compressible recommendation.axes.coupling recommendation.axes.dimensions
 recommendation.axes.electromechanical recommendation.axes.fluid recommendation.axes.fluid_inertia recommendation.axes.free_surface
 recommendation.axes.phases recommendation.axes.structure recommendation.axes.turbulence recommendation.axes.viscous
-recommendation.class recommendation.conditions recommendation.if_settled
+recommendation.class recommendation.conditions recommendation.provisional recommendation.if_settled
 recommendation.if_settled[].finding recommendation.if_settled[].needs recommendation.if_settled[].would_become
 recommendation.justification recommendation.rank recommendation.rejected recommendation.rejected[].because
 recommendation.rejected[].class recommendation.rejected[].sentence recommendation.rejected[].title recommendation.solves recommendation.title
 reference
 scales scales.* scales.*.note scales.*.origin scales.*.symbol scales.*.title scales.*.unit scales.*.value
 study study.interest study.tolerance study.tolerance.frequency study.tolerance.load study.tolerance.name study.tolerance.response
-title warnings warnings[].code warnings[].pointer warnings[].sentence
+setup title warnings warnings[].code warnings[].pointer warnings[].sentence
 `)
 
 // seldom are members that only some answers have.
 var seldom = strings.Fields(`
+setup.* setup.*.governs setup.*.rule setup.*.source setup.*.title setup.*.unit setup.*.value
 findings.*.published findings.*.published[].clause findings.*.published[].criterion findings.*.published[].edition
 findings.*.published[].formula findings.*.published[].limit findings.*.published[].picked findings.*.published[].source
 findings.*.published[].standard findings.*.published[].utilisation findings.*.published[].verdict
@@ -324,7 +325,7 @@ func TestParseFields(t *testing.T) {
 			t.Errorf("%s: %b, %v", name, f, err)
 		}
 	}
-	if len(FieldNames()) != 13 || All != 1<<13-1 {
+	if len(FieldNames()) != 14 || All != 1<<14-1 {
 		t.Errorf("%d members, all is %b", len(FieldNames()), All)
 	}
 }

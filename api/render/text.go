@@ -40,6 +40,7 @@ func AppendText(dst []byte, a *regime.Answer, o TextOptions) []byte {
 	p.assumptions(a)
 	p.groups(a)
 	p.scales(a)
+	p.setup(a)
 	p.frequencies(a)
 	p.warnings(a)
 	p.cautions(a)
@@ -51,7 +52,11 @@ func AppendText(dst []byte, a *regime.Answer, o TextOptions) []byte {
 func (p *page) recommendation(a *regime.Answer) {
 	r := &a.Recommendation
 	p.begin(strong)
-	p.dst = append(p.dst, "Recommended: "...)
+	if r.Provisional {
+		p.dst = append(p.dst, "Recommended, provisionally: "...)
+	} else {
+		p.dst = append(p.dst, "Recommended: "...)
+	}
 	p.dst = appendClass(p.dst, r.Class)
 	p.end(strong)
 	p.room = append(append(p.room[:0], r.Class.Solves...), '.')
@@ -405,6 +410,26 @@ func (p *page) scales(a *regime.Answer) {
 		if v.Note != "" {
 			p.room = append(append(p.room, ", "...), v.Note...)
 		}
+		p.wrap(plain, string(lead), p.room)
+	}
+}
+
+// setup lists the figures for the next step, the governing ones marked.
+func (p *page) setup(a *regime.Answer) {
+	if len(a.Setup) == 0 {
+		return
+	}
+	p.heading("Set-up figures")
+	for i := range a.Setup {
+		f := &a.Setup[i]
+		mark := "  "
+		if f.Governs {
+			mark = "> "
+		}
+		lead := left([]byte(mark), f.Row.Title, 42)
+		lead = append(right(lead, units.Format(f.Value, f.Row.Kind), 12), "  "...)
+		p.room = append(append(p.room[:0], f.Row.Rule...), " ["...)
+		p.room = append(append(p.room, f.Row.Source.Short...), ']')
 		p.wrap(plain, string(lead), p.room)
 	}
 }

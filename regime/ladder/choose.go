@@ -13,6 +13,8 @@ type Recommendation struct {
 	Rejected   []Rejected          // candidates cheaper than the class, in order
 	Conditions []*assumption.Entry // marginal or undetermined, to be verified
 	IfSettled  []Settled           // undetermined ones that could change the answer
+	// Provisional is true where a missing input could still change the class.
+	Provisional bool
 	// Beside is the class for the frequencies, where the recommended class
 	// gives none of its own: the cheapest of the modal ones that would stand
 	// without fluid at rest. Nil otherwise.
@@ -37,6 +39,7 @@ func Choose(kind string, g *group.Set, fs []finding.Finding) Recommendation {
 	r := Recommendation{Class: choose(kind, g.Traits, fs, nil)}
 	r.reject(kind, g.Traits, fs)
 	r.condition(kind, g.Traits, fs)
+	r.Provisional = len(r.IfSettled) > 0
 	if r.Class.Axes.Coupling == "one-way" || r.Class.ID == StaticAeroelastic {
 		r.Beside = beside(kind, g.Traits, fs)
 	}
