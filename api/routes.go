@@ -2,6 +2,7 @@ package api
 
 import (
 	"net/http"
+	"strings"
 
 	"github.com/labstack/echo/v4"
 )
@@ -38,11 +39,12 @@ func (s *Server) ready(c echo.Context) error {
 	return s.fixed.ready.answer(c)
 }
 
-// paths lists the paths that a caller may mean, for suggestions.
+// paths lists the paths that a caller may mean, for suggestions: those that can
+// be asked for as they stand.
 func (s *Server) paths() []string {
 	var list []string
 	for _, r := range s.echo.Routes() {
-		if r.Method != http.MethodHead {
+		if r.Method != http.MethodHead && !strings.Contains(r.Path, ":") {
 			list = append(list, r.Path)
 		}
 	}

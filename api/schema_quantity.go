@@ -14,7 +14,7 @@ import (
 // through what only the server can judge, and refuse nothing that it reads.
 const (
 	patternBare = `^[^0-9A-Za-z]*[0-9]`
-	patternUnit = patternBare + `[\s\S]*[A-Za-z%‰°µμΩΩ℃℉]`
+	patternUnit = patternBare + "[\\s\\S]*[A-Za-z%‰°℃℉\u00b5\u03bc\u03a9\u2126]" // micro and ohm, each as sign and as letter
 )
 
 // quantity refers to the definition of a kind of quantity.

@@ -4,6 +4,7 @@ import (
 	"bytes"
 	"net/http"
 	"os"
+	"regexp"
 	"slices"
 	"strconv"
 	"strings"
@@ -312,4 +313,32 @@ func drawQuantity(t *rapid.T, text string) any {
 		forms = append(forms, x, strconv.FormatFloat(100*x, 'g', -1, 64)+" %")
 	}
 	return rapid.SampledFrom(forms).Draw(t, "form")
+}
+
+// A quantity in every unit that the server knows passes as text, and a number
+// without a unit passes only where the quantity is a pure number.
+func TestSchemaTakesEveryUnit(t *testing.T) {
+	ran := 0
+	bare, withUnit := regexp.MustCompile(patternBare), regexp.MustCompile(patternUnit)
+	for _, u := range units.Table() {
+		for _, symbol := range append([]string{u.Symbol}, u.Aliases...) {
+			if symbol == "1" {
+				continue // the unit of a pure number
+			}
+			for _, number := range []string{"1.5 ", "-2e-3", "−4", ".5 ", "(2 ± 1) ", "1 .. 2 "} {
+				ran++
+				if text := number + symbol; !withUnit.MatchString(text) || !bare.MatchString(text) {
+					t.Errorf("%q does not pass", text)
+				}
+			}
+		}
+	}
+	for _, text := range []string{"1.5", "-3", "2 .. 3", "2 ± 0.1", "", "length"} {
+		if withUnit.MatchString(text) {
+			t.Errorf("%q passes as a quantity with a unit", text)
+		}
+	}
+	if ran < 500 {
+		t.Errorf("%d texts", ran)
+	}
 }

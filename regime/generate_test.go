@@ -289,7 +289,7 @@ func (d *drawer) byValues() {
 	rho, c := d.log(500, 2000), d.log(900, 2500)
 	ν := d.log(1e-7, 1e-2)
 	if gas {
-		rho, c, ν = d.log(0.05, 20), d.log(150, 1200), d.log(1e-7, 1e-3)
+		rho, c, ν = d.log(0.05, 20), d.log(150, 1200), d.log(1e-7, 10)
 	}
 	if d.chance(7) {
 		d.quantity("fluid.density", rho)

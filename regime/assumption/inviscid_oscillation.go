@@ -19,6 +19,7 @@ var InviscidOscillation = &Entry{
 
 var (
 	inviscidInertia = finding.Say("Without viscosity the wet frequency is off by {e:%}: the viscous layer makes the added mass {viscous_inertia} times the ideal one at S = {stokes}.")
+	inviscidFilm    = finding.Say("Without viscosity the film would escape: its spring, {fluid_stiffness} of the structure's, shifts the frequency by {e:%}.")
 	inviscidDamping = finding.Say("Viscosity makes {e:%} of the total damping: ζ_v = {damping_viscous}.")
 )
 
@@ -38,6 +39,10 @@ func estimateInviscidOscillation(x *finding.Context) {
 		x.Add(p)
 	} else {
 		waitOn(x, p, group.ViscousInertia, group.AddedMassRatio)
+	}
+	if x.Is(group.Film) && x.Has(group.FluidStiffness) {
+		p.Say, p.Estimate = inviscidFilm, x.Get(group.FluidStiffness)/2
+		x.Add(p)
 	}
 	if x.Has(group.DampingViscous) {
 		addShare(x, finding.Part{Measure: finding.Response, Basis: finding.Canonical, Factor: x.Factors.Viscous,

@@ -22,6 +22,7 @@ var LaminarFlow = &Entry{
 
 var (
 	wakeTurbulent  = finding.Say("At Re = {reynolds} the wake lies {e} times the middle of its transition from 190 to 300.")
+	layerTurbulent = finding.Say("At Re = {reynolds} the boundary layer lies {e} times the middle of its transition from 3e5 to 3e6.")
 	plateTurbulent = finding.Say("At Re = {length_reynolds} the boundary layer lies {e} times the middle of its transition from 3e5 to 3e6.")
 )
 
@@ -36,8 +37,11 @@ func estimateLaminar(x *finding.Context) {
 	}
 	b := x.Set.Band
 	p := finding.Part{Measure: finding.Scale, Basis: finding.Threshold, Factor: math.Sqrt(b.High / b.Low), Say: wakeTurbulent, Source: cite.Williamson1996}
-	if b.Length == group.LengthReynolds {
+	switch {
+	case b.Length == group.LengthReynolds:
 		p.Say, p.Source = plateTurbulent, cite.Schlichting1979
+	case b.Low > 1e4:
+		p.Say, p.Source = layerTurbulent, cite.Schlichting1979
 	}
 	x.AddOrWait(p, b.Length, func(re float64) float64 { return re / math.Sqrt(b.Low*b.High) })
 }

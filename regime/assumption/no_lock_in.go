@@ -14,15 +14,15 @@ var NoLockIn = &Entry{
 	ID:        "no-lock-in",
 	Title:     "No lock-in of vortex shedding",
 	LeavesOut: "the feedback by which a vibrating body holds the shedding at its own frequency",
-	Estimated: "across the flow: the lesser of the position of St U/(f_w D) in the unstable band of the linear wake oscillator and (A/D)/0.02 of the published amplitudes, at the worst speed of operation and for the worst mode; along the flow, in liquids: the lesser of the position of U/(f_w D) in 1 … 4.5 and 1.8/Sc",
+	Estimated: "across the flow: the lesser of the position of St U/(f_w D) in the unstable band of the linear wake oscillator, extended to the end of measured lock-in, and (A/D)/0.02 of the published amplitudes, at the worst speed of operation and for the worst mode; along the flow, in liquids: the lesser of the position of U/(f_w D) in 1 … 4.5 and 1.8/Sc",
 	Measures:  []finding.Measure{finding.Stability},
-	Sources:   []*cite.Source{cite.DeLangre2006, cite.SkopGriffin1975, cite.GovardhanWilliamson2006, cite.DNVC205},
+	Sources:   []*cite.Source{cite.DeLangre2006, cite.GovardhanWilliamson2000, cite.SkopGriffin1975, cite.GovardhanWilliamson2006, cite.DNVC205},
 	Hazard:    "Vortex-induced vibration can fatigue a structure within hours: the code in force for it, and its fatigue check, decide.",
 	Estimate:  estimateLockIn,
 }
 
 var (
-	lockInBand      = finding.Say("Shedding meets a mode: St U/(f_w D) comes to {lock_in_position} in operation, the band of lock-in runs from {wake_band_low} to {wake_band_high}; locked in, the amplitude reaches {vortex_amplitude} D.")
+	lockInBand      = finding.Say("Shedding meets a mode: St U/(f_w D) comes to {lock_in_position} in operation, the band of lock-in runs from {wake_band_low} to {lock_in_end}; locked in, the amplitude reaches {vortex_amplitude} D.")
 	lockInBandOpen  = finding.Say("Shedding meets a mode: St U/(f_w D) comes to {lock_in_position} in operation, the band of lock-in begins at {wake_band_low} and has no upper end; locked in, the amplitude reaches {vortex_amplitude} D.")
 	lockInOff       = finding.Say("Shedding keeps off the modes: St U/(f_w D) comes to {lock_in_position} at the most unfavourable speed of operation, the band of lock-in begins at {wake_band_low}.")
 	lockInAmplitude = finding.Say("Locked in, the amplitude would be {vortex_amplitude} D, against 0.02 D below which lock-in is a forced vibration.")
@@ -73,8 +73,8 @@ func lockInAcross(x *finding.Context) {
 	}
 	position := x.Get(group.LockInPosition)
 	lo, hi := x.Get(group.WakeBandLow), math.Inf(1)
-	if x.Has(group.WakeBandHigh) {
-		hi = x.Get(group.WakeBandHigh)
+	if x.Has(group.LockInEnd) {
+		hi = x.Get(group.LockInEnd)
 	} else {
 		band.Say = lockInBandOpen
 	}

@@ -1,6 +1,8 @@
 package assumption
 
 import (
+	"math"
+
 	"regimed/regime/cite"
 	"regimed/regime/finding"
 	"regimed/regime/group"
@@ -11,14 +13,16 @@ var PseudoStatic = &Entry{
 	ID:        "pseudo-static",
 	Title:     "Pseudo-static flow",
 	LeavesOut: "flow damping and flow inertia: only flow-induced stiffness is kept",
-	Estimated: "frequency: flow damping force over flow stiffness force at the wet frequency",
-	Measures:  []finding.Measure{finding.Frequency},
+	Estimated: "load: √(1 + r²) − 1 of the flow's reaction, r the flow damping force over the flow stiffness force at the frequency of the motion; the two are a quarter period apart",
+	Measures:  []finding.Measure{finding.Load, finding.Stability},
 	Sources:   []*cite.Source{cite.BisplinghoffAshleyHalfman1955},
 	Estimate:  estimatePseudoStatic,
 }
 
 var (
-	pseudoStatic   = finding.Say("The damping force of the flow is {e:%} of its stiffness force at the wet frequency.")
+	pseudoStatic   = finding.Say("The flow's damping force, {pseudo_static} of its stiffness force, changes its reaction by {e:%}.")
+	dynamicOnset   = finding.Say("A dynamic instability stands at {e} of its onset: the flow's damping and inertia decide it.")
+	noReaction     = finding.Say("The kind has no flow stiffness to keep.")
 	onlyFlowDamped = finding.Say("The flow damps this shape and has no stiffness on it: a model that keeps the stiffness alone keeps nothing.")
 )
 
@@ -30,10 +34,13 @@ func estimatePseudoStatic(x *finding.Context) {
 		x.NotApplicable(noFlow)
 	case x.Is(group.StaticOnly):
 		x.NotApplicable(noFrequency)
+	case x.State(group.PseudoStatic) == group.Absent && !x.Has(group.FlowStiffness):
+		x.NotApplicable(noReaction)
 	case x.Has(group.FlowStiffness) && x.Get(group.FlowStiffness) == 0:
-		x.Add(finding.Part{Measure: finding.Frequency, Basis: finding.Definition, Factor: 1.5, Estimate: 1, Say: onlyFlowDamped, Source: cite.BisplinghoffAshleyHalfman1955})
+		x.Add(finding.Part{Measure: finding.Load, Basis: finding.Definition, Factor: 1.5, Estimate: 1, Say: onlyFlowDamped, Source: cite.BisplinghoffAshleyHalfman1955})
 	default:
-		x.AddOrWait(finding.Part{Measure: finding.Frequency, Basis: finding.Canonical, Factor: 1.5, Say: pseudoStatic, Source: cite.BisplinghoffAshleyHalfman1955},
-			group.PseudoStatic, identity)
+		addNearOnset(x, dynamicOnset, NoFlutter, NoGalloping)
+		x.AddOrWait(finding.Part{Measure: finding.Load, Basis: finding.Canonical, Factor: 1.5, Say: pseudoStatic, Source: cite.BisplinghoffAshleyHalfman1955},
+			group.PseudoStatic, func(r float64) float64 { return math.Hypot(1, r) - 1 })
 	}
 }

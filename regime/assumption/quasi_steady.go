@@ -21,6 +21,7 @@ var QuasiSteady = &Entry{
 }
 
 var (
+	memoryPanel = finding.Say("At k = {reduced_frequency} the inertia and damping of the flow over the bent panel change the load by {e:%}.")
 	memoryLift  = finding.Say("At k = {reduced_frequency} the flow's memory changes the load by {e:%}: |C(k) − 1|.")
 	memoryWake  = finding.Say("The mode beats {e} times as fast as the wake sheds; memory fades below a third.")
 	memoryNone  = finding.Say("The flow along a slender body has no memory: its load follows the motion of the section.")
@@ -40,6 +41,8 @@ func estimateQuasiSteady(x *finding.Context) {
 		x.NotApplicable(memoryNone)
 	case x.Is(group.Bluff) && !x.Is(group.Cross):
 		x.NotApplicable(memoryAlong)
+	case x.Is(group.PanelLike):
+		panelMemory(x)
 	case !x.Is(group.Bluff):
 		x.AddOrWait(finding.Part{Measure: finding.Load, Basis: finding.Canonical, Factor: 1.5, Say: memoryLift, Source: cite.Theodorsen1935},
 			group.ReducedFrequency, memory)
@@ -49,6 +52,21 @@ func estimateQuasiSteady(x *finding.Context) {
 		x.AddOrWait(finding.Part{Measure: finding.Scale, Basis: finding.Threshold, Limit: 1.0 / 3, Factor: 1.5, Say: memoryWake, Source: cite.Blevins1990},
 			group.SheddingRatio, func(r float64) float64 { return 1 / r })
 	}
+}
+
+// panelMemory is what a panel's flow remembers: below Mach 1 the potential flow
+// over a wave of wave number k answers to (1 + κ)², κ = ω/(Uk), of which the
+// quasi-steady flow keeps the 1; above it, piston theory is quasi-steady to
+// the order κ/(M² − 1).
+func panelMemory(x *finding.Context) {
+	p := finding.Part{Measure: finding.Load, Basis: finding.Canonical, Factor: 1.5, Say: memoryPanel, Source: cite.Dowell1975}
+	mach := x.Get(group.Mach)
+	x.AddOrWait(p, group.ReducedFrequency, func(k float64) float64 {
+		if mach > 1 {
+			return k / math.Max(mach*mach-1, 1e-6)
+		}
+		return 2*k + k*k
+	})
 }
 
 // memory is |C(k) − 1| of Theodorsen's function; ½ is its limit beyond the

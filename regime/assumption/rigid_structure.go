@@ -20,10 +20,11 @@ var RigidStructure = &Entry{
 }
 
 var (
-	shapeChange = finding.Say("The flow's stiffness, {flow_stiffness} of the structure's, changes the load by {e:%}.")
-	placeTilt   = finding.Say("The tilt of the deformed structure changes the load by {e:%}.")
-	placeGap    = finding.Say("The deformation takes {e:%} of the gap that shapes the flow.")
-	placeLength = finding.Say("The deformation is {e:%} of the length over which the flow varies.")
+	shapeChange  = finding.Say("The flow's stiffness, {flow_stiffness} of the structure's, changes the load by {e:%}.")
+	placeTilt    = finding.Say("The tilt of the deformed structure changes the load by {e:%}.")
+	placeGap     = finding.Say("The deformation takes {e:%} of the gap that shapes the flow.")
+	placeUniform = finding.Say("A body that moves as a whole in a wide uniform stream meets the same flow everywhere.")
+	placeLength  = finding.Say("The deformation is {e:%} of the length over which the flow varies.")
 )
 
 func estimateRigidStructure(x *finding.Context) {
@@ -66,6 +67,9 @@ func addChangeOfPlace(x *finding.Context) {
 	case x.Is(group.Flexible) && x.Any(group.Cross|group.Axial) && !x.Is(group.PanelLike):
 		p.Say = placeTilt
 		addDeformation(x, p, group.DisplacementSpan, group.StaticDeflectionSpan, func(v float64) float64 { return v * v })
+	case x.Is(group.Bluff) && !x.Any(group.Confined|group.NearSurface):
+		p.Say, p.Basis = placeUniform, finding.Definition
+		x.Add(p)
 	default:
 		p.Say = placeLength
 		addDeformation(x, p, group.Displacement, group.StaticDeflection, identity)

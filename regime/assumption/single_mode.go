@@ -47,6 +47,9 @@ func estimateSingleMode(x *finding.Context) {
 		waitOn(x, p, group.AddedMassRatio)
 	default:
 		mu, share := x.Get(group.AddedMassRatio), orZero(x, group.ModeCoupling)
+		if share == 1 { // the bound of Cauchy and Schwarz, well above what fluids couple
+			p.Factor = 3
+		}
 		x.AddOrWait(p, group.NextMode, func(ratio float64) float64 {
 			return share * mu / (1 + mu) / math.Max(math.Abs(ratio*ratio-1), 1e-9)
 		})

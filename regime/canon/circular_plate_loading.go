@@ -33,6 +33,11 @@ func (d *discShape) order(j int) int { return d.diameters + 2*j + 1 }
 
 // discModeShape is the mode shape for a root λ: J_s(λr) + C I_s(λr)/I_s(λ).
 func discModeShape(edge CircularEdge, λ float64, diameters int, nu float64) discShape {
+	return discModeShapeIn(14+int(0.75*λ), edge, λ, diameters, nu)
+}
+
+// discModeShapeIn expands the shape in so many polynomials.
+func discModeShapeIn(terms int, edge CircularEdge, λ float64, diameters int, nu float64) discShape {
 	j := math.Jn(diameters, λ)
 	c := -j // no deflection at the edge
 	if edge == CircularFree {
@@ -42,7 +47,7 @@ func discModeShape(edge CircularEdge, λ float64, diameters int, nu float64) dis
 	c /= discIScaled(diameters, λ)
 	shape := newDiscShape(func(r float64) float64 {
 		return math.Jn(diameters, λ*r) + c*math.Exp(λ*(r-1))*discIScaled(diameters, λ*r)
-	}, diameters, 14+int(0.75*λ))
+	}, diameters, terms)
 	if edge != CircularFree {
 		shape.slope = -λ * (math.Jn(diameters+1, λ) + j*discIRatio(diameters, λ))
 	}
@@ -106,6 +111,26 @@ func CircularPlateAddedMass(edge CircularEdge, circles, diameters int, nu float6
 	}), nil
 }
 
+// discUncertainty is the relative change of the coefficient with half as many
+// polynomials again.
+func discUncertainty(edge CircularEdge, circles, diameters int, nu, coefficient float64) float64 {
+	λ := discRoot(edge, circles, diameters, nu)
+	more := discModeShapeIn(21+int(1.125*λ), edge, λ, diameters, nu)
+	return math.Abs(more.addedMass()/coefficient-1) + 1e-15
+}
+
+// baffledDiscUncertainty is the change of either value, in units of ρa and ρc,
+// with more polynomials, a longer integral and finer panels.
+func baffledDiscUncertainty(edge CircularEdge, circles, diameters int, nu, k0 float64, a baffledAnswer) float64 {
+	λ := discRoot(edge, circles, diameters, nu)
+	more := discModeShapeIn(21+int(1.125*λ), edge, λ, diameters, nu)
+	if k0 < noSound {
+		return math.Abs(more.addedMass()-a.mass) + 1e-15
+	}
+	mass := math.Abs(more.baffledMass(k0, λ, 1.5) - a.mass)
+	return max(mass, math.Abs(more.baffledResistance(k0, 1.5)-a.resistance)) + 1e-15
+}
+
 // noSound is the k₀a below which the loading is that of an incompressible fluid
 // to all digits, and the resistance is nothing.
 const noSound = 1e-50
@@ -149,14 +174,14 @@ func BaffledCircularPlateMode(edge CircularEdge, circles, diameters int, nu, k0a
 		if k0a < noSound {
 			return baffledAnswer{mass: shape.addedMass()}
 		}
-		return baffledAnswer{mass: shape.baffledMass(k0a, λ), resistance: shape.baffledResistance(k0a)}
+		return baffledAnswer{mass: shape.baffledMass(k0a, λ, 1), resistance: shape.baffledResistance(k0a, 1)}
 	})
 	return a.mass, a.resistance, nil
 }
 
 // baffledResistance is k₀²∫H(k₀ sin θ)² sin θ dθ/∫W² r dr.
-func (d *discShape) baffledResistance(k0 float64) float64 {
-	rule := legendreRuleFor(12 + int(1.2*k0))
+func (d *discShape) baffledResistance(k0, refine float64) float64 {
+	rule := legendreRuleFor(int(refine * (12 + 1.2*k0)))
 	work := d.newHankelWork()
 	sum := 0.0
 	for i, u := range rule.x {
@@ -168,11 +193,12 @@ func (d *discShape) baffledResistance(k0 float64) float64 {
 }
 
 // baffledMass integrates in panels of length 2 to k = k₀ + 2λ + 60 and adds the mean
-// of the tail, H² ≈ W′²/(πk⁵) or, with a clamped edge, W″²/(πk⁷).
-func (d *discShape) baffledMass(k0, λ float64) float64 {
-	end := k0 + 2*λ + 60
+// of the tail, H² ≈ W′²/(πk⁵) or, with a clamped edge, W″²/(πk⁷). refine above 1
+// goes further, in more panels.
+func (d *discShape) baffledMass(k0, λ, refine float64) float64 {
+	end := k0 + 2*λ + 60*refine
 	top := math.Sqrt(end*end - k0*k0)
-	panels := int(math.Ceil(top / 2))
+	panels := int(math.Ceil(top / 2 * refine))
 	width := top / float64(panels)
 	rule := legendreRuleFor(12)
 	work := d.newHankelWork()

@@ -59,12 +59,16 @@ var prandtlGlauertEntry = &Entry{
 	Name:     "PrandtlGlauert",
 	Problem:  "excess of the compressible over the incompressible load of a thin body",
 	Equation: "1/√(1 − M²) − 1 for M ≤ 0.9, its value there above",
-	Args:     []Arg{{Name: "mach", Symbol: "M", Doc: "Mach number", Min: 0, Max: 100}},
+	Args:     []Arg{{Name: "mach", Symbol: "M", Doc: "Mach number", Min: 0, Max: 100, From: 0, To: 1.2}},
 	Outputs:  []Output{{ID: "excess", Symbol: "e", Doc: "relative excess"}},
 	Accuracy: 1e-14,
 	Factor:   1.3,
 	Sources:  []*cite.Source{cite.Glauert1928},
 	Note:     "linear subsonic flow: from M 0.7 or so shocks come first",
+	Limits: []Limit{
+		{"slow: ½M²", "excess", Low, 1e-12, func(a []float64) float64 { return a[0] * a[0] / 2 }},
+		{"held at M 0.9: 1.294", "excess", High, 1e-12, constant(1/math.Sqrt(0.19) - 1)},
+	},
 	Eval: func(a []float64) ([]float64, error) {
 		v, err := PrandtlGlauert(a[0])
 		return []float64{v}, err
@@ -83,6 +87,9 @@ var isentropicDensityChangeEntry = &Entry{
 	Accuracy: 1e-12,
 	Factor:   1,
 	Sources:  []*cite.Source{cite.Liepmann1957},
+	Limits: []Limit{
+		{"slow: ½M²", "change", Low, 1e-12, func(a []float64) float64 { return a[0] * a[0] / 2 }},
+	},
 	Eval: func(a []float64) ([]float64, error) {
 		v, err := IsentropicDensityChange(a[0], a[1])
 		return []float64{v}, err

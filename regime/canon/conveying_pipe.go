@@ -128,7 +128,10 @@ func (p conveyingPipe) determinantByRoots(u float64, omega complex128) complex12
 // cancel. Between pieces the first solution is taken out of the second, which
 // leaves the determinant as it is and keeps the two apart.
 func (p conveyingPipe) determinantBySeries(u float64, omega complex128) complex128 {
-	pieces := 1 + int(math.Sqrt(cmplx.Abs(omega)+u*u+math.Abs(p.gamma))/5)
+	return p.determinantInPieces(u, omega, 1+int(math.Sqrt(cmplx.Abs(omega)+u*u+math.Abs(p.gamma))/5))
+}
+
+func (p conveyingPipe) determinantInPieces(u float64, omega complex128, pieces int) complex128 {
 	h := 1 / float64(pieces)
 	first, second := pipeLine{2: 1}, pipeLine{3: 1}
 	for i := range pieces {
@@ -191,12 +194,29 @@ func (p conveyingPipe) carry(from pipeLine, u float64, omega complex128, xi, h f
 	return pipeLine{sum[0], sum[1] / h1, sum[2] / h2, sum[3] / h3}
 }
 
+// pipeUncertainty is the relative change of u that another evaluation of the
+// determinant makes: by series where the roots gave it, and by series in more
+// pieces where series did. Buckling speeds are closed forms, or halved to rounding.
+func pipeUncertainty(p conveyingPipe, support PipeSupport, u, omega float64) float64 {
+	if support != PipeCantilever {
+		return 1e-14
+	}
+	pieces := 2 + int(math.Sqrt(math.Abs(omega)+u*u+math.Abs(p.gamma))/3)
+	step, _, ok := newtonOnPlane(func(u, omega float64) complex128 {
+		return p.determinantInPieces(u, complex(omega, 0), pieces)
+	}, u, omega)
+	if !ok {
+		return 1
+	}
+	return math.Abs(step)/u + 1e-14
+}
+
 var conveyingPipeEntry = &Entry{
 	Name:     "ConveyingPipe",
 	Problem:  "flow speed at which a pipe that conveys fluid flutters or buckles",
 	Equation: "α η̇'''' + η'''' + (u² − γ(1 − ξ))η″ + 2√β u η̇′ + γη′ + η̈ = 0; lowest u at which the boundary determinant vanishes for a real ω; pinned π, clamped 2π, clamped–pinned 4.4934 at γ = 0",
 	Args: []Arg{
-		{Name: "beta", Symbol: "β", Doc: "fluid over total mass per length", Min: pipeBetaMin, Max: pipeBetaMax},
+		{Name: "beta", Symbol: "β", Doc: "fluid over total mass per length", Min: pipeBetaMin, Max: pipeBetaMax, From: 0.01, To: pipeBetaMax, Typical: 0.2},
 		{Name: "gamma", Symbol: "γ", Doc: "(M + m)gL³/(EI), positive for a hanging pipe", Min: pipeGammaMin, Max: pipeGammaMax, Optional: true},
 		{Name: "alpha", Symbol: "α", Doc: "dimensionless Kelvin–Voigt damping of the wall", Min: 0, Max: pipeAlphaMax, Optional: true},
 		{Name: "support", Symbol: "support", Doc: "supports, upstream end first", Choices: pipeSupportNames(), Optional: true},
@@ -204,14 +224,19 @@ var conveyingPipeEntry = &Entry{
 	Outputs: []Output{
 		{ID: "u", Symbol: "u_c", Doc: "critical UL√(ρA/EI)"},
 		{ID: "omega", Symbol: "ω", Doc: "frequency at onset times L²√((M + m)/EI); 0 for buckling"},
+		{ID: UncertaintyID, Symbol: "δ", Doc: "relative change of u_c that the determinant, evaluated otherwise, makes"},
 	},
 	Accuracy: 1e-8,
 	Factor:   1.15,
 	Sources:  []*cite.Source{cite.GregoryPaidoussis1966, cite.Paidoussis1998},
 	Note:     "plug flow, no external damping; the cantilever's curve folds near β 0.3, 0.7 and 0.9, and the lowest branch is given",
 	Eval: func(a []float64) ([]float64, error) {
-		u, omega, err := ConveyingPipe(a[0], a[1], a[2], PipeSupports()[int(a[3])])
-		return []float64{u, omega}, err
+		support := PipeSupports()[int(a[3])]
+		u, omega, err := ConveyingPipe(a[0], a[1], a[2], support)
+		if err != nil {
+			return nil, err
+		}
+		return []float64{u, omega, pipeUncertainty(conveyingPipe{a[0], a[1], a[2]}, support, u, omega)}, nil
 	},
 }
 

@@ -253,18 +253,10 @@ func (s *pipeSearch) refine(stable, unstable pipeState) (u, omega float64, err e
 // solve refines u and ω with Newton's method on the real and imaginary part of
 // the determinant.
 func (p conveyingPipe) solve(u, omega float64) (float64, float64, bool) {
+	f := func(u, omega float64) complex128 { return p.determinant(u, complex(omega, 0)) }
 	for range 25 {
-		const h = 1e-6
-		d := p.determinant(u, complex(omega, 0))
-		du := (p.determinant(u+h, complex(omega, 0)) - d) / h
-		dω := (p.determinant(u, complex(omega+h, 0)) - d) / h
-		j := real(du)*imag(dω) - imag(du)*real(dω)
-		if j == 0 || math.IsNaN(j) {
-			return 0, 0, false
-		}
-		stepU := (real(d)*imag(dω) - imag(d)*real(dω)) / j
-		stepω := (real(du)*imag(d) - imag(du)*real(d)) / j
-		if math.Abs(stepU) > 2 || math.Abs(stepω) > 20 {
+		stepU, stepω, ok := newtonOnPlane(f, u, omega)
+		if !ok || math.Abs(stepU) > 2 || math.Abs(stepω) > 20 {
 			return 0, 0, false
 		}
 		u -= stepU
@@ -274,4 +266,20 @@ func (p conveyingPipe) solve(u, omega float64) (float64, float64, bool) {
 		}
 	}
 	return 0, 0, false
+}
+
+// newtonOnPlane is one Newton step on the real and imaginary part of f, whose
+// derivatives are differences.
+func newtonOnPlane(f func(x, y float64) complex128, x, y float64) (stepX, stepY float64, ok bool) {
+	const h = 1e-6
+	d := f(x, y)
+	dx := (f(x+h, y) - d) / h
+	dy := (f(x, y+h) - d) / h
+	j := real(dx)*imag(dy) - imag(dx)*real(dy)
+	if j == 0 || math.IsNaN(j) {
+		return 0, 0, false
+	}
+	stepX = (real(d)*imag(dy) - imag(d)*real(dy)) / j
+	stepY = (real(dx)*imag(d) - imag(dx)*real(d)) / j
+	return stepX, stepY, true
 }

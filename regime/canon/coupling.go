@@ -111,7 +111,7 @@ var explicitCouplingEntry = &Entry{
 	Problem:  "added mass instability of a partitioned scheme with one exchange a step, incompressible fluid",
 	Equation: "unstable at any time step for μ_max > constant of the scheme: 1 (explicit structure), 2 (trapezoidal), √5 − 1 (trapezoidal, interface extrapolated)",
 	Args: []Arg{
-		{Name: "mu", Symbol: "μ_max", Doc: "added mass over structural mass of the wetted mode of longest wavelength", Min: 0, Max: 1e12},
+		{Name: "mu", Symbol: "μ_max", Doc: "added mass over structural mass of the wetted mode of longest wavelength", Min: 0, Max: 1e12, From: 0, To: 5},
 		{Name: "scheme", Symbol: "scheme", Doc: "structural integration and interface prediction", Choices: couplingSchemeNames(), Optional: true},
 	},
 	Outputs: []Output{
@@ -141,8 +141,8 @@ var compressibleCouplingEntry = &Entry{
 	Problem:  "stability of a partitioned scheme with one exchange a step, compressible fluid",
 	Equation: "ρcΔt/m″ < 1",
 	Args: []Arg{
-		{Name: "mass_ratio", Symbol: "ρℓ/m″", Doc: "fluid over structural mass per area, ℓ any length", Min: 1e-12, Max: 1e12},
-		{Name: "courant", Symbol: "cΔt/ℓ", Doc: "acoustic Courant number on the same length", Min: 0, Max: 1e12},
+		{Name: "mass_ratio", Symbol: "ρℓ/m″", Doc: "fluid over structural mass per area, ℓ any length", Min: 1e-12, Max: 1e12, From: 0.01, To: 100, Typical: 1},
+		{Name: "courant", Symbol: "cΔt/ℓ", Doc: "acoustic Courant number on the same length", Min: 0, Max: 1e12, Typical: 0.5},
 	},
 	Outputs: []Output{
 		{ID: "ratio", Symbol: "ρcΔt/m″", Doc: "stable below 1"},
@@ -160,10 +160,11 @@ var compressibleCouplingEntry = &Entry{
 var fixedPointRelaxationEntry = &Entry{
 	Name:     "FixedPointRelaxation",
 	Problem:  "relaxation of the iterations of an implicit partitioned scheme",
+	Over:     "mu_max",
 	Equation: "ω_r < 2/(1 + μ_max); optimum 2/(2 + μ_min + μ_max)",
 	Args: []Arg{
-		{Name: "mu_min", Symbol: "μ_min", Doc: "smallest added mass ratio of the wetted modes", Min: 0, Max: 1e12},
-		{Name: "mu_max", Symbol: "μ_max", Doc: "largest", Min: 0, Max: 1e12},
+		{Name: "mu_min", Symbol: "μ_min", Doc: "smallest added mass ratio of the wetted modes", Min: 0, Max: 1e12, Typical: 0.1},
+		{Name: "mu_max", Symbol: "μ_max", Doc: "largest added mass ratio of the wetted modes", Min: 0, Max: 1e12, From: 0.1, To: 100},
 	},
 	Outputs: []Output{
 		{ID: "limit", Symbol: "ω_lim", Doc: "relaxation factor above which the iterations diverge"},
@@ -173,6 +174,10 @@ var fixedPointRelaxationEntry = &Entry{
 	Accuracy: 1e-12,
 	Factor:   1.5,
 	Sources:  []*cite.Source{cite.Causin2005},
+	Limits: []Limit{
+		{"heavy fluid: 2/μ_max", "limit", High, 1e-11, func(a []float64) float64 { return 2 / a[1] }},
+		{"heavy fluid: 1", "rate", High, 1e-11, constant(1)},
+	},
 	Eval: func(a []float64) ([]float64, error) {
 		limit, optimum, rate, err := FixedPointRelaxation(a[0], a[1])
 		return []float64{limit, optimum, rate}, err

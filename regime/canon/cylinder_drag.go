@@ -81,7 +81,7 @@ var cylinderDragEntry = &Entry{
 	Name:     "CylinderDrag",
 	Problem:  "mean drag coefficient of a smooth circular cylinder across a uniform stream",
 	Equation: "Re ≤ 0.5: (8π/(Re t))(1 − 0.87/t²), t = ln(8/Re) − 0.0772; above: curve through computed and measured values",
-	Args:     []Arg{{Name: "reynolds", Symbol: "Re", Doc: "Reynolds number on the diameter", Min: 1e-4, Max: 1e8}},
+	Args:     []Arg{{Name: "reynolds", Symbol: "Re", Doc: "Reynolds number on the diameter", Min: 1e-4, Max: 1e8, From: 0.01, To: 1e8}},
 	Outputs: []Output{
 		{ID: "drag", Symbol: "C_D", Doc: "mean drag coefficient on the diameter"},
 		{ID: "low", Symbol: "C_D,min", Doc: "lower end of its band"},
@@ -91,6 +91,11 @@ var cylinderDragEntry = &Entry{
 	Factor:   1.15,
 	Sources:  []*cite.Source{cite.Kaplun1957, cite.DennisChang1970, cite.Wieselsberger1921, cite.Roshko1961},
 	Note:     "smooth, fixed, long, smooth stream; roughness and turbulence bring the drag crisis forward; a vibrating cylinder drags more",
+	Limits: []Limit{
+		{"creeping flow, Lamb: 8π/(Re(ln(8/Re) − 0.0772))", "drag", Low, 0.01, func(a []float64) float64 {
+			return 8 * math.Pi / (a[0] * (math.Log(8/a[0]) + 0.5 - eulerGamma))
+		}},
+	},
 	Eval: func(a []float64) ([]float64, error) {
 		cd, lo, hi, err := CylinderDrag(a[0])
 		return []float64{cd, lo, hi}, err

@@ -42,7 +42,7 @@ var cylinderDiffractionEntry = &Entry{
 	Name:     "CylinderDiffraction",
 	Problem:  "wave force on a vertical circular cylinder that diffracts the wave",
 	Equation: "C_M = 4/(π(ka)²|H₁′(ka)|), lag = arctan(J₁′/Y₁′)",
-	Args:     []Arg{{Name: "ka", Symbol: "ka", Doc: "wave number times radius", Min: 0, Max: diffractionMax}},
+	Args:     []Arg{{Name: "ka", Symbol: "ka", Doc: "wave number times radius", Min: 0, Max: diffractionMax, From: 0.01, To: 10}},
 	Outputs: []Output{
 		{ID: "inertia", Symbol: "C_M", Doc: "inertia coefficient"},
 		{ID: "lag", Symbol: "α", Doc: "lag of the force behind the undisturbed acceleration, rad"},
@@ -51,6 +51,11 @@ var cylinderDiffractionEntry = &Entry{
 	Factor:   1.15,
 	Sources:  []*cite.Source{cite.MacCamyFuchs1954},
 	Note:     "linear waves, no drag",
+	Limits: []Limit{
+		{"long waves: 2", "inertia", Low, 1e-12, constant(2)},
+		{"short waves: 4/√(2π) (ka)^−3/2", "inertia", High, 1e-4, func(a []float64) float64 { return 4 / math.Sqrt(2*math.Pi) * math.Pow(a[0], -1.5) }},
+		{"short waves: 3π/4 − ka", "lag", High, 1e-6, func(a []float64) float64 { return 0.75*math.Pi - a[0] }},
+	},
 	Eval: func(a []float64) ([]float64, error) {
 		inertia, lag, err := CylinderDiffraction(a[0])
 		return []float64{inertia, lag}, err

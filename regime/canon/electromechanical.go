@@ -46,7 +46,7 @@ var electromechanicalEntry = &Entry{
 	Name:     "Electromechanical",
 	Problem:  "frequency shift and shunt damping of a mode with a piezoelectric part",
 	Equation: "ω_open/ω_short = √(1 + K²); ζ = K²/(4√(1 + K²)) at ωRC = 1/√(1 + K²)",
-	Args:     []Arg{{Name: "coupling", Symbol: "K²", Doc: "generalised coupling k²/(1 − k²)", Min: 0, Max: 99}},
+	Args:     []Arg{{Name: "coupling", Symbol: "K²", Doc: "generalised coupling k²/(1 − k²)", Min: 0, Max: 99, From: 0.01, To: 10}},
 	Outputs: []Output{
 		{ID: "frequency_ratio", Symbol: "ω_open/ω_short", Doc: "open- over short-circuit frequency"},
 		{ID: "damping", Symbol: "ζ", Doc: "damping ratio that a matched resistor adds"},
@@ -55,6 +55,9 @@ var electromechanicalEntry = &Entry{
 	Accuracy: 1e-12,
 	Factor:   1.15,
 	Sources:  []*cite.Source{cite.HagoodVonFlotow1991},
+	Limits: []Limit{
+		{"weak coupling: K²/4", "damping", Low, 1e-12, func(a []float64) float64 { return a[0] / 4 }},
+	},
 	Eval: func(a []float64) ([]float64, error) {
 		ratio, damping, load, err := Electromechanical(a[0])
 		return []float64{ratio, damping, load}, err
@@ -70,6 +73,9 @@ var generalisedCouplingEntry = &Entry{
 	Accuracy: 1e-12,
 	Factor:   1,
 	Sources:  []*cite.Source{cite.HagoodVonFlotow1991},
+	Limits: []Limit{
+		{"weak coupling: k²", "coupling", Low, 1e-12, func(a []float64) float64 { return a[0] }},
+	},
 	Eval: func(a []float64) ([]float64, error) {
 		v, err := GeneralisedCoupling(a[0])
 		return []float64{v}, err

@@ -42,7 +42,7 @@ var flagCriticalEntry = &Entry{
 	Problem:  "flutter of a plate clamped at its leading edge in axial flow",
 	Equation: "U² = Bk²(1/m + 1/m_a), m_a = (2ρ/k)/(1 + 8/(πkH)), kL = 4.694; u = UL√(m/B)",
 	Args: []Arg{
-		{Name: "mass_ratio", Symbol: "ρL/m", Doc: "fluid density times length over mass per area", Min: 1e-6, Max: 1e6},
+		{Name: "mass_ratio", Symbol: "ρL/m", Doc: "fluid density times length over mass per area", Min: 1e-6, Max: 1e6, From: 0.01, To: 100},
 		{Name: "aspect", Symbol: "H/L", Doc: "width over length", Min: 1e-3, Max: 1e9, Optional: true, Default: 1e9},
 	},
 	Outputs:  []Output{{ID: "u", Symbol: "u_c", Doc: "critical UL√(m/B)"}},
@@ -50,6 +50,13 @@ var flagCriticalEntry = &Entry{
 	Factor:   2,
 	Sources:  []*cite.Source{cite.Eloy2007, cite.Eloy2008},
 	Note:     "measured thresholds lie up to twice above two-dimensional theory, with hysteresis; below H/L 0.3 the slender ConveyingPipe is sharper",
+	Limits: []Limit{
+		{"light fluid: kL √(m/m_a)", "u", Low, 1e-5, func(a []float64) float64 {
+			const k = flagWaveNumber
+			return k * math.Sqrt(k/(2*a[0])*(1+8/(math.Pi*k*a[1])))
+		}},
+		{"heavy fluid: kL = 4.694", "u", High, 1e-5, constant(flagWaveNumber)},
+	},
 	Eval: func(a []float64) ([]float64, error) {
 		v, err := FlagCritical(a[0], a[1])
 		return []float64{v}, err

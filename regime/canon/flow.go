@@ -6,6 +6,7 @@ var flowEntries = []*Entry{
 	waveNumberEntry,
 	rectangularTankEntry,
 	uprightTankEntry,
+	sloshingMassFractionEntry,
 	cylinderDiffractionEntry,
 	stokesSecondOrderEntry,
 

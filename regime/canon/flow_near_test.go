@@ -640,7 +640,7 @@ func TestFlowOptionalArgumentsComeLast(t *testing.T) {
 		}
 		entries++
 	}
-	if entries != 35 {
+	if entries != 36 {
 		t.Errorf("%d entries", entries)
 	}
 }

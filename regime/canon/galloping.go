@@ -74,10 +74,10 @@ var gallopingSpeedEntry = &Entry{
 	Problem:  "onset speed of transverse galloping of a section",
 	Equation: "v/(nb) = 2 Sc/a_G; a_G ≤ 0: none",
 	Args: []Arg{
-		{Name: "scruton", Symbol: "Sc", Doc: "4πmζ/(ρb²)", Min: 0, Max: 1e9},
-		{Name: "a_g", Symbol: "a_G", Doc: "−(dC_L/dα + C_D) on the width across the wind", Min: -1e3, Max: 1e3},
+		{Name: "scruton", Symbol: "Sc", Doc: "4πmζ/(ρb²)", Min: 0, Max: 1e9, From: 0.1, To: 1000, Typical: 10},
+		{Name: "a_g", Symbol: "a_G", Doc: "−(dC_L/dα + C_D) on the width across the wind", Min: -1e3, Max: 1e3, From: -1, To: 10, Typical: 1.2},
 	},
-	Outputs:  []Output{{ID: "speed", Symbol: "v/(nb)", Doc: "critical reduced speed; infinite where a_G ≤ 0"}},
+	Outputs:  []Output{{ID: "speed", Symbol: "v/(nb)", Doc: "critical reduced speed; infinite where a_G ≤ 0", Unbounded: true}},
 	Accuracy: 1e-12,
 	Factor:   1.5,
 	Sources:  []*cite.Source{cite.DenHartog1956, cite.EN1991Galloping},
@@ -93,8 +93,8 @@ var gallopingFactorEntry = &Entry{
 	Problem:  "factor of galloping instability of a section",
 	Equation: "a_G by table of d/b; 10 where none is known",
 	Args: []Arg{
-		{Name: "shape", Symbol: "shape", Doc: "section", Choices: sectionShapeNames()},
-		{Name: "depth_ratio", Symbol: "d/b", Doc: "dimension along the wind over that across it", Min: 1e-3, Max: 1e3, Optional: true, Default: 1},
+		{Name: "shape", Symbol: "shape", Doc: "section", Choices: sectionShapeNames(), Typical: 2},
+		{Name: "depth_ratio", Symbol: "d/b", Doc: "dimension along the wind over that across it", Min: 1e-3, Max: 1e3, Optional: true, Default: 1, From: 0.2, To: 3},
 	},
 	Outputs: []Output{
 		{ID: "a_g", Symbol: "a_G", Doc: "factor of galloping instability"},

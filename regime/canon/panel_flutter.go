@@ -11,7 +11,10 @@ import (
 	"regimed/regime/cite"
 )
 
-const panelMaxModes = 20
+const (
+	panelMaxModes = 20
+	panelSpace    = panelMaxModes + 1 // one more bounds the error of the most
+)
 
 // PanelFlutter is the critical pressure of a panel simply supported on all
 // edges in supersonic flow, by first-order piston theory without damping.
@@ -34,24 +37,70 @@ func PanelFlutter(modes int, aspect float64) (lambda, omega float64, err error) 
 	if err := inRange("PanelFlutter", "aspect", aspect, 0, 3); err != nil {
 		return 0, 0, err
 	}
-	p := panel{modes: modes, aspect: aspect}
-	// Two modes meet before more do, so that the march begins below them.
-	step := 0.1 * p.twoModes()
-	lo := 9 * step
-	hi := lo
-	pair := -1
-	for range 40 {
-		hi += step
-		if pair = p.complexPair(hi); pair >= 0 {
-			break
+	return panelMeeting(modes, aspect)
+}
+
+// panelFew is the number of modes that finds the meeting within a percent or two,
+// for as long as the panel is not far longer than wide, in a fraction of the time.
+const panelFew = 8
+
+// panelMeeting is PanelFlutter without the check, to panelSpace modes.
+func panelMeeting(modes int, aspect float64) (lambda, omega float64, err error) {
+	p := panel{modes: min(modes, panelFew), aspect: aspect}
+	lo, hi, pair := p.march()
+	if pair >= 0 {
+		lambda, omega = p.meeting(pair, lo, hi)
+	}
+	if modes > panelFew && pair >= 0 {
+		p.modes = modes
+		lo, hi = 0.97*lambda, 1.03*lambda
+		if pair = p.complexPair(hi); pair < 0 || p.complexPair(lo) >= 0 {
+			lo, hi, pair = p.march()
 		}
-		lo = hi
+		if pair >= 0 {
+			lambda, omega = p.meeting(pair, lo, hi)
+		}
 	}
 	if pair < 0 {
 		return 0, 0, &RangeError{Function: "PanelFlutter", Arg: "modes", Value: float64(modes), Reason: "no two modes meet"}
 	}
-	lambda, square := p.meeting(pair, lo, hi)
-	return lambda, math.Sqrt(square), nil
+	return lambda, math.Sqrt(omega), nil
+}
+
+// march takes λ up to the first complex pair. Two modes meet before more do, so
+// that it begins below them.
+func (p *panel) march() (lo, hi float64, pair int) {
+	step := 0.1 * p.twoModes()
+	lo = 9 * step
+	hi = lo
+	for range 40 {
+		hi += step
+		if pair = p.complexPair(hi); pair >= 0 {
+			return lo, hi, pair
+		}
+		lo = hi
+	}
+	return lo, hi, -1
+}
+
+// panelUncertainty is the relative change of λ that more modes may make. With an
+// even number of modes λ lies below the converged value and with an odd one
+// above, so that the next number bounds the error; fewer than six modes are too
+// few for that on a long panel, and are compared with eight and nine.
+func panelUncertainty(modes int, aspect, lambda float64) (float64, error) {
+	others := []int{modes + 1}
+	if modes < 6 {
+		others = []int{8, 9}
+	}
+	worst := 0.0
+	for _, n := range others {
+		other, _, err := panelMeeting(n, aspect)
+		if err != nil {
+			return 0, err
+		}
+		worst = max(worst, math.Abs(other/lambda-1))
+	}
+	return worst, nil
 }
 
 // meeting finds where (Ω₁² − Ω₂²)² of the pair, which is analytic in λ,
@@ -80,10 +129,10 @@ func (p *panel) meeting(pair int, lo, hi float64) (lambda, square float64) {
 type panel struct {
 	modes  int
 	aspect float64
-	a      [panelMaxModes * panelMaxModes]float64
-	wr, wi [panelMaxModes]float64
-	square [panelMaxModes]complex128
-	work   [8 * panelMaxModes]float64
+	a      [panelSpace * panelSpace]float64
+	wr, wi [panelSpace]float64
+	square [panelSpace]complex128
+	work   [8 * panelSpace]float64
 }
 
 // bending is the term of mode n = 1, 2, … on the diagonal.
@@ -155,23 +204,28 @@ var panelFlutterEntry = &Entry{
 	Problem:  "flutter of a simply supported panel in supersonic flow",
 	Equation: "w'''' − 2(πr)²w″ + (πr)⁴w + λw′ = Ω²w on sine modes; λ = 2qa³/(D√(M² − 1)) where two Ω² first meet",
 	Args: []Arg{
-		{Name: "modes", Symbol: "N", Doc: "number of sine modes, a whole number", Min: 2, Max: panelMaxModes, Optional: true, Default: 10},
+		{Name: "modes", Symbol: "N", Doc: "number of sine modes, a whole number", Min: 2, Max: panelMaxModes, Whole: true, Optional: true, Default: 10},
 		{Name: "aspect", Symbol: "a/b", Doc: "length along the flow over width, 0 for infinite width", Min: 0, Max: 3, Optional: true},
 	},
 	Outputs: []Output{
 		{ID: "lambda", Symbol: "λ_c", Doc: "critical 2qa³/(D√(M² − 1))"},
 		{ID: "omega", Symbol: "Ω", Doc: "frequency at onset times a²√(ρ_s h/D)"},
+		{ID: UncertaintyID, Symbol: "δ", Doc: "relative change of λ_c that more modes may make"},
 	},
 	Accuracy: 1e-9,
 	Factor:   1.5,
 	Sources:  []*cite.Source{cite.Dowell1975},
-	Note:     "M above √2 or so; no tension, no damping, no cavity, no boundary layer",
+	Note:     "the accuracy is that for the number of modes; M above √2 or so; no tension, no damping, no cavity, no boundary layer",
+	Limits: []Limit{
+		{"infinite width, converged: 343.356", "lambda", Low, 1e-4, constant(343.356)},
+	},
 	Eval: func(a []float64) ([]float64, error) {
-		if a[0] != math.Trunc(a[0]) {
-			return nil, &RangeError{Function: "PanelFlutter", Arg: "modes", Value: a[0], Reason: "want a whole number"}
-		}
 		lambda, omega, err := PanelFlutter(int(a[0]), a[1])
-		return []float64{lambda, omega}, err
+		if err != nil {
+			return nil, err
+		}
+		uncertainty, err := panelUncertainty(int(a[0]), a[1], lambda)
+		return []float64{lambda, omega, uncertainty}, err
 	},
 }
 
@@ -187,6 +241,11 @@ var panelDivergenceEntry = &Entry{
 	Accuracy: 0.2,
 	Factor:   1.5,
 	Sources:  []*cite.Source{cite.Liepmann1957, cite.Dowell1975},
+	Limits: []Limit{
+		{"incompressible: π³/2 on one side, half of it on two", "pressure", Low, 1e-12, func(a []float64) float64 {
+			return math.Pow(math.Pi, 3) / 2 / (a[0] + 1)
+		}},
+	},
 	Eval: func(a []float64) ([]float64, error) {
 		v, err := PanelDivergence(int(a[0])+1, a[1])
 		return []float64{v}, err

@@ -113,7 +113,7 @@ func TestCircularAddedMassOfKnownShapes(t *testing.T) {
 	piston := newDiscShape(func(float64) float64 { return 1 }, 0, 3)
 	structureClose(t, "piston", piston.addedMass(), 8/(3*math.Pi), 1e-13)
 	for _, x := range []float64{0.1, 1, 7, 40} {
-		structureClose(t, "piston's resistance", piston.baffledResistance(x), 1-math.J1(2*x)/x, 1e-12)
+		structureClose(t, "piston's resistance", piston.baffledResistance(x, 1), 1-math.J1(2*x)/x, 1e-12)
 	}
 	exact := structureMust(t)(CircularPlateAddedMass(CircularClamped, 0, 0, 0.3))
 	structureClose(t, "exact shape against Lamb's", exact/lamb.addedMass(), 1, 0.03)
@@ -446,8 +446,8 @@ func BenchmarkCircularPlate(b *testing.B) {
 	b.Run("baffled", func(b *testing.B) {
 		shape := discModeShape(CircularClamped, 3.19622, 0, 0.3)
 		for b.Loop() {
-			shape.baffledMass(5, 3.19622)
-			shape.baffledResistance(5)
+			shape.baffledMass(5, 3.19622, 1)
+			shape.baffledResistance(5, 1)
 		}
 	})
 }

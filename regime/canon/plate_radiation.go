@@ -148,8 +148,17 @@ func solveBaffledPlate(k baffledKey) baffledAnswer {
 	b := 1 / k.aspect
 	return baffledAnswer{
 		mass:       baffledMass(&x, &y, b, k.k0, 1),
-		resistance: baffledResistance(&x, &y, b, k.k0),
+		resistance: baffledResistance(&x, &y, b, k.k0, 1),
 	}
+}
+
+// baffledUncertainty is the change of either value, in units of ρa and ρc, that
+// half as many nodes again make.
+func baffledUncertainty(k baffledKey, a baffledAnswer) float64 {
+	x, y := newBeamFunction(k.x, k.m), newBeamFunction(k.y, k.n)
+	b := 1 / k.aspect
+	mass := math.Abs(baffledMass(&x, &y, b, k.k0, 1.5) - a.mass)
+	return max(mass, math.Abs(baffledResistance(&x, &y, b, k.k0, 1.5)-a.resistance)) + 1e-15
 }
 
 // baffledMass is μ̂ for sides 1 and b: over the triangle below the diagonal with
@@ -190,12 +199,13 @@ func correlationTriangle(p, q *beamCorrelation, p0, q0, k0, refine float64) floa
 
 // baffledResistance is r̂ for sides 1 and b: the power spectrum over the
 // hemisphere of directions, of which a quarter suffices.
-func baffledResistance(x, y *beamFunction, b, k0 float64) float64 {
+func baffledResistance(x, y *beamFunction, b, k0, refine float64) float64 {
 	if k0 == 0 {
 		return 0
 	}
-	rθ := legendreRuleFor(int(10 + 0.8*k0*math.Hypot(1, b)))
-	rφ := legendreRuleFor(int(10 + 0.8*k0*math.Hypot(1, b)))
+	nodes := int(refine * (10 + 0.8*k0*math.Hypot(1, b)))
+	rθ := legendreRuleFor(nodes)
+	rφ := legendreRuleFor(nodes)
 	sum := 0.0
 	for i, u := range rθ.x {
 		sinθ := math.Sin(0.5 * math.Pi * u)

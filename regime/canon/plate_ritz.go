@@ -384,18 +384,21 @@ func isNearSingular(err error) bool {
 	return ok && !math.IsInf(float64(c), 0)
 }
 
+// heldSupport is the support of a beam between two edges, neither of them free.
+func heldSupport(left, right byte) BeamSupport {
+	switch {
+	case left != right:
+		return ClampedPinned
+	case left == 'C':
+		return ClampedClamped
+	}
+	return PinnedPinned
+}
+
 // heldBasis resolves so many half waves and projects the beam mode n on them.
 func heldBasis(left, right byte, n, waves int) *plateBasis {
-	support, mirrored := ClampedPinned, false
-	switch {
-	case left == right && left == 'C':
-		support = ClampedClamped
-	case left == right:
-		support = PinnedPinned
-	case left == 'S':
-		mirrored = true
-	}
-	if mirrored {
+	support := heldSupport(left, right)
+	if support == ClampedPinned && left == 'S' {
 		left, right = right, left // a reflection changes no energy
 	}
 	beam := newBeamFunction(support, n)

@@ -64,11 +64,11 @@ var sectionDivergenceEntry = &Entry{
 	Problem:  "static divergence of a section in pitch",
 	Equation: "q_D c²/K_α = √(1 − M²)/(e C_Lα), e = x_ea − ¼ in chords; e ≤ 0: none",
 	Args: []Arg{
-		{Name: "e", Symbol: "e", Doc: "elastic axis behind the quarter chord, in chords", Min: -1, Max: 1},
+		{Name: "e", Symbol: "e", Doc: "elastic axis behind the quarter chord, in chords", Min: -1, Max: 1, From: -0.2, To: 1, Typical: 0.25},
 		{Name: "lift_slope", Symbol: "C_Lα", Doc: "incompressible lift slope per radian", Min: 1e-3, Max: 20, Optional: true, Default: 2 * math.Pi},
 		{Name: "mach", Symbol: "M", Doc: "Mach number", Min: 0, Max: sectionDivergenceMach, Optional: true},
 	},
-	Outputs:  []Output{{ID: "pressure", Symbol: "q_D c²/K_α", Doc: "critical dynamic pressure; infinite where e ≤ 0"}},
+	Outputs:  []Output{{ID: "pressure", Symbol: "q_D c²/K_α", Doc: "critical dynamic pressure; infinite where e ≤ 0", Unbounded: true}},
 	Accuracy: 1e-12,
 	Factor:   1.3,
 	Sources:  []*cite.Source{cite.BisplinghoffAshleyHalfman1955, cite.Glauert1928},

@@ -210,11 +210,11 @@ func (s flutterSection) solve(k, y float64) (float64, float64, bool) {
 }
 
 var sectionFlutterArgs = []Arg{
-	{Name: "mu", Symbol: "μ", Doc: "m/(πρb²), b the semichord", Min: 0.05, Max: 1e4},
-	{Name: "a", Symbol: "a", Doc: "elastic axis behind mid-chord, in semichords", Min: -1, Max: 1},
-	{Name: "x_alpha", Symbol: "x_α", Doc: "centre of gravity behind the elastic axis, in semichords", Min: -1, Max: 1},
-	{Name: "r2", Symbol: "r²", Doc: "moment of inertia about the elastic axis over mb²", Min: 0.01, Max: 4},
-	{Name: "frequency_ratio", Symbol: "ω_h/ω_α", Doc: "uncoupled plunge over pitch frequency", Min: 0.01, Max: 10},
+	{Name: "mu", Symbol: "μ", Doc: "m/(πρb²), b the semichord", Min: 0.05, Max: 1e4, From: 1, To: 200, Typical: 20},
+	{Name: "a", Symbol: "a", Doc: "elastic axis behind mid-chord, in semichords", Min: -1, Max: 1, Typical: -0.2},
+	{Name: "x_alpha", Symbol: "x_α", Doc: "centre of gravity behind the elastic axis, in semichords", Min: -1, Max: 1, Typical: 0.1},
+	{Name: "r2", Symbol: "r²", Doc: "moment of inertia about the elastic axis over mb²", Min: 0.01, Max: 4, Typical: 0.24},
+	{Name: "frequency_ratio", Symbol: "ω_h/ω_α", Doc: "uncoupled plunge over pitch frequency", Min: 0.01, Max: 10, Typical: 0.4},
 	{Name: "damping_plunge", Symbol: "ζ_h", Doc: "damping ratio of plunge", Min: 0, Max: 0.3, Optional: true},
 	{Name: "damping_pitch", Symbol: "ζ_α", Doc: "damping ratio of pitch", Min: 0, Max: 0.3, Optional: true},
 }
@@ -225,7 +225,7 @@ var sectionFlutterEntry = &Entry{
 	Equation: "[μ(1 − σ²y² − 2iζ_hσy) + L_h][μr²(1 − y² − 2iζ_αy) + M_α] = [μx_α + L_α][μx_α + M_h], y = ω_α/ω, loads by C(k)",
 	Args:     sectionFlutterArgs,
 	Outputs: []Output{
-		{ID: "speed", Symbol: "U/(bω_α)", Doc: "flutter speed; infinite where there is none"},
+		{ID: "speed", Symbol: "U/(bω_α)", Doc: "flutter speed; infinite where there is none", Unbounded: true},
 		{ID: "frequency", Symbol: "ω/ω_α", Doc: "frequency at onset; 0 where there is none"},
 		{ID: "k", Symbol: "k", Doc: "reduced frequency ωb/U at onset; 0 where there is none"},
 	},

@@ -73,11 +73,11 @@ func TestStillFluidAgainstHighPrecision(t *testing.T) {
 			t.Errorf("%s%v: %v", row.name, row.args, err)
 			continue
 		}
-		if len(got) != len(row.want) {
+		if len(got) < len(row.want) {
 			t.Errorf("%s%v returns %d values, want %d", row.name, row.args, len(got), len(row.want))
 			continue
 		}
-		for i := range got {
+		for i := range row.want {
 			e := stillFluidError(got[i], row.want[i])
 			worst[row.name] = math.Max(worst[row.name], e)
 			if e > tolerance {

@@ -175,7 +175,7 @@ var strouhalEntry = &Entry{
 	Problem:  "vortex shedding frequency of a section in cross flow",
 	Equation: "circle: 0.212(1 − 21.2/Re) for Re 47 to 150; 0.212(1 − 12.7/Re) for 300 to 2000; 0.20 for 1e4 to 2e5; linear in log Re between; 0.18 to 0.48 for 2e5 to 3.5e6; 0.22 to 0.28 beyond",
 	Args: []Arg{
-		{Name: "reynolds", Symbol: "Re", Doc: "Reynolds number on the width across the flow", Min: 0, Max: strouhalMaxReynolds},
+		{Name: "reynolds", Symbol: "Re", Doc: "Reynolds number on the width across the flow", Min: 0, Max: strouhalMaxReynolds, From: 30, To: 1e8, Typical: 1e4},
 		{Name: "shape", Symbol: "shape", Doc: "section", Choices: sectionShapeNames(), Optional: true},
 		{Name: "depth_ratio", Symbol: "d/b", Doc: "dimension along the flow over that across it", Min: 0.1, Max: 20, Optional: true, Default: 1},
 	},
@@ -188,6 +188,14 @@ var strouhalEntry = &Entry{
 	Factor:   1.15,
 	Sources:  []*cite.Source{cite.Roshko1954, cite.Williamson1996, cite.Bearman1969, cite.Okajima1982, cite.Blevins1990, cite.EN1991Strouhal},
 	Note:     "smooth surface and stream; within the drag crisis only the band means anything; open sections carry the envelope of all open sections; an iced cable is taken as a circle",
+	Limits: []Limit{
+		{"circle beyond the drag crisis: 0.25", "strouhal", High, 1e-12, func(a []float64) float64 {
+			if SectionShapes()[int(a[1])] != SectionCircle {
+				return math.NaN()
+			}
+			return strouhalBeyond
+		}},
+	},
 	Eval: func(a []float64) ([]float64, error) {
 		st, lo, hi, err := Strouhal(a[0], SectionShapes()[int(a[1])], a[2])
 		return []float64{st, lo, hi}, err

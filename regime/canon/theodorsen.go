@@ -76,7 +76,7 @@ var theodorsenEntry = &Entry{
 	Problem:  "lift deficiency of a thin aerofoil that oscillates in incompressible flow",
 	Equation: "C(k) = H₁⁽²⁾/(H₁⁽²⁾ + iH₀⁽²⁾)",
 	Args: []Arg{
-		{Name: "k", Symbol: "k", Doc: "reduced frequency ωb/U, b the semichord", Min: 0, Max: theodorsenMax},
+		{Name: "k", Symbol: "k", Doc: "reduced frequency ωb/U, b the semichord", Min: 0, Max: theodorsenMax, From: 1e-3, To: 100},
 	},
 	Outputs: []Output{
 		{ID: "re", Symbol: "F", Doc: "real part of C"},
@@ -85,6 +85,17 @@ var theodorsenEntry = &Entry{
 	Accuracy: 1e-12,
 	Factor:   1.3,
 	Sources:  []*cite.Source{cite.Theodorsen1935},
+	Limits: []Limit{
+		{"slow: 1 − πk/2", "re", Low, 1e-12, func(a []float64) float64 { return 1 - math.Pi/2*a[0] }},
+		{"slow: k(ln(k/2) + 0.5772)", "im", Low, 1e-12, func(a []float64) float64 {
+			if a[0] == 0 {
+				return 0
+			}
+			return a[0] * (math.Log(a[0]/2) + eulerGamma)
+		}},
+		{"fast: ½", "re", High, 1e-12, constant(0.5)},
+		{"fast: −1/(8k)", "im", High, 1e-12, func(a []float64) float64 { return -1 / (8 * a[0]) }},
+	},
 	Eval: func(a []float64) ([]float64, error) {
 		re, im, err := Theodorsen(a[0])
 		return []float64{re, im}, err

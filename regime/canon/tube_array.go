@@ -52,7 +52,7 @@ var tubeArrayCriticalEntry = &Entry{
 	Problem:  "fluidelastic instability of a tube array in cross flow",
 	Equation: "V_p/(fD) = K √(2πζm/(ρD²))",
 	Args: []Arg{
-		{Name: "mass_damping", Symbol: "2πζm/(ρD²)", Doc: "mass-damping, all in the fluid", Min: 1e-6, Max: 1e6},
+		{Name: "mass_damping", Symbol: "2πζm/(ρD²)", Doc: "mass-damping, all in the fluid", Min: 1e-6, Max: 1e6, From: 0.01, To: 1000},
 		{Name: "k", Symbol: "K", Doc: "constant of the criterion", Min: 0.1, Max: 20, Optional: true, Default: 3},
 	},
 	Outputs:  []Output{{ID: "speed", Symbol: "V_p/(fD)", Doc: "critical reduced pitch velocity"}},

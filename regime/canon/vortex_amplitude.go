@@ -75,8 +75,8 @@ var vortexAmplitudeEntry = &Entry{
 	Problem:  "peak amplitude of vortex-induced vibration over diameter, by two fits",
 	Equation: "1.29 γ/(1 + 0.43·2π³St²α)^3.35; (1 − 1.12 α + 0.30 α²) log₁₀(0.41 Re^0.36)",
 	Args: []Arg{
-		{Name: "mass_damping", Symbol: "α", Doc: "(m* + C_A)ζ_w, structural damping on the wet mass", Min: 0, Max: 1},
-		{Name: "reynolds", Symbol: "Re", Doc: "Reynolds number on the diameter", Min: 500, Max: 33000},
+		{Name: "mass_damping", Symbol: "α", Doc: "(m* + C_A)ζ_w, structural damping on the wet mass", Min: 0, Max: 1, Typical: 0.1},
+		{Name: "reynolds", Symbol: "Re", Doc: "Reynolds number on the diameter", Min: 500, Max: 33000, Typical: 1e4},
 		{Name: "strouhal", Symbol: "St", Doc: "Strouhal number", Min: 0.05, Max: 0.5, Optional: true, Default: 0.2},
 		{Name: "mode_factor", Symbol: "γ", Doc: "1 spring-mounted, 1.155 taut string and pinned beam, 1.305 cantilever", Min: 1, Max: 2, Optional: true, Default: 1},
 	},
@@ -89,6 +89,10 @@ var vortexAmplitudeEntry = &Entry{
 	Factor:   2,
 	Sources:  []*cite.Source{cite.SkopGriffin1975, cite.GovardhanWilliamson2006},
 	Note:     "fits of measurements; outside α 0 to 1 or Re 500 to 33 000 only SkopGriffin remains",
+	Limits: []Limit{
+		{"no damping: 1.29γ", "skop_griffin", Low, 1e-12, func(a []float64) float64 { return 1.29 * a[3] }},
+		{"no damping: log₁₀(0.41 Re^0.36)", "govardhan_williamson", Low, 1e-12, func(a []float64) float64 { return math.Log10(0.41 * math.Pow(a[1], 0.36)) }},
+	},
 	Eval: func(a []float64) ([]float64, error) {
 		sg, err := SkopGriffin(SkopGriffinParameter(a[2], a[0]), a[3])
 		if err != nil {
@@ -104,13 +108,17 @@ var skopGriffinEntry = &Entry{
 	Problem:  "peak amplitude of vortex-induced vibration over diameter",
 	Equation: "A/D = 1.29 γ/(1 + 0.43 S_G)^3.35",
 	Args: []Arg{
-		{Name: "skop_griffin", Symbol: "S_G", Doc: "2π³St²α", Min: 0, Max: 1e6},
+		{Name: "skop_griffin", Symbol: "S_G", Doc: "2π³St²α", Min: 0, Max: 1e6, From: 0.01, To: 100},
 		{Name: "mode_factor", Symbol: "γ", Doc: "1 spring-mounted, 1.155 taut string and pinned beam, 1.305 cantilever", Min: 1, Max: 2, Optional: true, Default: 1},
 	},
 	Outputs:  []Output{{ID: "amplitude", Symbol: "A/D", Doc: "peak amplitude over diameter"}},
 	Accuracy: 0.3,
 	Factor:   2,
 	Sources:  []*cite.Source{cite.SkopGriffin1975},
+	Limits: []Limit{
+		{"no damping: 1.29γ", "amplitude", Low, 1e-12, func(a []float64) float64 { return 1.29 * a[1] }},
+		{"much damping: 1.29γ/(0.43 S_G)^3.35", "amplitude", High, 1e-4, func(a []float64) float64 { return 1.29 * a[1] / math.Pow(0.43*a[0], 3.35) }},
+	},
 	Eval: func(a []float64) ([]float64, error) {
 		v, err := SkopGriffin(a[0], a[1])
 		return []float64{v}, err
@@ -122,13 +130,16 @@ var govardhanWilliamsonEntry = &Entry{
 	Problem:  "peak amplitude of vortex-induced vibration of a spring-mounted cylinder, with the effect of Reynolds number",
 	Equation: "A/D = (1 − 1.12 α + 0.30 α²) log₁₀(0.41 Re^0.36), not below 0",
 	Args: []Arg{
-		{Name: "mass_damping", Symbol: "α", Doc: "(m* + C_A)ζ_w, structural damping on the wet mass", Min: 0, Max: 1},
-		{Name: "reynolds", Symbol: "Re", Doc: "Reynolds number on the diameter", Min: 500, Max: 33000},
+		{Name: "mass_damping", Symbol: "α", Doc: "(m* + C_A)ζ_w, structural damping on the wet mass", Min: 0, Max: 1, Typical: 0.1},
+		{Name: "reynolds", Symbol: "Re", Doc: "Reynolds number on the diameter", Min: 500, Max: 33000, Typical: 1e4},
 	},
 	Outputs:  []Output{{ID: "amplitude", Symbol: "A/D", Doc: "peak amplitude over diameter"}},
 	Accuracy: 0.1,
 	Factor:   2,
 	Sources:  []*cite.Source{cite.GovardhanWilliamson2006},
+	Limits: []Limit{
+		{"no damping: log₁₀(0.41 Re^0.36)", "amplitude", Low, 1e-12, func(a []float64) float64 { return math.Log10(0.41 * math.Pow(a[1], 0.36)) }},
+	},
 	Eval: func(a []float64) ([]float64, error) {
 		v, err := GovardhanWilliamson(a[0], a[1])
 		return []float64{v}, err

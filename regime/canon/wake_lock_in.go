@@ -65,16 +65,21 @@ var wakeLockInEntry = &Entry{
 	Problem:  "band of shedding over wet structural frequency in which structure and wake lock in",
 	Equation: "1/(1 + √(AM)) < St U/(f_w D) < 1/(1 − √(AM))",
 	Args: []Arg{
-		{Name: "am", Symbol: "AM", Doc: "A C_L0/(16π²St²μ′), μ′ = (m + m_a)/(ρD²)", Min: 0, Max: wakeLockInMax},
+		{Name: "am", Symbol: "AM", Doc: "A C_L0/(16π²St²μ′), μ′ = (m + m_a)/(ρD²)", Min: 0, Max: wakeLockInMax, From: 1e-3, To: 10},
 	},
 	Outputs: []Output{
 		{ID: "low", Symbol: "x_min", Doc: "lower end of the band"},
-		{ID: "high", Symbol: "x_max", Doc: "upper end of the band; infinite for AM ≥ 1"},
+		{ID: "high", Symbol: "x_max", Doc: "upper end of the band; infinite for AM ≥ 1", Unbounded: true},
 	},
 	Accuracy: 1e-12,
 	Factor:   1.15,
 	Sources:  []*cite.Source{cite.Facchinetti2004, cite.DeLangre2006},
 	Note:     "no damping in it: whether lock-in matters is decided by the amplitude beside it; for AM ≥ 1 no upper end",
+	Limits: []Limit{
+		{"heavy, resonance only: 1 − √(AM)", "low", Low, 1e-12, func(a []float64) float64 { return 1 - math.Sqrt(a[0]) }},
+		{"heavy, resonance only: 1 + √(AM)", "high", Low, 1e-12, func(a []float64) float64 { return 1 + math.Sqrt(a[0]) }},
+		{"light: 1/√(AM)", "low", High, 2e-3, func(a []float64) float64 { return 1 / math.Sqrt(a[0]) }},
+	},
 	Eval: func(a []float64) ([]float64, error) {
 		lo, hi, err := WakeLockIn(a[0])
 		return []float64{lo, hi}, err
@@ -86,8 +91,8 @@ var wakeLockInParameterEntry = &Entry{
 	Problem:  "coupling parameter of structure and wake oscillator",
 	Equation: "AM = A C_L0/(16π² St² μ′), A = 12, C_L0 = 0.3",
 	Args: []Arg{
-		{Name: "strouhal", Symbol: "St", Doc: "Strouhal number", Min: 1e-3, Max: 1},
-		{Name: "mass_number", Symbol: "μ′", Doc: "(m + m_a)/(ρD²), per length, added mass included", Min: 1e-3, Max: 1e12},
+		{Name: "strouhal", Symbol: "St", Doc: "Strouhal number", Min: 1e-3, Max: 1, From: 0.05, To: 0.5, Typical: 0.2},
+		{Name: "mass_number", Symbol: "μ′", Doc: "(m + m_a)/(ρD²), per length, added mass included", Min: 1e-3, Max: 1e12, From: 0.1, To: 1e3, Typical: 2},
 	},
 	Outputs:  []Output{{ID: "am", Symbol: "AM", Doc: "coupling parameter"}},
 	Accuracy: 1e-12,

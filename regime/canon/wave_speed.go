@@ -178,11 +178,11 @@ var waveSpeedEntry = &Entry{
 	Problem:  "speed of a pressure wave in the fluid in an elastic pipe (SI units)",
 	Equation: "a = √(K/ρ)/√(1 + c₁KD/(Ee))",
 	Args: []Arg{
-		{Name: "bulk_modulus", Symbol: "K", Doc: "bulk modulus of the fluid, Pa", Min: stiffnessMin, Max: stiffnessMax},
-		{Name: "density", Symbol: "ρ", Doc: "density of the fluid, kg/m³", Min: densityMin, Max: densityMax},
-		{Name: "diameter", Symbol: "D", Doc: "inside diameter, m", Min: lengthMin, Max: lengthMax},
-		{Name: "wall", Symbol: "e", Doc: "wall thickness, m", Min: lengthMin, Max: lengthMax},
-		{Name: "wall_modulus", Symbol: "E", Doc: "modulus of the wall, Pa", Min: stiffnessMin, Max: stiffnessMax},
+		{Name: "bulk_modulus", Symbol: "K", Doc: "bulk modulus of the fluid, Pa", Min: stiffnessMin, Max: stiffnessMax, From: 1e5, To: 1e13, Typical: 2.2e9},
+		{Name: "density", Symbol: "ρ", Doc: "density of the fluid, kg/m³", Min: densityMin, Max: densityMax, Typical: 1000},
+		{Name: "diameter", Symbol: "D", Doc: "inside diameter, m", Min: lengthMin, Max: lengthMax, Typical: 0.5},
+		{Name: "wall", Symbol: "e", Doc: "wall thickness, m", Min: lengthMin, Max: lengthMax, Typical: 0.01},
+		{Name: "wall_modulus", Symbol: "E", Doc: "modulus of the wall, Pa", Min: stiffnessMin, Max: stiffnessMax, Typical: 2e11},
 		{Name: "constraint", Symbol: "c₁", Doc: "factor of anchoring and wall (PipeConstraint)", Min: 0.1, Max: 100, Optional: true, Default: 1},
 	},
 	Outputs:  []Output{{ID: "speed", Symbol: "a", Doc: "wave speed, m/s"}},
@@ -190,6 +190,10 @@ var waveSpeedEntry = &Entry{
 	Factor:   1.15,
 	Sources:  []*cite.Source{cite.Korteweg1878, cite.WylieStreeter1993},
 	Note:     "long waves; free gas in the liquid lowers the speed much more than the wall does",
+	Limits: []Limit{
+		{"stiff wall, sound: √(K/ρ)", "speed", Low, 1e-6, func(a []float64) float64 { return math.Sqrt(a[0] / a[1]) }},
+		{"soft wall: √(Ee/(c₁ρD))", "speed", High, 1e-3, func(a []float64) float64 { return math.Sqrt(a[4] * a[3] / (a[5] * a[1] * a[2])) }},
+	},
 	Eval: func(a []float64) ([]float64, error) {
 		v, err := WaveSpeed(a[0], a[1], a[2], a[3], a[4], a[5])
 		return []float64{v}, err
@@ -202,13 +206,19 @@ var pipeConstraintEntry = &Entry{
 	Equation: "c₁ = 2(e/D)(1 + ν) + c D/(D + e); c = 1 − ν/2, 1 − ν², 1",
 	Args: []Arg{
 		{Name: "anchoring", Symbol: "anchoring", Doc: "upstream end only, throughout, or expansion joints throughout", Choices: pipeAnchoringNames()},
-		{Name: "slenderness", Symbol: "D/e", Doc: "inside diameter over wall", Min: 0.1, Max: 1e9},
+		{Name: "slenderness", Symbol: "D/e", Doc: "inside diameter over wall", Min: 0.1, Max: 1e9, From: 1, To: 1000},
 		{Name: "poisson", Symbol: "ν", Doc: "Poisson's ratio of the wall", Min: 0, Max: 0.5, Optional: true, Default: 0.3},
 	},
 	Outputs:  []Output{{ID: "constraint", Symbol: "c₁", Doc: "factor c₁ of WaveSpeed"}},
 	Accuracy: 0.01,
 	Factor:   1,
 	Sources:  []*cite.Source{cite.WylieStreeter1993},
+	Limits: []Limit{
+		{"thick wall: 2(1 + ν)e/D", "constraint", Low, 0.01, func(a []float64) float64 { return 2 * (1 + a[2]) / a[1] }},
+		{"thin wall: 1 − ν/2, 1 − ν², 1", "constraint", High, 1e-8, func(a []float64) float64 {
+			return [...]float64{1 - a[2]/2, 1 - a[2]*a[2], 1}[int(a[0])]
+		}},
+	},
 	Eval: func(a []float64) ([]float64, error) {
 		v, err := PipeConstraint(PipeAnchorings()[int(a[0])], a[2], a[1])
 		return []float64{v}, err
@@ -226,18 +236,23 @@ func pipeAnchoringNames() []string {
 var joukowskySurgeEntry = &Entry{
 	Name:     "JoukowskySurge",
 	Problem:  "pressure rise in a pipe when its flow is changed (SI units)",
+	Over:     "closure",
 	Equation: "Δp = ρaΔU·min(1, (2L/a)/t_c)",
 	Args: []Arg{
-		{Name: "density", Symbol: "ρ", Doc: "density of the fluid, kg/m³", Min: densityMin, Max: densityMax},
-		{Name: "wave_speed", Symbol: "a", Doc: "wave speed, m/s", Min: 1e-3, Max: 1e5},
-		{Name: "velocity_change", Symbol: "ΔU", Doc: "change of the flow speed, m/s", Min: 0, Max: 1e4},
-		{Name: "closure", Symbol: "t_c a/(2L)", Doc: "time of the change over the return time of the wave", Min: 0, Max: 1e12, Optional: true},
+		{Name: "density", Symbol: "ρ", Doc: "density of the fluid, kg/m³", Min: densityMin, Max: densityMax, Typical: 1000},
+		{Name: "wave_speed", Symbol: "a", Doc: "wave speed, m/s", Min: 1e-3, Max: 1e5, Typical: 1200},
+		{Name: "velocity_change", Symbol: "ΔU", Doc: "change of the flow speed, m/s", Min: 0, Max: 1e4, Typical: 1},
+		{Name: "closure", Symbol: "t_c a/(2L)", Doc: "time of the change over the return time of the wave", Min: 0, Max: 1e12, Optional: true, From: 0.1, To: 100},
 	},
 	Outputs:  []Output{{ID: "pressure", Symbol: "Δp", Doc: "pressure rise, Pa"}},
 	Accuracy: 1e-12,
 	Factor:   1.5,
 	Sources:  []*cite.Source{cite.Joukowsky1898, cite.WylieStreeter1993},
 	Note:     "no friction, no column separation",
+	Limits: []Limit{
+		{"sudden: ρaΔU", "pressure", Low, 1e-12, func(a []float64) float64 { return a[0] * a[1] * a[2] }},
+		{"slow: ρaΔU/(t_c a/(2L))", "pressure", High, 1e-12, func(a []float64) float64 { return a[0] * a[1] * a[2] / a[3] }},
+	},
 	Eval: func(a []float64) ([]float64, error) {
 		v, err := JoukowskySurge(a[0], a[1], a[2], a[3])
 		return []float64{v}, err
@@ -249,10 +264,10 @@ var moensKortewegEntry = &Entry{
 	Problem:  "speed of the pulse wave in a thin soft tube (SI units)",
 	Equation: "c = √(Eh/(2ρR))",
 	Args: []Arg{
-		{Name: "wall_modulus", Symbol: "E", Doc: "modulus of the wall, Pa", Min: stiffnessMin, Max: stiffnessMax},
-		{Name: "wall", Symbol: "h", Doc: "wall thickness, m", Min: lengthMin, Max: lengthMax},
-		{Name: "density", Symbol: "ρ", Doc: "density of the fluid, kg/m³", Min: densityMin, Max: densityMax},
-		{Name: "radius", Symbol: "R", Doc: "radius, m", Min: lengthMin, Max: lengthMax},
+		{Name: "wall_modulus", Symbol: "E", Doc: "modulus of the wall, Pa", Min: stiffnessMin, Max: stiffnessMax, From: 1e4, To: 1e8, Typical: 4e5},
+		{Name: "wall", Symbol: "h", Doc: "wall thickness, m", Min: lengthMin, Max: lengthMax, Typical: 1e-3},
+		{Name: "density", Symbol: "ρ", Doc: "density of the fluid, kg/m³", Min: densityMin, Max: densityMax, Typical: 1060},
+		{Name: "radius", Symbol: "R", Doc: "radius, m", Min: lengthMin, Max: lengthMax, Typical: 0.01},
 	},
 	Outputs:  []Output{{ID: "speed", Symbol: "c", Doc: "pulse wave speed, m/s"}},
 	Accuracy: 1e-12,
@@ -270,8 +285,8 @@ var pulseWaveEntry = &Entry{
 	Problem:  "phase speed and attenuation of the pulse wave in a viscous fluid",
 	Equation: "c/c₀ = 1/Re(1/√(1 − F₁₀)); decay per wavelength e^{2π Im k/Re k}, k ∝ 1/√(1 − F₁₀)",
 	Args: []Arg{
-		{Name: "re", Symbol: "Re(1 − F₁₀)", Doc: "real part of PulsatileTube", Min: 0, Max: 1},
-		{Name: "im", Symbol: "Im(1 − F₁₀)", Doc: "imaginary part of PulsatileTube", Min: 0, Max: 1},
+		{Name: "re", Symbol: "Re(1 − F₁₀)", Doc: "real part of PulsatileTube", Min: 0, Max: 1, From: 0, To: 1},
+		{Name: "im", Symbol: "Im(1 − F₁₀)", Doc: "imaginary part of PulsatileTube", Min: 0, Max: 1, Typical: 0.1},
 	},
 	Outputs: []Output{
 		{ID: "speed", Symbol: "c/c₀", Doc: "phase speed over that of MoensKorteweg"},

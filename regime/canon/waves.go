@@ -85,11 +85,15 @@ var waveNumberEntry = &Entry{
 	Name:     "WaveNumber",
 	Problem:  "wave number of gravity waves on water of finite depth",
 	Equation: "ω² = g k tanh(kd)",
-	Args:     []Arg{{Name: "kappa", Symbol: "ω²d/g", Doc: "frequency squared times depth over gravity", Min: 0, Max: waveNumberMax}},
+	Args:     []Arg{{Name: "kappa", Symbol: "ω²d/g", Doc: "frequency squared times depth over gravity", Min: 0, Max: waveNumberMax, From: 1e-3, To: 100}},
 	Outputs:  []Output{{ID: "kd", Symbol: "kd", Doc: "wave number times depth"}},
 	Accuracy: 1e-12,
 	Factor:   1,
 	Sources:  []*cite.Source{cite.Airy1845, cite.DeanDalrymple1991},
+	Limits: []Limit{
+		{"shallow: √κ", "kd", Low, 1e-12, func(a []float64) float64 { return math.Sqrt(a[0]) }},
+		{"deep: κ", "kd", High, 1e-12, func(a []float64) float64 { return a[0] }},
+	},
 	Eval: func(a []float64) ([]float64, error) {
 		v, err := WaveNumber(a[0])
 		return []float64{v}, err
@@ -100,9 +104,10 @@ var stokesSecondOrderEntry = &Entry{
 	Name:     "StokesSecondOrder",
 	Problem:  "second-order over first-order elevation of a regular wave, and its Ursell number",
 	Equation: "a₂/a = (ka/4)(3 − t²)/t³, t = tanh kd; Ur = 8π²ka/(kd)³",
+	Over:     "kd",
 	Args: []Arg{
-		{Name: "ka", Symbol: "ka", Doc: "wave number times amplitude", Min: 0, Max: 0.5},
-		{Name: "kd", Symbol: "kd", Doc: "wave number times depth", Min: 1e-3, Max: 1e6},
+		{Name: "ka", Symbol: "ka", Doc: "wave number times amplitude", Min: 0, Max: 0.5, Typical: 0.1},
+		{Name: "kd", Symbol: "kd", Doc: "wave number times depth", Min: 1e-3, Max: 1e6, From: 0.1, To: 10},
 	},
 	Outputs: []Output{
 		{ID: "ratio", Symbol: "a₂/a", Doc: "second harmonic over first"},
@@ -112,6 +117,10 @@ var stokesSecondOrderEntry = &Entry{
 	Factor:   1.15,
 	Sources:  []*cite.Source{cite.DeanDalrymple1991},
 	Note:     "a ratio near 1 says that the expansion fails, not how large the wave is",
+	Limits: []Limit{
+		{"shallow: 3ka/(4(kd)³)", "ratio", Low, 1e-5, func(a []float64) float64 { return 0.75 * a[0] / (a[1] * a[1] * a[1]) }},
+		{"deep: ka/2", "ratio", High, 1e-12, func(a []float64) float64 { return a[0] / 2 }},
+	},
 	Eval: func(a []float64) ([]float64, error) {
 		ratio, err := StokesSecondOrder(a[0], a[1])
 		if err != nil {

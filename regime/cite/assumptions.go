@@ -32,10 +32,12 @@ var (
 		Full: "Landau, L. D. & Lifshitz, E. M., Fluid Mechanics, 2nd ed., Pergamon, 1987", Locator: "§24, oscillatory motion in a viscous fluid"}
 	Newman1977 = &Source{ID: "newman-1977", Short: "Newman 1977", Memory: true,
 		Full: "Newman, J. N., Marine Hydrodynamics, MIT Press, 1977"}
+	GovardhanWilliamson2000 = &Source{ID: "govardhan-williamson-2000", Short: "Govardhan & Williamson 2000", Memory: true,
+		Full: "Govardhan, R. & Williamson, C. H. K., Modes of vortex formation and frequency response of a freely vibrating cylinder, Journal of Fluid Mechanics 420, 85-130, 2000", Locator: "end of the lower branch, critical mass ratio 0.54"}
 	ThisMethod = &Source{ID: "this-method", Short: "definition of this method",
 		Full: "A definition or a judgement of this tool, with its reason beside it; no outside source"}
 )
 
-var assumptions = []*Source{Blevins1990, GadElHak1999, SumerFredsoe2006, Schlichting1979, Batchelor1967, Paidoussis2016,
+var assumptions = []*Source{GovardhanWilliamson2000, Blevins1990, GadElHak1999, SumerFredsoe2006, Schlichting1979, Batchelor1967, Paidoussis2016,
 	PaidoussisPriceDeLangre2011, BisplinghoffAshleyHalfman1955, Dowell1975, Reynolds1886, Timoshenko1974, Brennen1995,
 	KinslerFrey2000, Landau1987, Newman1977, ThisMethod}

@@ -101,6 +101,32 @@ const (
 	CavityFrequency
 	OperatingLow
 	OperatingHigh
+	LockInEnd
+
+	WaveRatio
+	WaveRatioPitch
+	WaveRatioSurge
+	Diffraction
+	DiffractionInertia
+	WaveSteepness
+	WaveBreaking
+	Ursell
+	RelativeDepth
+	SecondOrder
+	DragInertia
+	WaveDeflection
+	DisplacementWave
+	CrestClearance
+	SlammingTime
+	ConvectiveMass
+	ImpulsiveMass
+	SloshingRatio
+	SloshingRatioThird
+	BulgingRatio
+	SloshingAmplitude
+	FillRatio
+	SloshingDamping
+	WaveMagnification
 
 	Count // number of groups
 )
@@ -142,7 +168,7 @@ var table = [Count]Def{
 	ReducedVelocity: {ID: "reduced_velocity", Symbol: "U_R", Title: "reduced velocity", Core: true,
 		Definition: "U/(f L), f the dry natural frequency, L the flow length"},
 	Reynolds: {ID: "reynolds", Symbol: "Re", Title: "Reynolds number", Core: true,
-		Definition: "U L/ν, L the flow length"},
+		Definition: "U L/ν, L the flow length; in waves U is the speed of the water with the current"},
 	Stokes: {ID: "stokes", Symbol: "S", Title: "Stokes number", Core: true,
 		Definition: "ω V²/ν, V the viscous length (radius, semi-width or gap), ω of the motion if forced, else of the wet mode"},
 	Compressibility: {ID: "compressibility", Symbol: "He", Title: "Helmholtz number", Core: true,
@@ -223,7 +249,7 @@ var table = [Count]Def{
 	StrainRatio: {ID: "strain_ratio", Symbol: "ε/ε_lin", Title: "strain ratio",
 		Definition: "largest bending strain / strain up to which the material is linear"},
 	KeuleganCarpenter: {ID: "keulegan_carpenter", Symbol: "KC", Title: "Keulegan–Carpenter number",
-		Definition: "2π ξ/D"},
+		Definition: "2π ξ/D of a motion in still fluid; u T/D in waves, u the speed of the water at the surface or at the body"},
 	DragDamping: {ID: "drag_damping", Symbol: "ζ_d", Title: "equivalent damping of quadratic drag",
 		Definition: "(2/3π) C_D (ρD²/m_w)(ξ/D)"},
 	MotionSpeedRatio: {ID: "motion_speed_ratio", Symbol: "ω ξ/U", Title: "speed of the motion over speed of the flow",
@@ -331,4 +357,61 @@ var table = [Count]Def{
 		Definition: "lowest speed in service / speed of the flow"},
 	OperatingHigh: {ID: "operating_high", Symbol: "U_hi/U", Title: "highest speed of operation",
 		Definition: "highest speed in service / speed of the flow"},
+	LockInEnd: {ID: "lock_in_end", Symbol: "x_end", Title: "end of measured lock-in",
+		Definition: "St U/(f_w D) at the end of the lower branch, St 9.25 √((m* + C_A)/(m* − 0.54)), at least the upper edge of the wake band"},
+
+	WaveRatio: {ID: "wave_frequency_ratio", Symbol: "f_wave/f_w", Title: "wave frequency ratio",
+		Definition: "frequency of the waves / wet natural frequency"},
+	WaveRatioPitch: {ID: "wave_frequency_ratio_pitch", Symbol: "f_wave/f_pitch", Title: "wave frequency over pitch frequency",
+		Definition: "frequency of the waves / natural frequency of pitch"},
+	WaveRatioSurge: {ID: "wave_frequency_ratio_surge", Symbol: "f_wave/f_surge", Title: "wave frequency over surge frequency",
+		Definition: "frequency of the waves / natural frequency of surge on the mooring"},
+	Diffraction: {ID: "diffraction", Symbol: "D/λ", Title: "diffraction parameter",
+		Definition: "length of the body along the waves / wavelength",
+		Bands:      []Band{{0.2, "the wave passes as if the body were not there"}, {huge, "the body diffracts the wave"}}},
+	DiffractionInertia: {ID: "diffraction_inertia", Symbol: "C_M/2", Title: "inertia by diffraction",
+		Definition: "inertia coefficient of a vertical cylinder that diffracts the wave / 2 of a thin one"},
+	WaveSteepness: {ID: "wave_steepness", Symbol: "H/λ", Title: "wave steepness",
+		Definition: "wave height / wavelength"},
+	WaveBreaking: {ID: "wave_breaking", Symbol: "H/H_b", Title: "height over breaking height",
+		Definition: "wave height / (0.142 λ tanh kd)"},
+	Ursell: {ID: "ursell", Symbol: "Ur", Title: "Ursell number",
+		Definition: "H λ²/d³, d the depth of the water",
+		Bands:      []Band{{26, "second-order theory holds"}, {huge, "shallow: a cnoidal wave"}}},
+	RelativeDepth: {ID: "relative_depth", Symbol: "d/λ", Title: "relative depth",
+		Definition: "depth of the water / wavelength",
+		Bands:      []Band{{0.05, "shallow water"}, {0.5, "intermediate depth"}, {huge, "deep water"}}},
+	SecondOrder: {ID: "second_order", Symbol: "a₂/a", Title: "second-order wave",
+		Definition: "second harmonic of the elevation / first harmonic"},
+	DragInertia: {ID: "drag_inertia", Symbol: "F_D/F_I", Title: "drag over inertia force",
+		Definition: "amplitude of the drag / amplitude of the inertia force in waves, C_D KC/(π² C_M) for a circular cylinder without current",
+		Bands:      []Band{{0.5, "inertia dominated"}, {2, "drag and inertia"}, {huge, "drag dominated"}}},
+	WaveDeflection: {ID: "wave_deflection", Symbol: "δ_w/ξ", Title: "deflection by waves over displacement of interest",
+		Definition: "amplitude of the deflection by the waves / amplitude of the motion, or / 1 % of the flow length where none is given"},
+	DisplacementWave: {ID: "displacement_wave", Symbol: "kξ", Title: "amplitude over wavelength",
+		Definition: "2π × amplitude of the motion / wavelength"},
+	CrestClearance: {ID: "crest_clearance", Symbol: "η/a_g", Title: "crest over clearance",
+		Definition: "elevation of the crest / air gap of the deck, or freeboard of the tank"},
+	SlammingTime: {ID: "slamming_time", Symbol: "t_s f_w", Title: "loading time over wet period",
+		Definition: "duration of a slamming load, 13 D/(64 v), v the speed of impact, / wet period",
+		Bands:      []Band{{0.25, "impulsive"}, {4, "dynamic"}, {huge, "quasi-static"}}},
+	ConvectiveMass: {ID: "convective_mass", Symbol: "m_1/m", Title: "convective mass share",
+		Definition: "mass that moves with the first sloshing mode / mass of the liquid"},
+	ImpulsiveMass: {ID: "impulsive_mass", Symbol: "m_0/m", Title: "impulsive mass share",
+		Definition: "mass that moves with the tank, 1 − Σ of the sloshing masses / mass of the liquid"},
+	SloshingRatio: {ID: "sloshing_ratio", Symbol: "f/f_s1", Title: "excitation over first sloshing frequency",
+		Definition: "frequency of the excitation / frequency of the first sloshing mode"},
+	SloshingRatioThird: {ID: "sloshing_ratio_third", Symbol: "f/f_s3", Title: "excitation over third sloshing frequency",
+		Definition: "frequency of the excitation / frequency of the third sloshing mode"},
+	BulgingRatio: {ID: "bulging_ratio", Symbol: "f_s1/f_b", Title: "sloshing over bulging frequency",
+		Definition: "frequency of the first sloshing mode / frequency of the wall with liquid"},
+	SloshingAmplitude: {ID: "sloshing_amplitude", Symbol: "η/η_lin", Title: "sloshing amplitude",
+		Definition: "wave amplitude at the wall / min(0.1 h, 0.05 L), h the liquid depth, L the length along the motion or the diameter"},
+	FillRatio: {ID: "fill_ratio", Symbol: "h/L", Title: "fill ratio",
+		Definition: "liquid depth / length along the motion or diameter",
+		Bands:      []Band{{0.337, "shallow: resonance hardens, bores travel"}, {huge, "deep: resonance softens"}}},
+	SloshingDamping: {ID: "sloshing_damping", Symbol: "ζ_slosh", Title: "sloshing damping ratio",
+		Definition: "damping ratio of the first sloshing mode by the Stokes layers on walls and bottom"},
+	WaveMagnification: {ID: "wave_magnification", Symbol: "DAF", Title: "dynamic magnification in waves",
+		Definition: "1/√((1 − r²)² + (2ζr)²), r = f_wave/f_w"},
 }

@@ -35,6 +35,10 @@ const (
 	Flexible                         // the structure bends: slopes and strains exist
 	PanelLike                        // a flush panel: no separation of its own
 	FrequencyLost                    // a frequency arises but is not known
+	Piercing                         // the body pierces the free surface
+	Sloshing                         // the liquid of a tank, with a free surface
+	Spectrum                         // the excitation is a spectrum, given by its acceleration at the mode
+	WaveLocked                       // the amplitude is that of a motion in waves
 )
 
 // Flow are the traits that mean a mean flow.

@@ -22,20 +22,24 @@ type wake struct {
 	first             int     // number of the first of the modes
 	st, stLockIn      float64 // at the speed of the flow, and where the first mode would lock in
 	xLow, xHigh       float64 // range of St U/(f_w1 D) in operation
-	bandLow, bandHigh float64
+	bandLow, bandHigh float64 // of the linear wake oscillator
+	end               float64 // of measured lock-in, at least bandHigh
 	position, next    float64
 	mode              int
 	amplitude         float64 // A/D, NaN where not determined
 	solved            bool
 }
 
-// Unsteady lift of a smooth cylinder in a subcritical wake, r.m.s. over the
-// length: measured between 0.2 and 0.5 (Sumer & Fredsøe 2006, from memory).
-const defaultLift = 0.3
+// Unsteady lift of a cylinder in a subcritical wake, r.m.s. over the length:
+// measured between 0.2 and 0.5 (Sumer & Fredsøe 2006, from memory); of a smooth
+// one in the drag crisis and beyond it about 0.1 (Schewe 1983, from memory).
+const defaultLift, supercriticalLift = 0.3, 0.1
 
 // solve computes the wake from the scales: L is the diameter or depth across
-// the flow. massNumber is (m + m_a)/(ρD²) per length.
-func (w *wake) solve(r *Resolver, massNumber float64) {
+// the flow; mass ratio m*, added mass coefficient C_A, and the displaced area
+// of the section over D², so that (m + m_a)/(ρD²) = (m* + C_A) area.
+func (w *wake) solve(r *Resolver, massRatio, added, area float64) {
+	massNumber := (massRatio + added) * area
 	re := r.reynoldsAt(r.X(scale.Speed))
 	if math.IsNaN(re) {
 		return
@@ -50,7 +54,8 @@ func (w *wake) solve(r *Resolver, massNumber float64) {
 	d := r.X(scale.Length)
 	w.operate(r, fw*d)
 	w.stLockIn = w.strouhalNear(r, fw*d)
-	am, err := canon.WakeLockInParameter(w.stLockIn, massNumber)
+	// beyond the range of the parameter the band keeps the end that it has there
+	am, err := canon.WakeLockInParameter(math.Max(w.stLockIn, 1e-3), math.Max(1e-3, math.Min(massNumber, 1e12)))
 	if err != nil {
 		return
 	}
@@ -58,8 +63,25 @@ func (w *wake) solve(r *Resolver, massNumber float64) {
 	if err != nil {
 		return
 	}
+	w.end = math.Max(w.bandHigh, lockInEnd(w.stLockIn, massRatio, added))
 	w.worstMode()
 	w.solved = true
+}
+
+// lockInEnd is St U/(f_w D) at the end of the lower branch of measured
+// vibrations, which outlasts the band of the linear wake oscillator.
+//
+//	St·9.25·√((m* + C_A)/(m* − 0.54)); none for m* ≤ 0.54
+//
+// Symbols: m* mass ratio, C_A added mass coefficient. Range: low mass-damping; a
+// heavy damped body stops earlier, which the amplitude decides. Accuracy: 10 %.
+// Check: m* = 2.4, St 0.2: 2.5, U* = 12.5; m* = 248: U* = 9.3.
+// Source: Govardhan & Williamson 2000, from memory.
+func lockInEnd(st, massRatio, added float64) float64 {
+	if massRatio <= 0.54 {
+		return math.Inf(1)
+	}
+	return st * 9.25 * math.Sqrt((massRatio+added)/(massRatio-0.54))
 }
 
 // reynoldsAt is the Reynolds number of the flow length at a speed.
@@ -74,12 +96,15 @@ func (w *wake) strouhalAt(re float64) (st, lo, hi float64) {
 		}
 		return w.strouhal, w.strouhal, w.strouhal
 	}
-	st, lo, hi, err := canon.Strouhal(re, w.shape, 1)
+	st, lo, hi, err := canon.Strouhal(math.Min(re, 1e10), w.shape, 1)
 	if err != nil {
 		return math.NaN(), math.NaN(), math.NaN()
 	}
 	return st, lo, hi
 }
+
+// rough reports whether the surface trips the boundary layer.
+func (w *wake) rough() bool { return w.roughness >= 1e-4 }
 
 // operate finds the range of St U/(f_w D) of the first mode over the speeds of
 // operation. Through the drag crisis the Strouhal number is a band, and its
@@ -120,8 +145,8 @@ func (w *wake) worstMode() {
 		if i > 0 && hi < 1/1.5 {
 			break
 		}
-		x := nearest(lo, hi, w.bandLow, w.bandHigh)
-		u := math.Min(x/w.bandLow, w.bandHigh/x)
+		x := nearest(lo, hi, w.bandLow, w.end)
+		u := math.Min(x/w.bandLow, w.end/x)
 		if u > best {
 			second = best
 			best, w.position, w.mode = u, x, i+w.first
@@ -135,6 +160,9 @@ func (w *wake) worstMode() {
 // nearest returns the value of lo … hi that lies deepest in the band.
 func nearest(lo, hi, bandLow, bandHigh float64) float64 {
 	centre := math.Sqrt(bandLow * bandHigh)
+	if math.IsInf(bandHigh, 1) {
+		centre = hi
+	}
 	return math.Max(lo, math.Min(centre, hi))
 }
 
@@ -178,7 +206,7 @@ func vortexAmplitude(alpha, re, st, modeFactor float64) float64 {
 // the motion.
 func (w *wake) vibrating() bool {
 	return w.solved && w.st > 0 && !math.IsNaN(w.amplitude) && w.amplitude > 0.02 &&
-		math.Min(w.position/w.bandLow, w.bandHigh/w.position) > 1
+		math.Min(w.position/w.bandLow, w.end/w.position) > 1
 }
 
 // dragCoefficient of a circle by Reynolds number; of a rough one beyond the
@@ -190,7 +218,7 @@ func (w *wake) dragCoefficient(re float64) float64 {
 	if w.shape != canon.SectionCircle {
 		return bluffDrag
 	}
-	if w.roughness > 0 && re > canon.DragCrisisStart {
+	if w.rough() && re > canon.DragCrisisStart {
 		return roughDrag(w.roughness)
 	}
 	cd, _, _, err := canon.CylinderDrag(math.Min(re, 1e8))
@@ -256,6 +284,7 @@ func (w *wake) groups(s *scale.Set, g *group.Set) {
 	g.Put(group.SheddingRatio, w.st*s.X(scale.Speed)/(s.X(scale.FrequencyWet)*s.X(scale.Length)))
 	g.Put(group.WakeBandLow, w.bandLow)
 	g.Put(group.WakeBandHigh, w.bandHigh)
+	g.Put(group.LockInEnd, w.end)
 	g.Put(group.LockInPosition, w.position)
 	g.Put(group.LockInMode, float64(w.mode))
 	if w.next >= 0 {
@@ -337,7 +366,7 @@ func massDamping(s *scale.Set, g *group.Set, massRatio, addedCoefficient, area f
 		sc = 4 * math.Pi * area * alpha
 	}
 	g.Put(group.Scruton, sc)
-	g.Put(group.InlineScruton, 1.8/math.Max(sc, 1e-12))
+	g.Put(group.InlineScruton, math.Min(1.8/math.Max(sc, 1e-12), 1e6))
 	if g.Has(group.Strouhal) {
 		g.Put(group.SkopGriffin, canon.SkopGriffinParameter(g.Get(group.Strouhal), alpha))
 	}

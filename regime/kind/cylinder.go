@@ -398,13 +398,16 @@ func (c *cylinder) across(r *Resolver) {
 	if v := r.c.Lookup(cylLift); v != nil {
 		c.wake.lift = v.Q.Value
 	} else {
-		r.warn(cylLift, "assumed", "The r.m.s. lift coefficient of shedding is taken as 0.3.")
+		if !c.wake.rough() && r.reynoldsAt(r.X(scale.Speed)) > canon.DragCrisisStart {
+			c.wake.lift = supercriticalLift
+		}
+		r.warn(cylLift, "assumed", "The r.m.s. lift coefficient of shedding is taken as "+units.Format(c.wake.lift, units.Dimensionless)+".")
 	}
 	if c.spring {
 		c.wake.modeFactor = canon.ModeFactorSpringMounted
 	}
 	added := r.X(scale.AddedMass) / r.X(scale.DisplacedMass)
-	c.wake.solve(r, (c.massRatio+added)*math.Pi/4)
+	c.wake.solve(r, c.massRatio, added, math.Pi/4)
 	c.wake.amplify(r, c.massRatio, added)
 	if c.wake.vibrating() && !r.Is(group.Amplitude) {
 		r.derive(scale.Amplitude, c.wake.amplitude*c.d, units.Length, "amplitude of the locked-in vibration")

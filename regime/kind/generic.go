@@ -29,6 +29,7 @@ var (
 	genDivergence = quantity("divergence_speed", units.Speed, "gt=0", "divergence speed, where it is known", "")
 	genFlutter    = quantity("flutter_speed", units.Speed, "gt=0", "flutter speed, where it is known", "")
 	genStall      = quantity("stall_angle", units.Angle, "gt=0,lte=1.6", "incidence at which a streamlined body stalls", "10 deg")
+	genLiftSlope  = pure("lift_slope", "gt=0,lte=20", "slope of the lift coefficient of a streamlined body on its plan area, per radian", "2π/(1 + 2/aspect ratio); 2π without a span")
 	genSuction    = pure("suction_peak", "gt=0", "largest suction −Cp_min", "by shape")
 )
 
@@ -38,7 +39,7 @@ var Generic = &Kind{
 	Title: "Generic body",
 	Doc:   "a body with one degree of freedom that no other kind covers, or a benchmark that gives dimensionless numbers",
 	Fields: modal(genLength, genMass, SolidDensity, genVolume, genAdded, genShape, genSpan, genThickness, genArea, genDrag, genLift, genStrouhal,
-		genNext, genFlow, genGalloping, genDivergence, genFlutter, genStall, genSuction),
+		genNext, genFlow, genGalloping, genDivergence, genFlutter, genStall, genLiftSlope, genSuction),
 	Directions: []string{"cross", "axial", "grazing"},
 	New:        newGeneric,
 }
@@ -57,6 +58,8 @@ type generic struct {
 	suction    float64
 	area       float64
 	drag       float64
+	lift       float64 // slope of the lift coefficient times plan area over L², 0 for a bluff body
+	section    float64 // displaced area of a section over L²
 }
 
 func newGeneric(r *Resolver) Physics {
@@ -122,6 +125,10 @@ func (b *generic) masses(r *Resolver) {
 	volume, rho := r.c.X(genVolume), r.X(scale.Density)
 	if math.IsNaN(volume) && b.shape == "sphere" {
 		volume = math.Pi * b.l * b.l * b.l / 6
+	}
+	b.section = math.Pi / 4 // of a circle, where the span does not tell
+	if span := r.X(scale.Span); !math.IsNaN(span) && !math.IsNaN(volume) && b.shape != "sphere" {
+		b.section = volume / (span * b.l * b.l)
 	}
 	r.derive(scale.DisplacedMass, rho*volume, units.Mass, "ρ times the volume")
 	r.Value(scale.DisplacedMass).Kind = units.Mass
@@ -198,7 +205,7 @@ func (b *generic) viscous(s float64) (gr, gi float64, err error) {
 		added, damping, err := canon.OscillatingSphere(s)
 		return 2 * added, 2 * damping, err
 	case "plate", "streamlined":
-		return canon.OscillatingRibbon(math.Max(1e-6, math.Min(s, 1e4)))
+		return ribbon(s)
 	default:
 		return canon.OscillatingCylinder(s)
 	}
@@ -235,8 +242,31 @@ func (b *generic) aero(r *Resolver) {
 	if r.Is(group.Bluff) && r.Is(group.Cross) {
 		b.shedding(r)
 	}
+	b.lifting(r)
 	u := r.X(scale.Speed)
-	r.deflect(b.drag*r.X(scale.Density)*u*u/2*b.area, 1, units.Force)
+	lift := b.lift * b.l * b.l * math.Abs(r.X(scale.Incidence))
+	r.deflect(r.X(scale.Density)*u*u/2*math.Hypot(b.drag*b.area, lift), 1, units.Force)
+}
+
+// lifting resolves the lift slope of a streamlined body, on its plan area
+// (chord times span, the square of the chord without a span).
+func (b *generic) lifting(r *Resolver) {
+	if !r.Is(group.Streamlined) {
+		return
+	}
+	aspect := r.X(scale.Span) / b.l
+	slope := r.c.X(genLiftSlope)
+	if math.IsNaN(slope) {
+		slope = 2 * math.Pi
+		if !math.IsNaN(aspect) {
+			slope /= 1 + 2/aspect
+		}
+		r.warn(genLiftSlope, "assumed", "The lift slope is taken as "+units.Format(slope, units.Dimensionless)+" per radian.")
+	}
+	if math.IsNaN(aspect) {
+		aspect = 1
+	}
+	b.lift = slope * aspect
 }
 
 // liftByShape is the r.m.s. lift coefficient: a sphere's wake sheds helically and
@@ -256,7 +286,7 @@ func (b *generic) shedding(r *Resolver) {
 		r.warn(genLift, "assumed", "The r.m.s. lift coefficient of shedding is taken by shape: "+units.Format(b.wake.lift, units.Dimensionless)+".")
 	}
 	added := r.X(scale.AddedMass) / r.X(scale.DisplacedMass)
-	b.wake.solve(r, (b.massRatio+added)*math.Pi/4)
+	b.wake.solve(r, b.massRatio, added, b.section)
 	b.wake.amplify(r, b.massRatio, added)
 	if b.wake.vibrating() && !r.Is(group.Amplitude) {
 		r.derive(scale.Amplitude, b.wake.amplitude*b.l, units.Length, "amplitude of the locked-in vibration")
@@ -287,7 +317,7 @@ func (b *generic) Groups(s *scale.Set, g *group.Set) {
 	if g.Any(group.Flow) {
 		b.flowGroups(s, g)
 	}
-	massDamping(s, g, b.massRatio, b.added, math.Pi/4)
+	massDamping(s, g, b.massRatio, b.added, b.section)
 }
 
 func (b *generic) motion(s *scale.Set, g *group.Set) {
@@ -358,13 +388,13 @@ func (b *generic) flowGroups(s *scale.Set, g *group.Set) {
 	}
 }
 
-// reaction puts the flow stiffness, where it was given, and the flow damping,
-// that of drag along the stream.
+// reaction puts the flow stiffness, where it was given, and the flow damping.
 func (b *generic) reaction(s *scale.Set, g *group.Set) {
 	omega := 2 * math.Pi * s.X(scale.FrequencyWet)
-	drag := b.drag * s.X(scale.Density) * s.X(scale.Speed) * b.area
+	// along the stream by drag, across it by lift: ρU C_D A ξ̇, ½ρU C_Lα A ξ̇
+	damper := s.X(scale.Density) * s.X(scale.Speed) * math.Max(b.drag*b.area, b.lift*b.l*b.l/2)
 	wet := s.X(scale.DryMass) + s.X(scale.AddedMass)
-	if zeta := drag / (2 * omega * wet); !math.IsNaN(zeta) {
+	if zeta := damper / (2 * omega * wet); !math.IsNaN(zeta) {
 		g.Put(group.DampingFlow, zeta)
 	}
 	if math.IsNaN(b.flow) {
@@ -373,7 +403,7 @@ func (b *generic) reaction(s *scale.Set, g *group.Set) {
 	}
 	k := s.X(scale.DryMass) * math.Pow(2*math.Pi*s.X(scale.FrequencyDry), 2)
 	putOrWait(s, g, group.FlowStiffness, b.flow/k, scale.DryMass, scale.FrequencyDry)
-	putOrWait(s, g, group.PseudoStatic, omega*drag/b.flow, scale.FrequencyWet, scale.Speed, scale.Density)
+	putOrWait(s, g, group.PseudoStatic, omega*damper/b.flow, scale.FrequencyWet, scale.Speed, scale.Density)
 }
 
 // instabilities puts the speeds of instability that are given, and waits for
@@ -411,7 +441,7 @@ func (b *generic) gallop(s *scale.Set, g *group.Set, high float64) {
 	case !s.Has(scale.Damping):
 		g.Miss(group.GallopingSpeed, group.Need{Input: s.Needs(scale.Damping), Unit: "1"})
 	default:
-		sc := 4 * math.Pi * b.massRatio * math.Pi / 4 * s.X(scale.Damping)
+		sc := 4 * math.Pi * b.massRatio * b.section * s.X(scale.Damping)
 		onset := 2 * sc * s.X(scale.FrequencyDry) * b.l / b.galloping
 		putOrWait(s, g, group.GallopingSpeed, high/math.Max(onset, 1e-9*high), scale.SpeedHigh, scale.FrequencyDry, scale.DryMass, scale.DisplacedMass)
 	}

@@ -149,15 +149,15 @@ func (r *Resolver) missingFrequency() {
 	for _, id := range []scale.ID{scale.FrequencyDry, scale.FrequencyWet, scale.FrequencyMotion} {
 		r.Value(id).Kind = units.Frequency
 	}
-	if r.Has(scale.FrequencyDry) || r.Has(scale.FrequencyMotion) {
+	if r.Has(scale.FrequencyDry) {
 		need := r.massNeed()
 		r.Need(scale.FrequencyWet, need)
 		r.Need(scale.FrequencyMotion, need)
-		r.Need(scale.FrequencyDry, FrequencyDry.Path())
 		return
 	}
 	i := InterestOf(r.c)
-	if !i.Has(finding.Frequency) && !i.Has(finding.Response) && !i.Has(finding.Stability) && !r.c.Has(FrequencyWet) {
+	static := !i.Has(finding.Frequency) && !i.Has(finding.Response) && !i.Has(finding.Stability)
+	if static && !r.c.Has(FrequencyWet) && !r.Has(scale.FrequencyMotion) {
 		r.trait(group.StaticOnly)
 		return
 	}

@@ -3,6 +3,7 @@ package kind
 import (
 	"fmt"
 	"math"
+	"math/cmplx"
 	"strings"
 
 	"regimed/regime/canon"
@@ -78,6 +79,7 @@ type plate struct {
 	mass     float64 // added mass over ρ a, incompressible, all wetted sides
 	pressure float64 // static deflection under unit pressure, over that under unit modal load
 	film     bool
+	gap      float64 // to a wall, 0 without
 }
 
 func newPlate(r *Resolver) Physics {
@@ -117,6 +119,9 @@ func (p *plate) shape(r *Resolver) bool {
 		r.Put(scale.Length, radius, units.Length, scale.Given, "the radius")
 	default:
 		p.a, p.b = a, b
+		if math.Abs(a/b-1) < 1e-9 { // a square is one in any units: its modes (m, n) and (n, m) mix
+			p.b = p.a
+		}
 		r.Put(scale.Length, a, units.Length, scale.Given, "the side along x")
 		r.Put(scale.Width, b, units.Length, scale.Given, "")
 	}
@@ -394,13 +399,32 @@ func (p *plate) wall(r *Resolver, rho, free float64, how string) {
 	}
 	r.derive(scale.Gap, gap, units.Length, "to the wall")
 	r.trait(group.Confined)
-	p.film = !atMost(width, gap)
-	if p.film {
+	p.gap = gap
+	other := free * (p.sides - 1) / p.sides
+	inertia := 2 * math.Pi * p.dryFrequency(r) * gap * gap / r.X(scale.KinematicViscosity)
+	if p.film = atMost(gap/width, thinFilm) && !(inertia > filmInertia); p.film {
 		r.trait(group.Film)
+		r.derive(scale.AddedMass, other, units.MassPerArea, "the open side; a film whose friction outweighs its inertia adds a spring and a damper, no mass")
+		return
 	}
 	layer := rho / (p.kb * math.Tanh(p.kb*gap))
-	other := free * (p.sides - 1) / p.sides
 	r.derive(scale.AddedMass, math.Max(free, layer+other), units.MassPerArea, "ρ/(k_b tanh k_b g) towards the wall")
+}
+
+// A film is a gap below 15 % of the width in which friction is not far below
+// inertia, ωg²/ν below 10: bounds a little beyond those of the assumption of
+// lubrication, so that it decides.
+const thinFilm, filmInertia = 0.15, 10
+
+// dryFrequency is the frequency of the motion, the dry one, or the one that
+// follows from the plate, the first that is known.
+func (p *plate) dryFrequency(r *Resolver) float64 {
+	for _, f := range []*input.Field{MotionFrequency, FrequencyDry, FrequencyWet} {
+		if r.c.Has(f) {
+			return r.c.X(f)
+		}
+	}
+	return p.lambda2 / (2 * math.Pi * p.a * p.a) * math.Sqrt(p.stiffness(r)/r.X(scale.DryMass))
 }
 
 // stiffness is the bending stiffness D of the plate.
@@ -450,17 +474,47 @@ func (p *plate) gamma(r *Resolver) func(f float64) float64 {
 
 // viscous is Γ of the viscous solution at a frequency.
 //
-//	strip: OscillatingRibbon(ωb²/(4ν)); plate: 1 + (1 − i) k_b δ/2
+//	strip: OscillatingRibbon(ωb²/(4ν)); plate: 1 + (1 − i) k_b δ/2;
+//	gap: 1/(1 − tanh s/s), s = (g/2)√(iω/ν)
 //
 // The second is Stokes' layer under a bending wave: its displacement and its
-// dissipation are those of the tangential speed of the potential flow.
+// dissipation are those of the tangential speed of the potential flow. The
+// third is the oscillating flow between two walls.
 func (p *plate) viscous(f, nu float64) (gr, gi float64, err error) {
-	if p.strip && !p.baffled {
-		s := 2 * math.Pi * f * p.b * p.b / 4 / nu
-		return canon.OscillatingRibbon(math.Min(s, 1e4))
+	switch {
+	case p.gap > 0 && f > 0:
+		gamma := gapFactor(p.gap * math.Sqrt(math.Pi*f/(2*nu)))
+		return real(gamma), -imag(gamma), nil
+	case p.strip && !p.baffled:
+		return ribbon(2 * math.Pi * f * p.b * p.b / 4 / nu)
 	}
 	layer := p.kb * math.Sqrt(nu/(math.Pi*f)) / 2
 	return 1 + layer, layer, nil
+}
+
+// gapFactor is 1/(1 − tanh s/s) at s = (1 + i)x/√2·√2, x = (g/2)√(ω/2ν).
+func gapFactor(x float64) complex128 {
+	s := complex(x, x)
+	if x > 300 {
+		return 1 / (1 - 1/s)
+	}
+	if x < 1e-2 { // s²/3 − 2s⁴/15: the difference from 1 would cancel
+		s2 := s * s
+		return 1 / (s2/3 - 2*s2*s2/15)
+	}
+	return 1 / (1 - cmplx.Tanh(s)/s)
+}
+
+// ribbon is Γ of a strip; beyond the range of the fit the layer is thin, and
+// its effect falls as S^−½.
+func ribbon(stokes float64) (gr, gi float64, err error) {
+	const end = 1e4
+	if stokes <= end {
+		return canon.OscillatingRibbon(math.Max(stokes, 1e-6))
+	}
+	gr, gi, err = canon.OscillatingRibbon(end)
+	thinner := math.Sqrt(end / stokes)
+	return 1 + (gr-1)*thinner, gi * thinner, err
 }
 
 // deform puts the lengths over which an amplitude counts.
@@ -494,6 +548,9 @@ func (p *plate) flutterOnset(s *scale.Set) float64 {
 func (p *plate) limitCycle(r *Resolver) {
 	if p.edges == "CFFF" && r.X(scale.SpeedHigh) > p.flutterOnset(r.Set) && !r.Is(group.Amplitude) {
 		r.derive(scale.Amplitude, flagAmplitude*p.a, units.Length, "limit cycle of a flag, 0.2 L")
+		if f, err := canon.BeamModeFactors(canon.ClampedFree, 2); err == nil { // it flaps in its second mode
+			p.slope, p.curve = f.MaxSlope, f.MaxCurvature
+		}
 	}
 }
 
@@ -620,9 +677,14 @@ func (p *plate) sound(k0 float64, g *group.Set) {
 		}
 		mass /= p.kb * p.a
 	}
+	// only the open fluid radiates: near a wall it is a share of the added mass
 	ideal := p.mass / p.sides
-	g.Put(group.AcousticInertia, math.Max(mass/ideal, 0))
-	g.Put(group.AcousticDamping, resistance/(k0*p.a*ideal))
+	share := 1.0
+	if g.Has(group.AddedMassRatio) && g.Has(group.AddedMassRatioFree) && p.gap > 0 {
+		share = g.Get(group.AddedMassRatioFree) / math.Max(g.Get(group.AddedMassRatio), g.Get(group.AddedMassRatioFree)) * math.Max(p.sides-1, 0) / p.sides
+	}
+	g.Put(group.AcousticInertia, math.Max(1+share*(mass/ideal-1), 0))
+	g.Put(group.AcousticDamping, share*resistance/(k0*p.a*ideal))
 }
 
 // pressures puts the pressure of the oscillation, ρω²ξ/k_b under a bending wave.
@@ -679,7 +741,7 @@ func (p *plate) filmGroups(s *scale.Set, g *group.Set) {
 	}
 	sigma := 12 * eta * omega * p.a * p.a / (pressure * gap * gap)
 	if g.Is(group.Liquid) {
-		g.Put(group.FluidStiffness, 0)
+		p.liquidFilm(s, g, eta, gap, omega)
 		return
 	}
 	if math.IsNaN(sigma) {
@@ -687,10 +749,32 @@ func (p *plate) filmGroups(s *scale.Set, g *group.Set) {
 		return
 	}
 	g.Put(group.Squeeze, sigma)
-	if spring, _, err := canon.ThinFilm(sigma, p.a/p.b); err == nil {
-		modal := s.X(scale.DryMass) * math.Pow(2*math.Pi*s.X(scale.FrequencyDry), 2)
-		g.Put(group.FluidStiffness, spring*pressure/gap/modal)
+	if !p.film {
+		return
 	}
+	g.Put(group.ViscousInertia, 1)
+	g.Drop(group.ViscousDamping)
+	if spring, damper, err := canon.ThinFilm(sigma, p.a/p.b); err == nil {
+		inertia := s.X(scale.DryMass) + s.X(scale.AddedMass)
+		putOrWait(s, g, group.FluidStiffness, spring*pressure/gap/(s.X(scale.DryMass)*math.Pow(2*math.Pi*s.X(scale.FrequencyDry), 2)), scale.DryMass, scale.FrequencyDry)
+		putOrWait(s, g, group.DampingViscous, damper*pressure/gap/(2*inertia*omega*omega), scale.DryMass, scale.FrequencyMotion)
+	}
+}
+
+// liquidFilm puts the damper of a liquid film, which has no spring.
+func (p *plate) liquidFilm(s *scale.Set, g *group.Set, eta, gap, omega float64) {
+	if !p.film {
+		return
+	}
+	g.Put(group.FluidStiffness, 0)
+	g.Put(group.ViscousInertia, 1)
+	g.Drop(group.ViscousDamping)
+	c, err := canon.ThinFilmLiquid(p.a / p.b)
+	if err != nil {
+		return
+	}
+	c *= eta * p.a * p.a / (gap * gap * gap) // per area
+	putOrWait(s, g, group.DampingViscous, c/(2*(s.X(scale.DryMass)+s.X(scale.AddedMass))*omega), scale.DryMass, scale.FrequencyMotion)
 }
 
 // cavity puts the stiffness and the resonance of a closed cavity behind.
@@ -717,6 +801,7 @@ func (p *plate) grazingGroups(s *scale.Set, g *group.Set) {
 	g.Traits |= group.Streamlined
 	g.Put(group.SuctionPeak, 0.1) // a flat plate along the flow: the ripple of a bent panel
 	p.panelLayer(s, g)
+	putOrWait(s, g, group.ReducedFrequency, 2*math.Pi*s.X(scale.FrequencyMotion)/(s.X(scale.Speed)*p.alongWave()), scale.FrequencyMotion, scale.Speed)
 	mach := g.Get(group.Mach)
 	if math.IsNaN(mach) {
 		for _, id := range []group.ID{group.FlowStiffness, group.DivergenceSpeed, group.PseudoStatic} {
@@ -748,7 +833,7 @@ func (p *plate) flag(s *scale.Set, g *group.Set) {
 	g.Put(group.FlutterSpeed, s.X(scale.SpeedHigh)/onset)
 	ratio := s.X(scale.Speed) / onset
 	g.Put(group.FlowStiffness, ratio*ratio)
-	g.Put(group.PseudoStatic, 2*2*math.Pi*s.X(scale.FrequencyWet)/(s.X(scale.Speed)*p.kb))
+	g.Put(group.PseudoStatic, 2*2*math.Pi*s.X(scale.FrequencyMotion)/(s.X(scale.Speed)*p.kb))
 }
 
 // subsonic puts divergence of a panel between the waves of a potential flow:
@@ -763,7 +848,7 @@ func (p *plate) subsonic(s *scale.Set, g *group.Set, mach float64) {
 	putOrWait(s, g, group.FlowStiffness, stiffness, needs...)
 	if !math.IsNaN(stiffness) {
 		g.Put(group.DivergenceSpeed, math.Sqrt(stiffness)*s.X(scale.SpeedHigh)/u)
-		g.Put(group.PseudoStatic, 2*2*math.Pi*s.X(scale.FrequencyWet)/(u*along))
+		g.Put(group.PseudoStatic, 2*2*math.Pi*s.X(scale.FrequencyMotion)/(u*along))
 		g.Put(group.DampingFlow, 0) // subsonic potential flow takes no energy from a standing wave
 		return
 	}
@@ -792,9 +877,12 @@ func (p *plate) supersonic(s *scale.Set, g *group.Set, mach float64) {
 	root := math.Sqrt(math.Max(mach*mach-1, 1)) // piston theory begins at M = √2
 	lambda := rho * u * u * p.a * p.a * p.a / (d * root)
 	putOrWait(s, g, group.FlutterSpeed, math.Sqrt(lambda/panelFlutterLambda), needs...)
-	modal := s.X(scale.DryMass) * math.Pow(2*math.Pi*s.X(scale.FrequencyDry), 2)
-	// piston theory: damping ρU/√(M² − 1) on one side; no static stiffness in one mode
-	putOrWait(s, g, group.FlowStiffness, 0*modal, scale.DryMass, scale.FrequencyDry)
+	// piston theory: damping ρU/√(M² − 1) on one side; its stiffness couples the
+	// first two modes, which meet at the onset: k/k₁ = ½(ω₂²/ω₁² − 1)(1 − √(1 − u⁴))
+	if flutter := g.Get(group.FlutterSpeed) * s.X(scale.Speed) / s.X(scale.SpeedHigh); !math.IsNaN(flutter) {
+		u4 := math.Min(math.Pow(flutter, 4), 1)
+		g.Put(group.FlowStiffness, 7.5*(1-math.Sqrt(1-u4))) // (16 − 1)/2 of a pinned panel
+	}
 	zeta := rho * s.X(scale.Speed) / root / (2 * 2 * math.Pi * s.X(scale.FrequencyWet) * (s.X(scale.DryMass) + s.X(scale.AddedMass)))
 	g.Put(group.DampingFlow, zeta)
 }

@@ -227,6 +227,9 @@ func (r *Resolver) viscosity() {
 	}
 	r.Need(scale.Viscosity, FluidViscosity.Path())
 	r.Need(scale.KinematicViscosity, FluidViscosity.Path())
+	if dynamic != nil {
+		r.Need(scale.KinematicViscosity, FluidDensity.Path())
+	}
 	r.Value(scale.Viscosity).Kind = units.DynamicViscosity
 	if !r.Has(scale.KinematicViscosity) {
 		r.Value(scale.KinematicViscosity).Kind = units.KinematicViscosity

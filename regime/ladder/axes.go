@@ -11,7 +11,7 @@ func axes(c *Class, kind string, g *group.Set, fs []finding.Finding) Axes {
 	a := c.Axes
 	at := func(e *assumption.Entry) finding.Verdict { return fs[e.Index()].Verdict }
 	invalid := func(e *assumption.Entry) bool { return at(e) == finding.Invalid && fs[e.Index()].OfInterest }
-	set(&a.Compressible, yesNo(invalid(assumption.IncompressibleFlow) || invalid(assumption.IncompressibleOscillation)))
+	set(&a.Compressible, yesNo(c.Axes.Fluid == "film" && g.Has(group.Squeeze) && g.Get(group.Squeeze) > 1 || invalid(assumption.IncompressibleFlow) || invalid(assumption.IncompressibleOscillation)))
 	set(&a.Viscous, yesNo(invalid(assumption.InviscidFlow) || invalid(assumption.InviscidOscillation)))
 	set(&a.FreeSurface, freeSurface(at))
 	set(&a.Turbulence, turbulence(at(assumption.LaminarFlow)))

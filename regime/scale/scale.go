@@ -72,6 +72,22 @@ const (
 	Width
 	NextFrequency
 
+	WaveHeight
+	FrequencyWave
+	WaterDepth
+	WaveLength
+	ParticleSpeed
+	WaveLoad
+	WaveDeflection
+	AirGap
+	FrequencyPitch
+	FrequencySurge
+	FrequencySlosh
+	FrequencySloshThird
+	FrequencyExcitation
+	BaseAcceleration
+	SloshingHeight
+
 	Count
 )
 
@@ -221,4 +237,20 @@ var table = [Count]Def{
 	CoincidenceFrequency: {"coincidence_frequency", "f_c", "coincidence frequency", ""},
 	Width:                {"width", "b", "width", "structure.width"},
 	NextFrequency:        {"next_frequency", "f_2", "frequency of the next mode, dry", "structure.next_frequency"},
+
+	WaveHeight:          {"wave_height", "H", "height of the waves, trough to crest", "waves.height"},
+	FrequencyWave:       {"frequency_wave", "f_wave", "frequency of the waves", ""},
+	WaterDepth:          {"water_depth", "d", "depth of the water", "waves.depth"},
+	WaveLength:          {"wave_length", "λ", "wavelength", ""},
+	ParticleSpeed:       {"particle_speed", "u", "speed of the water in the waves, at the surface or at the body", ""},
+	WaveLoad:            {"wave_load", "F_w", "amplitude of the wave load at that level, in the reference of the dry mass", ""},
+	WaveDeflection:      {"wave_deflection", "δ_w", "amplitude of the deflection by the waves", ""},
+	AirGap:              {"air_gap", "a_g", "air gap of the deck, or freeboard of the tank", "waves.air_gap"},
+	FrequencyPitch:      {"frequency_pitch", "f_pitch", "natural frequency of pitch", ""},
+	FrequencySurge:      {"frequency_surge", "f_surge", "natural frequency of surge on the mooring", ""},
+	FrequencySlosh:      {"frequency_slosh", "f_s1", "frequency of the first sloshing mode", ""},
+	FrequencySloshThird: {"frequency_slosh_third", "f_s3", "frequency of the third sloshing mode", ""},
+	FrequencyExcitation: {"frequency_excitation", "f_exc", "frequency of the excitation", "motion.frequency"},
+	BaseAcceleration:    {"base_acceleration", "A", "acceleration that excites the sloshing", "structure.base_acceleration"},
+	SloshingHeight:      {"sloshing_height", "η", "wave amplitude at the wall of the tank", ""},
 }

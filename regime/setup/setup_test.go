@@ -30,7 +30,7 @@ func figures(t *testing.T, text string) (*regime.Answer, map[string]setup.Figure
 // A cylinder of 0.1 m in water at 1 m/s whose wake is resolved: the figures are
 // worked by hand from the rules.
 func TestFiguresOfAResolvedWake(t *testing.T) {
-	a, m := figures(t, `{"structure":{"kind":"cylinder","diameter":"0.1 m","length":"1 m","mass_per_length":"8 kg/m","frequency_dry":"30 Hz","damping_ratio":"1 %","support":"clamped-clamped","strouhal":0.2},
+	a, m := figures(t, `{"structure":{"kind":"generic","length":"0.1 m","span":"1 m","mass":"8 kg","volume":"7.854 L","frequency_dry":"30 Hz","damping_ratio":"1 %","strouhal":0.2,"galloping_factor":-1},
 		"fluid":{"density":"1000 kg/m3","viscosity":"1 mPa s","sound_speed":"1500 m/s","vapour_pressure":"2 kPa"},"flow":{"speed":"1 m/s","turbulence_intensity":0.3},"motion":{"amplitude":"0.1 mm"}}`)
 	if a.Recommendation.Class.ID != "unsteady-load" {
 		t.Fatalf("class %s", a.Recommendation.Class.ID)
