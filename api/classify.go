@@ -72,6 +72,7 @@ func (s *Server) classify(c echo.Context) error {
 		return violated(invalidCase, "The case", violations)
 	}
 	room.answer = render.AppendJSON(room.answer[:0], answer, only)
+	answer.Release()
 	return send(c, http.StatusOK, typeJSON, room.answer)
 }
 

@@ -22,4 +22,6 @@ type Answer struct {
 	Setup          []setup.Figure
 	finding.Study
 	Warnings []kind.Warning
+
+	judged *finding.Context // what Findings lies in
 }

@@ -24,7 +24,7 @@ func TestEveryAssumptionGetsEveryVerdict(t *testing.T) {
 	unsaid := map[string]int{}
 	const drawn = 8000
 	classified := 0
-	all := cases()
+	all := rapid.OneOf(cases(), cases(), anyCases())
 	for n := range drawn {
 		a, _, _ := classify(all.Example(n).document(inSI))
 		if a == nil {
@@ -48,7 +48,7 @@ func TestEveryAssumptionGetsEveryVerdict(t *testing.T) {
 			}
 		}
 	}
-	if classified < drawn*95/100 {
+	if classified < drawn*3/4 {
 		t.Errorf("only %d of %d drawn cases classified", classified, drawn)
 	}
 	for i, e := range assumption.Catalogue {
@@ -73,10 +73,8 @@ var mayBeUnsaid = []string{"two-dimensional"}
 
 // What is undetermined names an input that the case has not given and could.
 func TestUndeterminedNamesAnInput(t *testing.T) {
-	c := newTally()
 	inputs := map[string]int{}
-	rapid.Check(t, func(rt *rapid.T) {
-		s := cases().Draw(rt, "case")
+	check(t, func(rt *rapid.T, s *sample, c *tally) {
 		a := c.classify(rt, s, asAnalystsWrite)
 		if a == nil {
 			return
@@ -101,7 +99,6 @@ func TestUndeterminedNamesAnInput(t *testing.T) {
 			}
 		}
 	})
-	c.require(t, 0.95, false)
 	t.Logf("inputs waited for: %v", inputs)
 	if len(inputs) < 15 {
 		t.Errorf("only %d inputs are ever waited for", len(inputs))

@@ -27,7 +27,17 @@ func Classify(c *input.Case) (*Answer, []input.Violation) {
 func Decide(r *kind.Resolved, s finding.Study) *Answer {
 	a := &Answer{Kind: r.Kind, Scales: r.Scales, Study: s}
 	a.Groups = r.Groups()
-	a.Findings = assumption.Judge(a.Groups, s)
+	a.judged = assumption.Judge(a.Groups, s)
+	a.Findings = a.judged.Made
 	a.Recommendation = ladder.Choose(r.Kind.Name, a.Groups, a.Findings)
 	return a
+}
+
+// Release gives the memory of an answer that Classify made back to the next
+// case; nothing may use the answer afterwards. Whoever does not call it leaves it to the collector.
+func (a *Answer) Release() {
+	a.Scales.Release()
+	a.Groups.Release()
+	a.judged.Release()
+	*a = Answer{}
 }

@@ -9,7 +9,10 @@ import (
 
 	"regimed/regime/finding"
 	"regimed/regime/fluid"
+	"regimed/regime/input"
+	"regimed/regime/kind"
 	"regimed/regime/solid"
+	"regimed/units"
 )
 
 // drawer draws a sample. Numbers are log-uniform over what engineers meet, and
@@ -19,28 +22,102 @@ type drawer struct {
 	sample
 }
 
-// cases draws cases of every kind with any of the optional fields.
+// structures draw the structure of a kind with an eye for what belongs together.
+var structures = map[string]func(d *drawer){"generic": (*drawer).generic, "cylinder": (*drawer).cylinder, "plate": (*drawer).plate}
+
+// cases draws cases of the kinds above with any of the optional fields.
 func cases() *rapid.Generator[*sample] {
+	return casesOf("tank", "tank", "floater", "floater", "generic", "cylinder", "cylinder", "plate", "plate", "pipe", "pipe", "vessel", "section", "section", "wing", "tube_array", "tube_array", "flag")
+}
+
+// anyCases draws the structure of every kind that there is field by field, so
+// that what does not belong together meets too; many of these cases are refused.
+func anyCases() *rapid.Generator[*sample] {
+	var names []string
+	for _, k := range kind.All {
+		names = append(names, k.Name)
+	}
+	return drawn(func(d *drawer) { d.fields(kind.Schema().Kind(d.kind).Fields, 5) }, names)
+}
+
+func casesOf(names ...string) *rapid.Generator[*sample] {
+	return drawn(func(d *drawer) { structures[d.kind](d) }, names)
+}
+
+// drawn draws a case of one of the kinds, with a structure and what surrounds it.
+func drawn(structure func(d *drawer), kinds []string) *rapid.Generator[*sample] {
 	return rapid.Custom(func(t *rapid.T) *sample {
 		d := &drawer{T: t}
-		d.kind = pick(d, "generic", "cylinder", "cylinder", "plate", "plate")
-		switch d.kind {
-		case "generic":
-			d.generic()
-		case "cylinder":
-			d.cylinder()
-		default:
-			d.plate()
-		}
+		d.kind = pick(d, kinds...)
+		structure(d)
 		d.fluid()
 		d.flow()
+		d.gaps()
 		d.damping()
 		d.motion()
+		d.sea()
 		d.surroundings()
 		d.study()
 		d.givenGroups()
+		for _, b := range kind.Schema().Blocks {
+			if !slices.Contains(drawnBlocks, b.Name) && d.chance(2) {
+				d.fields(b.Fields, 5)
+			}
+		}
 		return &d.sample
 	})
+}
+
+// drawnBlocks are the blocks that the drawer has functions for.
+var drawnBlocks = []string{"fluid", "flow", "waves", "motion", "surroundings", "tolerance", "criteria", "given_groups"}
+
+// fields gives what is needed of a list of fields, and each of the others in n
+// of 8 cases.
+func (d *drawer) fields(list []*input.Field, n int) {
+	for _, f := range list {
+		rival := map[string]bool{"log_decrement": true, "loss_factor": true, "quality_factor": true, "damping_ratio": true, "frequency_wet": d.has("structure.frequency_dry")}
+		if !f.Needed && (rival[f.Name] || !d.chance(n)) {
+			continue
+		}
+		switch f.Type {
+		case input.Quantity:
+			d.quantity(f.Path(), d.usual(f))
+		case input.Number:
+			d.number(f.Path(), d.log(0.01, 0.9))
+		case input.Integer:
+			d.number(f.Path(), pick(d, 1.0, 2, 3))
+		case input.Flag:
+			d.switchOf(f.Path())
+		case input.Choice:
+			d.name(f.Path(), pick(d, f.Options...))
+		case input.Choices:
+			d.put(f.Path(), entry{list: []string{pick(d, f.Options...)}})
+		case input.Interval:
+			x := d.usual(f)
+			d.put(f.Path(), entry{ends: [2]float64{x / 2, x}})
+		default:
+			d.name(f.Path(), "drawn")
+		}
+	}
+}
+
+// usual is a quantity as it might be of a structure of about a metre: in powers
+// of a length, a density and a speed, whatever its dimension.
+func (d *drawer) usual(f *input.Field) float64 {
+	switch f.Kind {
+	case units.Modulus:
+		return d.log(1e6, 3e11)
+	case units.Angle:
+		return d.log(0.001, 0.5)
+	case units.Salinity:
+		return 35
+	case units.Temperature:
+		return d.log(280, 300)
+	}
+	m, l, t := f.Kind.Exponents()
+	const length, density, speed = 0.5, 2000, 30
+	x := math.Pow(density, float64(m)) * math.Pow(length, float64(l+3*m+t)) * math.Pow(speed, float64(-t))
+	return written(x * d.log(0.03, 30))
 }
 
 func pick[T any](d *drawer, list ...T) T {
@@ -320,6 +397,9 @@ func (d *drawer) byValues() {
 }
 
 func (d *drawer) flow() {
+	if len(kind.Find(d.kind).Directions) == 0 {
+		return
+	}
 	if !d.has("fluid.name") && !d.has("fluid.density") && !d.has("fluid.sound_speed") || !d.chance(6) {
 		return
 	}
@@ -339,12 +419,12 @@ func (d *drawer) flow() {
 	default:
 		d.quantity("flow.speed", u)
 	}
-	if d.chance(5) {
-		directions := map[string][]string{"generic": {"cross", "cross", "axial", "grazing"}, "cylinder": {"cross", "axial"}, "plate": {"grazing"}}
-		d.name("flow.direction", pick(d, directions[d.kind]...))
+	if directions := kind.Find(d.kind).Directions; len(directions) > 0 && d.chance(5) {
+		d.name("flow.direction", pick(d, directions...))
 	}
 	if d.chance(4) {
 		d.put("flow.turbulence_intensity", entry{x: d.log(1e-3, 0.5)})
+		d.maybe(5, "flow.turbulence_length", 1, 300)
 	}
 	if d.chance(2) {
 		d.put("flow.incidence", entry{x: pick(d, -0.2, -0.05, 0, 0.03, 0.3)})
@@ -359,6 +439,9 @@ func (d *drawer) number0(path string) float64 {
 }
 
 func (d *drawer) damping() {
+	if field(d.kind, "structure.damping_ratio") == nil {
+		return
+	}
 	ζ := d.log(1e-4, 0.1)
 	switch rapid.IntRange(0, 7).Draw(d.T, "damping") {
 	case 0, 1:
@@ -376,7 +459,7 @@ func (d *drawer) damping() {
 
 // size is the length by which the sample's motion and surroundings are measured.
 func (d *drawer) size() float64 {
-	for _, path := range []string{"structure.diameter", "structure.length", "structure.radius"} {
+	for _, path := range []string{"structure.diameter", "structure.length", "structure.radius", "structure.breadth", "structure.depth", "structure.chord"} {
 		if i := d.at(path); i >= 0 && (d.kind != "cylinder" || path != "structure.length") {
 			return d.given[i].x
 		}
@@ -418,6 +501,7 @@ func (d *drawer) surroundings() {
 	if d.chance(1) && d.has("surroundings.wall_gap") {
 		d.quantity("surroundings.wall_gap", l)
 	}
+	d.neighbour()
 	if d.kind == "plate" {
 		d.maybe(2, "surroundings.backing_depth", 0.01*l, 5*l)
 	}
@@ -444,6 +528,13 @@ func (d *drawer) study() {
 	}
 	if d.chance(1) {
 		d.name("criteria.lock_in", pick(d, "asme-n1324", "dnv-c205", "en-1991-1-4", "ptc-19.3"))
+		if d.kind == "tube_array" {
+			d.name("criteria.fluidelastic", pick(d, "pettigrew-taylor-1991", "asme-n1331-lower", "asme-n1331-mean", "connors-1970"))
+		}
+	}
+	if d.chance(1) {
+		d.name("criteria.galloping", "en-1991-1-4-e2")
+		d.name("criteria.divergence", "en-1991-1-4-e4")
 	}
 }
 

@@ -95,8 +95,8 @@ func appendStudy(dst []byte, a *regime.Answer) []byte {
 		}
 	}
 	dst = append(dst, ']')
-	if a.Picked != nil {
-		dst = member(dst, "criterion", a.Picked.ID)
+	if ids := a.Picked.IDs(); ids != "" {
+		dst = member(dst, "criterion", ids)
 	}
 	return append(dst, '}')
 }

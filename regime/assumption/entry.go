@@ -34,7 +34,9 @@ func (e *Entry) Index() int { return e.index }
 // hazards first, since one-way coupling asks for theirs.
 var Catalogue = number(
 	// hazards
-	NoLockIn, NoGalloping, NoDivergence, NoFlutter, NoBucklingByFlow, NoAcousticResonance,
+	NoLockIn, NoGalloping, NoDivergence, NoFlutter, NoBucklingByFlow, NoAcousticResonance, NoPressureSurge,
+	NoFluidelasticInstability, NoWakeInterference, NoOvalling,
+	NoWaveResonance, NoSloshingResonance, NoSlamming,
 	// still fluid
 	FluidAbsent, StillFluid, InviscidOscillation, IncompressibleOscillation, UnboundedFluid,
 	FreeSurfaceAbsent, RigidLid, LinearFreeSurface, IsothermalWalls, Continuum, SlipFilm,
@@ -42,10 +44,11 @@ var Catalogue = number(
 	// mean flow
 	IncompressibleFlow, LinearCompressible, InviscidFlow, NoStall, LaminarFlow, SteadyFlow,
 	TwoDimensional, QuasiSteady, PseudoStatic, CalibratedWake,
+	QuasiStaticGusts,
 	// structure
 	RigidStructure, SmallDisplacement, SmallStroke, SingleMode, LinearStructure,
 	// scales of reduced models
-	Lubrication, Slender,
+	Lubrication, Slender, PlugFlow, OneDimensionalWaves, LongPulse, NoAxialCoupling, LongWave, RigidWalls,
 	// coupling
 	OneWay, ExplicitCoupling,
 )
@@ -68,14 +71,14 @@ func Find(id string) *Entry {
 }
 
 // Judge makes the findings of one case, in the order of the catalogue.
-func Judge(g *group.Set, s finding.Study) []finding.Finding {
+func Judge(g *group.Set, s finding.Study) *finding.Context {
 	x := finding.NewContext(g, s, len(Catalogue))
 	for i, e := range Catalogue {
 		x.Begin(&x.Made[i])
 		e.Estimate(x)
 		x.Conclude()
 	}
-	return x.Made
+	return x
 }
 
 // Criteria lists the criteria of standards.

@@ -19,6 +19,7 @@ var ExplicitCoupling = &Entry{
 
 var (
 	explicitMass  = finding.Say("The added mass is {added_mass_ratio} of the dry mass; one exchange a step is unstable at any time step from about 0.5 on.")
+	explicitFree  = finding.Say("In its softest motion the body takes along {added_mass_ratio_softest} of its mass; one exchange a step is unstable at any time step from about 0.5 on.")
 	explicitSound = finding.Say("In a compressible fluid a step of a twentieth of a period sees an added mass of {acoustic_step} of the dry mass; a smaller step lowers it.")
 )
 
@@ -34,4 +35,8 @@ func estimateExplicit(x *finding.Context) {
 		return
 	}
 	x.AddOrWait(p, group.AddedMassRatio, identity)
+	if x.Has(group.AddedMassSoftest) {
+		p.Estimate, p.Say = x.Get(group.AddedMassSoftest), explicitFree
+		x.Add(p)
+	}
 }

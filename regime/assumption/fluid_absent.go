@@ -13,14 +13,16 @@ var FluidAbsent = &Entry{
 	ID:        "fluid-absent",
 	Title:     "No effect of the fluid on the motion",
 	LeavesOut: "added mass, fluid stiffness and fluid damping",
-	Estimated: "frequency: √(1 + μΓr) − 1, and half the stiffness of a film or cavity over that of the structure; response: (ζ_v + ζ_rad)/ζ",
-	Measures:  []finding.Measure{finding.Frequency, finding.Response},
+	Estimated: "frequency: √(1 + μΓr) − 1, and half the stiffness of a film or cavity over that of the structure; response: (ζ_v + ζ_rad)/ζ; load: 1 of the liquid in a tank",
+	Measures:  []finding.Measure{finding.Frequency, finding.Response, finding.Load},
 	Sources:   []*cite.Source{cite.Batchelor1967},
 	Estimate:  estimateFluidAbsent,
 }
 
 var (
 	absentInertia   = finding.Say("Leaving the fluid out shifts the natural frequency by {e:%}: the added mass is {added_mass_ratio} of the dry mass.")
+	absentLiquid    = finding.Say("The load of a tank is that of its liquid: without it there is none.")
+	absentSoftest   = finding.Say("Leaving the fluid out shifts the natural frequency of the softest motion by {e:%}: its added mass is {added_mass_ratio_softest} of the dry mass.")
 	absentStiffness = finding.Say("Leaving the fluid out shifts the natural frequency by {e:%}: the fluid's stiffness is {fluid_stiffness} of the structure's.")
 	absentDamping   = finding.Say("The fluid makes {e:%} of the total damping.")
 )
@@ -33,6 +35,12 @@ func estimateFluidAbsent(x *finding.Context) {
 	case x.Is(group.StaticOnly):
 		x.NotApplicable(noFrequency)
 		return
+	case x.Is(group.Pulsatile):
+		x.Add(finding.Part{Measure: finding.Frequency, Basis: finding.Definition, Estimate: 1, Factor: 1, Say: pulseIsFluid, Source: cite.WomersleyWave1957})
+		return
+	}
+	if x.Is(group.Sloshing) {
+		x.Add(finding.Part{Measure: finding.Load, Basis: finding.Definition, Estimate: 1, Factor: 1, Say: absentLiquid, Source: cite.ThisMethod})
 	}
 	inertia := finding.Part{Measure: finding.Frequency, Basis: finding.Canonical, Factor: x.Factors.Inertia,
 		Say: absentInertia, Source: cite.Batchelor1967}
@@ -41,6 +49,10 @@ func estimateFluidAbsent(x *finding.Context) {
 		x.Add(inertia)
 	} else {
 		x.AddOrWait(inertia, group.AddedMassRatio, func(mu float64) float64 { return math.Sqrt(1+mu) - 1 })
+	}
+	if x.Has(group.AddedMassSoftest) {
+		inertia.Estimate, inertia.Say = math.Sqrt(1+x.Get(group.AddedMassSoftest))-1, absentSoftest
+		x.Add(inertia)
 	}
 	x.AddOrWait(finding.Part{Measure: finding.Frequency, Basis: finding.Canonical, Factor: x.Factors.Viscous,
 		Say: absentStiffness, Source: cite.Batchelor1967}, group.FluidStiffness, func(v float64) float64 { return v / 2 })

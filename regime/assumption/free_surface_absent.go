@@ -4,6 +4,7 @@ import (
 	"math"
 
 	"regimed/regime/cite"
+	"regimed/regime/criterion"
 	"regimed/regime/finding"
 	"regimed/regime/group"
 )
@@ -13,22 +14,31 @@ var FreeSurfaceAbsent = &Entry{
 	ID:        "free-surface-absent",
 	Title:     "No free surface",
 	LeavesOut: "the free surface above or around",
-	Estimated: "frequency: added mass below a rigid lid (ω²d/g < 0.05), below a pressure-free surface (ω²d/g > 10), the worse of the two between",
-	Measures:  []finding.Measure{finding.Frequency},
+	Estimated: "frequency: added mass below a rigid lid (ω²d/g < 0.05), below a pressure-free surface (ω²d/g > 10), the worse of the two between; in waves, and for a body that floats, 1; load: the convective share of the mass of the liquid in a tank",
+	Measures:  []finding.Measure{finding.Frequency, finding.Load},
 	Sources:   []*cite.Source{cite.Newman1977, cite.Batchelor1967},
 	Estimate:  estimateFreeSurface,
 }
 
 var (
-	surfaceLid  = finding.Say("Without the surface, which acts as a rigid lid at ω√(d/g) = {dynamic_froude}, the wet frequency is off by {e:%}.")
-	surfaceFree = finding.Say("Without the surface, which is pressure-free at ω√(d/g) = {dynamic_froude}, the wet frequency is off by {e:%}.")
-	surfaceBoth = finding.Say("Without the surface, which makes waves at ω√(d/g) = {dynamic_froude}, the wet frequency is off by up to {e:%}.")
+	surfaceLid        = finding.Say("Without the surface, which acts as a rigid lid at ω√(d/g) = {dynamic_froude}, the wet frequency is off by {e:%}.")
+	surfaceFree       = finding.Say("Without the surface, which is pressure-free at ω√(d/g) = {dynamic_froude}, the wet frequency is off by {e:%}.")
+	surfaceMakesWaves = finding.Say("The waves are those of the surface: without it there is no load.")
+	surfaceFloats     = finding.Say("The body pierces the surface: without it there is neither the stiffness of buoyancy nor the waves that a motion makes.")
+	surfaceSloshes    = finding.Say("The first sloshing mode moves {convective_mass:%} of the liquid: without the surface all of it would follow the tank.")
+	surfaceBoth       = finding.Say("Without the surface, which makes waves at ω√(d/g) = {dynamic_froude}, the wet frequency is off by up to {e:%}.")
 )
 
 func estimateFreeSurface(x *finding.Context) {
 	switch {
 	case !x.Is(group.Fluid):
 		x.NotApplicable(noFluid)
+		return
+	case x.Is(group.Sloshing):
+		surfaceOfTank(x)
+		return
+	case x.Any(group.Waves | group.Piercing):
+		surfaceWaves(x)
 		return
 	case !x.Is(group.NearSurface):
 		x.NotApplicable(noSurface)
@@ -59,4 +69,23 @@ func estimateFreeSurface(x *finding.Context) {
 // the surface, when the factor c on the added mass is left out.
 func withoutSurface(mu, c float64) float64 {
 	return math.Abs(math.Sqrt((1+mu*c)/(1+mu)) - 1)
+}
+
+// surfaceWaves adds what only a surface makes: waves, and the stiffness of a
+// body that floats.
+func surfaceWaves(x *finding.Context) {
+	p := finding.Part{Measure: finding.Load, Basis: finding.Definition, Estimate: 1, Factor: 1, Say: surfaceMakesWaves, Source: cite.Newman1977}
+	if x.Is(group.Waves) {
+		x.Add(p)
+	}
+	if x.Is(group.Piercing) {
+		p.Measure, p.Say = finding.Frequency, surfaceFloats
+		x.Add(p)
+	}
+}
+
+func surfaceOfTank(x *finding.Context) {
+	x.AddOrWait(finding.Part{Measure: finding.Load, Basis: finding.Canonical, Factor: 1.15, Say: surfaceSloshes, Source: cite.Abramson1966},
+		group.ConvectiveMass, identity)
+	x.Publish(criterion.All, "free-surface-absent")
 }

@@ -1,6 +1,8 @@
 package assumption
 
 import (
+	"math"
+
 	"regimed/regime/cite"
 	"regimed/regime/finding"
 	"regimed/regime/group"
@@ -28,7 +30,10 @@ func estimateIncompressibleOscillation(x *finding.Context) {
 		x.NotApplicable(noFluid)
 		return
 	}
-	if !x.Is(group.StaticOnly) {
+	if x.Is(group.Pulsatile) {
+		x.AddOrWait(finding.Part{Measure: finding.Frequency, Basis: finding.Canonical, Factor: 1.15, Say: pulseCompressed, Source: cite.Korteweg1878},
+			group.WallCompliance, func(v float64) float64 { return math.Sqrt(1+1/math.Max(v, 1e-12)) - 1 })
+	} else if !x.Is(group.StaticOnly) {
 		p := finding.Part{Measure: finding.Frequency, Basis: finding.Canonical, Factor: x.Factors.Acoustic,
 			Say: soundInertia, Source: cite.JungerFeit1986}
 		if x.Has(group.AddedMassRatio) && x.Has(group.AcousticInertia) {

@@ -18,9 +18,10 @@ var InviscidOscillation = &Entry{
 }
 
 var (
-	inviscidInertia = finding.Say("Without viscosity the wet frequency is off by {e:%}: the viscous layer makes the added mass {viscous_inertia} times the ideal one at S = {stokes}.")
-	inviscidFilm    = finding.Say("Without viscosity the film would escape: its spring, {fluid_stiffness} of the structure's, shifts the frequency by {e:%}.")
-	inviscidDamping = finding.Say("Viscosity makes {e:%} of the total damping: ζ_v = {damping_viscous}.")
+	inviscidInertia  = finding.Say("Without viscosity the wet frequency is off by {e:%}: the viscous layer makes the added mass {viscous_inertia} times the ideal one at S = {stokes}.")
+	inviscidFilm     = finding.Say("Without viscosity the film would escape: its spring, {fluid_stiffness} of the structure's, shifts the frequency by {e:%}.")
+	inviscidSloshing = finding.Say("The Stokes layers on walls and bottom lower the sloshing frequency by {e:%}, as much as their damping ratio.")
+	inviscidDamping  = finding.Say("Viscosity makes {e:%} of the total damping: ζ_v = {damping_viscous}.")
 )
 
 func estimateInviscidOscillation(x *finding.Context) {
@@ -30,6 +31,14 @@ func estimateInviscidOscillation(x *finding.Context) {
 		return
 	case x.Is(group.StaticOnly):
 		x.NotApplicable(noFrequency)
+		return
+	case x.Is(group.Sloshing):
+		x.AddOrWait(finding.Part{Measure: finding.Frequency, Basis: finding.Canonical, Factor: 1.5, Say: inviscidSloshing, Source: cite.Keulegan1959},
+			group.SloshingDamping, identity)
+		return
+	}
+	if x.Is(group.Pulsatile) {
+		addViscousPulse(x)
 		return
 	}
 	p := finding.Part{Measure: finding.Frequency, Basis: finding.Canonical, Factor: x.Factors.Viscous,

@@ -26,7 +26,10 @@ func estimateLinearStructure(x *finding.Context) {
 	case x.Is(group.StaticOnly) && !x.Has(group.StrainRatio):
 		x.NotApplicable(noFrequency)
 	default:
-		x.AddOrWait(finding.Part{Measure: finding.Scale, Basis: finding.Threshold, Factor: 1.5, Say: strain, Source: cite.Timoshenko1974},
-			group.StrainRatio, identity)
+		p := finding.Part{Measure: finding.Scale, Basis: finding.Threshold, Factor: 1.5, Say: strain, Source: cite.Timoshenko1974}
+		if x.Is(group.Pulsatile) {
+			p.Say, p.Source = pulseHoop, cite.FungCirculation
+		}
+		x.AddOrWait(p, group.StrainRatio, identity)
 	}
 }

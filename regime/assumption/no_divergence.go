@@ -2,6 +2,7 @@ package assumption
 
 import (
 	"regimed/regime/cite"
+	"regimed/regime/criterion"
 	"regimed/regime/finding"
 	"regimed/regime/group"
 )
@@ -11,12 +12,20 @@ var NoDivergence = &Entry{
 	ID:        "no-divergence",
 	Title:     "No static divergence",
 	LeavesOut: "flow-induced stiffness that cancels that of the structure",
-	Estimated: "highest speed of operation over the divergence speed; a flush panel in subsonic flow: q = D k_b³/2 wetted on one side, half of it on two",
+	Estimated: "highest speed of operation over the divergence speed; a section: q = K_α/(B² C_Mα), a wing: q = K_α √(1 − M²)/(e c² C_Lα) with its sweep; a flush panel in subsonic flow: q = D k_b³/2 wetted on one side, half of it on two",
 	Measures:  []finding.Measure{finding.Stability},
 	Sources:   []*cite.Source{cite.Dowell1975, cite.BisplinghoffAshleyHalfman1955},
 	Hazard:    "Divergence is sudden and destroys: the code in force and a margin set by licensed practice decide.",
 	Estimate: func(x *finding.Context) {
-		hazardOfSpeed(x, group.DivergenceSpeed, divergence, cite.Dowell1975, x.Factors.Buckling, noDivergenceShape)
+		source := cite.BisplinghoffAshleyHalfman1955
+		if x.Is(group.PanelLike) {
+			source = cite.Dowell1975
+		}
+		if x.Is(group.PanelLike | group.Cantilever) {
+			source = cite.Sader2016
+		}
+		hazardOfSpeed(x, group.DivergenceSpeed, divergence, source, x.Factors.Buckling, noDivergenceShape)
+		x.Publish(criterion.All, "no-divergence")
 	},
 }
 

@@ -11,12 +11,22 @@ var NoFlutter = &Entry{
 	ID:        "no-flutter",
 	Title:     "No flutter",
 	LeavesOut: "self-excited vibration by the phase between motion and flow force",
-	Estimated: "highest speed of operation over the flutter speed: a panel in supersonic flow by piston theory, a cantilever in axial flow by the slender-body equation",
+	Estimated: "highest speed of operation over the flutter speed: a section or wing as a thin aerofoil with plunge and pitch, a panel in supersonic flow by piston theory, a cantilever in axial flow by the slender-body equation",
 	Measures:  []finding.Measure{finding.Stability},
-	Sources:   []*cite.Source{cite.Dowell1975, cite.Paidoussis2016},
+	Sources:   []*cite.Source{cite.Dowell1975, cite.Paidoussis2016, cite.TheodorsenGarrick1940},
 	Hazard:    "Flutter destroys within seconds: certification and licensed practice set the margin.",
 	Estimate: func(x *finding.Context) {
-		hazardOfSpeed(x, group.FlutterSpeed, flutter, cite.Dowell1975, x.Factors.Flutter, noFlutterShape)
+		source := cite.Dowell1975
+		if x.Is(group.Internal) {
+			source = cite.GregoryPaidoussis1966
+		}
+		if x.Is(group.PanelLike | group.Cantilever) {
+			source = cite.Eloy2008
+		}
+		if x.Has(group.TorsionRatio) {
+			source = cite.TheodorsenGarrick1940
+		}
+		hazardOfSpeed(x, group.FlutterSpeed, flutter, source, x.Factors.Flutter, noFlutterShape)
 	},
 }
 

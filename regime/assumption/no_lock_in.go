@@ -22,16 +22,23 @@ var NoLockIn = &Entry{
 }
 
 var (
-	lockInBand      = finding.Say("Shedding meets a mode: St U/(f_w D) comes to {lock_in_position} in operation, the band of lock-in runs from {wake_band_low} to {lock_in_end}; locked in, the amplitude reaches {vortex_amplitude} D.")
-	lockInBandOpen  = finding.Say("Shedding meets a mode: St U/(f_w D) comes to {lock_in_position} in operation, the band of lock-in begins at {wake_band_low} and has no upper end; locked in, the amplitude reaches {vortex_amplitude} D.")
-	lockInOff       = finding.Say("Shedding keeps off the modes: St U/(f_w D) comes to {lock_in_position} at the most unfavourable speed of operation, the band of lock-in begins at {wake_band_low}.")
-	lockInAmplitude = finding.Say("Locked in, the amplitude would be {vortex_amplitude} D, against 0.02 D below which lock-in is a forced vibration.")
-	lockInNoDamping = finding.Say("St U/(f_w D) comes to {lock_in_position} in operation, in the band from {wake_band_low} on; whether the vibration grows depends on the damping, which was not given.")
-	lockInInline    = finding.Say("Along the flow: U/(f_w D) comes to {inline_velocity} in operation, the in-line band runs from 1 to 4.5; 1.8/Sc is {inline_scruton}.")
-	noShedding      = finding.Say("No vortices are shed: Re = {reynolds} is below 47.")
-	notAcross       = finding.Say("The flow does not run across the structure.")
-	attached        = finding.Say("The body is streamlined without a blunt trailing edge: it sheds no street of vortices.")
+	lockInBand        = finding.Say("Shedding meets a mode: St U/(f_w D) comes to {lock_in_position} in operation, the band of lock-in runs from {wake_band_low} to {lock_in_end}; locked in, the amplitude reaches {vortex_amplitude} D.")
+	lockInBandOpen    = finding.Say("Shedding meets a mode: St U/(f_w D) comes to {lock_in_position} in operation, the band of lock-in begins at {wake_band_low} and has no upper end; locked in, the amplitude reaches {vortex_amplitude} D.")
+	lockInOff         = finding.Say("Shedding keeps off the modes: St U/(f_w D) comes to {lock_in_position} at the most unfavourable speed of operation, the band of lock-in begins at {wake_band_low}.")
+	lockInAmplitude   = finding.Say("Locked in, the amplitude would be {vortex_amplitude} D, against 0.02 D below which lock-in is a forced vibration.")
+	lockInNoDamping   = finding.Say("St U/(f_w D) comes to {lock_in_position} in operation, in the band from {wake_band_low} on; whether the vibration grows depends on the damping, which was not given.")
+	lockInInline      = finding.Say("Along the flow: U/(f_w D) comes to {inline_velocity} in operation, the in-line band runs from 1 to 4.5; 1.8/Sc is {inline_scruton}.")
+	lockInBehind      = finding.Say("The leading body sheds at {shedding_ratio} of the wet frequency of the first mode; St U/(f_w D) comes to {lock_in_position} of mode {lock_in_mode} in operation, the band of lock-in runs from {wake_band_low} to {lock_in_end}.")
+	noSheddingBody    = finding.Say("The leading body sheds no vortices: Re = {body_reynolds} on its diameter is below 47.")
+	noStreetInBubbles = finding.Say("With {void_fraction:%} of gas in the mixture no regular street of vortices forms among the tubes; up to 15 % one may.")
+	noShedding        = finding.Say("No vortices are shed: Re = {reynolds} is below 47.")
+	notAcross         = finding.Say("The flow does not run across the structure.")
+	attached          = finding.Say("The body is streamlined without a blunt trailing edge: it sheds no street of vortices.")
 )
+
+// Void fraction above which no periodic shedding is found in tube arrays
+// (Pettigrew & Taylor 2003, from memory).
+const noStreetAbove = 0.15
 
 // Amplitude below which lock-in is a forced vibration, over the diameter.
 const forcedAmplitude = 0.02
@@ -44,16 +51,26 @@ func estimateLockIn(x *finding.Context) {
 	case !x.Any(group.Flow):
 		x.NotApplicable(noFlow)
 		return
+	case x.Is(group.WakeOfBody):
 	case !x.Is(group.Cross):
 		x.NotApplicable(notAcross)
 		return
-	case !x.Is(group.Bluff):
+	case !x.Any(group.Bluff | group.BluntEdge):
 		x.NotApplicable(attached)
 		return
+	case x.Has(group.VoidFraction) && x.Get(group.VoidFraction) > noStreetAbove:
+		x.NotApplicable(noStreetInBubbles)
+		return
+	}
+	switch {
 	case x.Is(group.StaticOnly):
 		x.NotApplicable(noFrequency)
 		return
 	case x.Has(group.Strouhal) && x.Get(group.Strouhal) == 0:
+		if x.Is(group.WakeOfBody) {
+			x.NotApplicable(noSheddingBody)
+			return
+		}
 		x.NotApplicable(noShedding)
 		return
 	}
@@ -71,6 +88,9 @@ func lockInAcross(x *finding.Context) {
 		waitOn(x, band, group.LockInPosition, group.WakeBandLow)
 		return
 	}
+	if x.Is(group.Array) { // no oscillator is calibrated for a wake among tubes
+		band.Source, band.Factor = cite.ASMEN1324, 1.5
+	}
 	position := x.Get(group.LockInPosition)
 	lo, hi := x.Get(group.WakeBandLow), math.Inf(1)
 	if x.Has(group.LockInEnd) {
@@ -84,7 +104,13 @@ func lockInAcross(x *finding.Context) {
 	}
 	amplitude := finding.Part{Measure: finding.Stability, Basis: finding.Canonical, Limit: 1, Factor: 2,
 		Say: lockInAmplitude, Source: cite.SkopGriffin1975}
+	if x.Is(group.Array) {
+		amplitude.Source = cite.PettigrewTaylor2003
+	}
 	switch {
+	case x.Is(group.WakeOfBody):
+		band.Say, band.Source = lockInBehind, cite.TurekHron2006
+		x.Add(band)
 	case band.Estimate*band.Factor <= 1:
 		band.Say = lockInOff
 		x.Add(band) // the speeds stay off the band: the damping does not matter

@@ -30,15 +30,23 @@ func estimateOneWay(x *finding.Context) {
 	case !x.Is(group.Fluid):
 		x.NotApplicable(noFluid)
 		return
-	case !x.Any(group.Flow):
+	case x.Is(group.Sloshing):
+		addMovingWalls(x)
+		return
+	case !x.Any(group.Flow | group.Waves):
 		x.NotApplicable(noFlow)
+		return
+	}
+	if x.Is(group.Pulsatile) {
+		addPulseBetweenRigidWalls(x)
+		addCollapsePart(x)
 		return
 	}
 	addStaticFeedback(x, feedbackStatic)
 	addChangeOfPlace(x)
 	if !x.Is(group.StaticOnly) {
-		if x.Has(group.MotionSpeedRatio) {
-			x.Add(finding.Part{Measure: finding.Load, Basis: finding.Canonical, Factor: 1.5, Estimate: 2 * x.Get(group.MotionSpeedRatio),
+		if x.Has(group.MotionSpeedRatio) && !x.Is(group.Internal) { // the flow inside is carried along
+			x.Add(finding.Part{Measure: finding.Load, Basis: finding.Canonical, Factor: 1.5, Estimate: 2 * x.Get(group.MotionSpeedRatio) * dragShare(x),
 				Say: feedbackSpeed, Source: cite.Blevins1990})
 		}
 		if x.Has(group.FlowStiffness) {
@@ -47,6 +55,16 @@ func estimateOneWay(x *finding.Context) {
 		}
 	}
 	addHazard(x)
+}
+
+// dragShare is the share of the load that goes with the square of the speed: all
+// of it but in waves, where the rest is inertia, whose feedback is added mass.
+func dragShare(x *finding.Context) float64 {
+	if !x.Is(group.Waves) || !x.Has(group.DragInertia) {
+		return 1
+	}
+	r := x.Get(group.DragInertia)
+	return r / (1 + r)
 }
 
 // addHazard takes the worst self-excited hazard over, with its own factors.

@@ -22,6 +22,7 @@ var RigidStructure = &Entry{
 var (
 	shapeChange  = finding.Say("The flow's stiffness, {flow_stiffness} of the structure's, changes the load by {e:%}.")
 	placeTilt    = finding.Say("The tilt of the deformed structure changes the load by {e:%}.")
+	placeWave    = finding.Say("The motion changes the phase of the waves at the body, and so the load, by {e:%}.")
 	placeGap     = finding.Say("The deformation takes {e:%} of the gap that shapes the flow.")
 	placeUniform = finding.Say("A body that moves as a whole in a wide uniform stream meets the same flow everywhere.")
 	placeLength  = finding.Say("The deformation is {e:%} of the length over which the flow varies.")
@@ -32,8 +33,15 @@ func estimateRigidStructure(x *finding.Context) {
 	case !x.Is(group.Fluid):
 		x.NotApplicable(noFluid)
 		return
-	case !x.Any(group.Flow):
+	case x.Is(group.Sloshing):
+		addMovingWalls(x)
+		return
+	case !x.Any(group.Flow | group.Waves):
 		x.NotApplicable(noFlow)
+		return
+	}
+	if x.Is(group.Pulsatile) {
+		addPulseBetweenRigidWalls(x)
 		return
 	}
 	addStaticFeedback(x, shapeChange)
@@ -63,11 +71,17 @@ func addChangeOfPlace(x *finding.Context) {
 		p.Say = placeGap
 		addDeformation(x, p, group.DisplacementGap, group.StaticDeflectionGap, identity)
 	}
+	if x.Is(group.Waves) {
+		x.AddOrWait(finding.Part{Measure: finding.Load, Basis: finding.Canonical, Factor: 1.5, Say: placeWave, Source: cite.Newman1977}, group.DisplacementWave, identity)
+		if !x.Any(group.Flow) || x.Is(group.Piercing) {
+			return
+		}
+	}
 	switch {
-	case x.Is(group.Flexible) && x.Any(group.Cross|group.Axial) && !x.Is(group.PanelLike):
+	case x.Is(group.Flexible) && x.Any(group.Cross|group.Axial|group.Internal) && !x.Is(group.PanelLike):
 		p.Say = placeTilt
 		addDeformation(x, p, group.DisplacementSpan, group.StaticDeflectionSpan, func(v float64) float64 { return v * v })
-	case x.Is(group.Bluff) && !x.Any(group.Confined|group.NearSurface):
+	case x.Is(group.Piercing) || x.Any(group.Bluff|group.Lifting) && !x.Any(group.Confined|group.NearSurface):
 		p.Say, p.Basis = placeUniform, finding.Definition
 		x.Add(p)
 	default:

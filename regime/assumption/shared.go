@@ -40,7 +40,7 @@ func orZero(x *finding.Context, id group.ID) float64 {
 
 // fluidDamping is the sum of the damping ratios that the fluid adds.
 func fluidDamping(x *finding.Context) float64 {
-	return orZero(x, group.DampingViscous) + orZero(x, group.DampingRadiation) + orZero(x, group.DampingFlow)
+	return orZero(x, group.DampingViscous) + orZero(x, group.DampingRadiation) + orZero(x, group.DampingFlow) + orZero(x, group.DampingTwoPhase)
 }
 
 // addShare adds the share of the total damping that is left out with the
@@ -66,9 +66,12 @@ func amplitudeOf(x *finding.Context, id group.ID) (float64, bool) {
 	return 0, false
 }
 
+// selfExcitedHazards are the hazards that feed on the motion.
+var selfExcitedHazards = []*Entry{NoLockIn, NoGalloping, NoFlutter, NoDivergence, NoBucklingByFlow, NoFluidelasticInstability, NoWakeInterference}
+
 // selfExcited returns the worst finding among the hazards that feed on motion.
 func selfExcited(x *finding.Context) (worst *finding.Finding, e *Entry) {
-	for _, h := range []*Entry{NoLockIn, NoGalloping, NoFlutter, NoDivergence, NoBucklingByFlow} {
+	for _, h := range selfExcitedHazards {
 		f := &x.Made[h.index]
 		p := f.Main()
 		if p == nil || p.Waits {
@@ -83,7 +86,7 @@ func selfExcited(x *finding.Context) (worst *finding.Finding, e *Entry) {
 
 // waitingHazard returns the first self-excited hazard that waits for an input.
 func waitingHazard(x *finding.Context) *finding.Finding {
-	for _, h := range []*Entry{NoLockIn, NoGalloping, NoFlutter, NoDivergence, NoBucklingByFlow} {
+	for _, h := range selfExcitedHazards {
 		if f := &x.Made[h.index]; f.Verdict == finding.Undetermined {
 			return f
 		}

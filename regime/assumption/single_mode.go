@@ -20,10 +20,11 @@ var SingleMode = &Entry{
 }
 
 var (
-	modesCouple  = finding.Say("The next mode at {next_mode} times the frequency, coupled through {mode_coupling:%} of the added mass, shifts this one by up to {e:%}.")
-	noNextMode   = finding.Say("The kind gives no next mode that the fluid could couple to this one.")
-	modesUniform = finding.Say("A uniform section in a uniform fluid couples no modes through the fluid.")
-	modesCompete = finding.Say("A second mode lies at {lock_in_next} of its band of lock-in: more than one mode competes for the wake.")
+	modesCouple   = finding.Say("The next mode at {next_mode} times the frequency, coupled through {mode_coupling:%} of the added mass, shifts this one by up to {e:%}.")
+	noNextMode    = finding.Say("The kind gives no next mode that the fluid could couple to this one.")
+	modesCoriolis = finding.Say("The Coriolis force of the flow couples the mode to the next and shifts it by {e:%}.")
+	modesUniform  = finding.Say("A uniform section in a uniform fluid couples no modes through the fluid.")
+	modesCompete  = finding.Say("A second mode lies at {lock_in_next} of its band of lock-in: more than one mode competes for the wake.")
 )
 
 func estimateSingleMode(x *finding.Context) {
@@ -37,6 +38,11 @@ func estimateSingleMode(x *finding.Context) {
 	}
 	p := finding.Part{Measure: finding.Frequency, Basis: finding.Canonical, Factor: 1.5, Say: modesCouple, Source: cite.Blevins1990}
 	switch {
+	case x.Is(group.Internal) && x.Has(group.ConveyingMass) && x.Has(group.FlowStiffness):
+		// a pinned pipe: ½(2√β u ∫φ₁φ₂′)²/(ω₂² − ω₁²) with ∫φ₁φ₂′ = 8/3, which is 0.096 β (u/π)²
+		p.Factor, p.Say, p.Source = 3, modesCoriolis, cite.Paidoussis1998
+		p.Estimate = 0.096 * x.Get(group.ConveyingMass) * x.Get(group.FlowStiffness)
+		x.Add(p)
 	case x.Is(group.Uniform):
 		p.Basis, p.Say = finding.Definition, modesUniform
 		x.Add(p)

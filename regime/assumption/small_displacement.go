@@ -30,8 +30,14 @@ func estimateSmallDisplacement(x *finding.Context) {
 		return
 	}
 	switch {
-	case !x.Is(group.Flexible):
+	case !x.Is(group.Flexible) && x.State(group.Slope) == group.Absent:
 		x.NotApplicable(rigidKind)
+	case x.Is(group.Pulsatile): // a wall of constant modulus: c² = (A/ρ) dp/dA grows as R
+		if x.Has(group.CollapsePressure) && x.Get(group.CollapsePressure) > 1 {
+			x.Add(finding.Part{Measure: finding.Frequency, Basis: finding.Definition, Estimate: 1, Factor: 1, Say: pulseCollapsed, Source: cite.Shapiro1977})
+		}
+		x.AddOrWait(finding.Part{Measure: finding.Frequency, Basis: finding.Canonical, Factor: 2, Say: pulseNonlinear, Source: cite.FungCirculation},
+			group.WallStrain, func(v float64) float64 { return math.Sqrt(1+v) - 1 })
 	case x.Is(group.Restrained):
 		stiffening := x.Stiffening
 		x.AddOrWait(finding.Part{Measure: finding.Frequency, Basis: finding.Canonical, Factor: 1.5, Say: stretching, Source: cite.ChuHerrmann1956},

@@ -22,8 +22,11 @@ var SteadyFlow = &Entry{
 var (
 	sheddingLoad   = finding.Say("Shedding raises the resultant load by {e:%}: C_L′ = {lift_fluctuation} against C_D = {drag_coefficient}.")
 	sheddingNear   = finding.Say("Shedding at {shedding_ratio} of the wet frequency raises the resultant load by {e:%}.")
+	bodyWake       = finding.Say("All of the load on a structure in the wake of a body that sheds is unsteady.")
+	bodySteady     = finding.Say("The wake of the leading body is steady: Re = {body_reynolds} on its diameter is below 47.")
 	turbulenceLoad = finding.Say("Turbulence of {turbulence_intensity:%} changes the load by {e:%}.")
 	steadyByRe     = finding.Say("At Re = {reynolds} the wake is steady: no vortices are shed below 47.")
+	wavesComeAndGo = finding.Say("Waves come and go: no flow in them is steady.")
 	steadyShape    = finding.Say("The flow along this shape is steady by itself, and no turbulence was given.")
 )
 
@@ -32,8 +35,20 @@ func estimateSteadyFlow(x *finding.Context) {
 	case !x.Is(group.Fluid):
 		x.NotApplicable(noFluid)
 		return
-	case !x.Any(group.Flow):
+	case !x.Any(group.Flow | group.Waves):
 		x.NotApplicable(noFlow)
+		return
+	}
+	if x.Is(group.Waves) {
+		x.Add(finding.Part{Measure: finding.Load, Basis: finding.Definition, Estimate: 1, Factor: 1, Say: wavesComeAndGo, Source: cite.ThisMethod})
+		return
+	}
+	if x.Is(group.WakeOfBody) {
+		wakePart(x)
+		return
+	}
+	if x.Is(group.Pulsatile) {
+		x.Add(finding.Part{Measure: finding.Load, Basis: finding.Definition, Estimate: 1, Factor: 1, Say: pulseUnsteady, Source: cite.WomersleyWave1957})
 		return
 	}
 	if x.Is(group.Bluff | group.Cross) {
@@ -75,4 +90,17 @@ func amplification(x *finding.Context, r float64) float64 {
 		daf = math.Min(daf, 1/(2*zeta))
 	}
 	return daf
+}
+
+// wakePart is the unsteadiness of the wake of a leading body.
+func wakePart(x *finding.Context) {
+	p := finding.Part{Measure: finding.Load, Basis: finding.Definition, Estimate: 1, Factor: 1, Say: bodyWake, Source: cite.TurekHron2006}
+	if !x.Has(group.BodyReynolds) {
+		waitOn(x, p, group.BodyReynolds)
+		return
+	}
+	if x.Get(group.Strouhal) == 0 {
+		p.Estimate, p.Say = 0, bodySteady
+	}
+	x.Add(p)
 }

@@ -13,7 +13,7 @@ var StillFluid = &Entry{
 	ID:        "still-fluid",
 	Title:     "Fluid at rest",
 	LeavesOut: "the mean flow's effect on the motion, and its load",
-	Estimated: "frequency: ½ k_flow/k, or U_R against 1 where the kind has no flow stiffness of its own; response: ζ_flow/ζ; load: static deflection over the displacement of interest",
+	Estimated: "frequency: ½ k_flow/k, or U_R against 1 where the kind has no flow stiffness of its own; response: ζ_flow/ζ; load: static deflection over the displacement of interest; in waves 1, or their deflection over the amplitude of interest",
 	Measures:  []finding.Measure{finding.Frequency, finding.Response, finding.Load, finding.Stability},
 	Sources:   []*cite.Source{cite.Blevins1990, cite.ThisMethod},
 	Estimate:  estimateStillFluid,
@@ -26,7 +26,10 @@ var (
 	stillLoad      = finding.Say("The mean flow deflects the structure by {e:%} of the amplitude of interest.")
 	stillFeedback  = finding.Say("The flow's stiffness, {flow_stiffness} of the structure's, changes a load by {e:%}.")
 	stillOnset     = finding.Say("An instability stands at {e} of its onset; from half of it on the flow changes the motion.")
+	stillArray     = finding.Say("The flow through the array takes {e:%} of the damping of its tubes, the square of V_p/V_c = {fluidelastic_speed}; a tenth is worth a model.")
 	stillStatic    = finding.Say("The case is a static one: the load of the mean flow is all that is asked for.")
+	stillWaveLoad  = finding.Say("The load of the waves is asked for, and a fluid at rest has none.")
+	stillWaves     = finding.Say("The waves deflect the structure by {e:%} of the amplitude of interest.")
 	stillThreshold = finding.Say("The mean flow deflects the structure by {static_deflection:%} of the flow length; above 1 % its load is worth a model.")
 )
 
@@ -35,8 +38,18 @@ func estimateStillFluid(x *finding.Context) {
 	case !x.Is(group.Fluid):
 		x.NotApplicable(noFluid)
 		return
-	case !x.Any(group.Flow):
+	case !x.Any(group.Flow | group.Waves):
 		x.NotApplicable(noFlow)
+		return
+	}
+	if x.Is(group.Pulsatile) {
+		x.Add(finding.Part{Measure: finding.Load, Basis: finding.Definition, Estimate: 1, Factor: 1, Say: pulseFlows, Source: cite.WomersleyWave1957})
+		return
+	}
+	if x.Is(group.Waves) {
+		stillWater(x)
+	}
+	if !x.Any(group.Flow) {
 		return
 	}
 	if x.Is(group.StaticOnly) {
@@ -49,12 +62,24 @@ func estimateStillFluid(x *finding.Context) {
 		}
 	}
 	addStaticFeedback(x, stillFeedback)
+	addFluidelastic(x)
 	addNearOnset(x, stillOnset, NoGalloping, NoDivergence, NoFlutter, NoBucklingByFlow)
 	load := finding.Part{Measure: finding.Load, Basis: finding.Canonical, Factor: 1.5, Say: stillLoad, Source: cite.Blevins1990}
 	if !x.Is(group.Amplitude) {
 		load.Basis, load.Limit, load.Factor, load.Say, load.Source = finding.Threshold, 1, 2, stillThreshold, cite.ThisMethod
 	}
 	x.AddOrWait(load, group.StaticDeflectionInterest, identity)
+}
+
+// stillWater adds what waves do. Who names waves asks for their load, however
+// little it bends the structure, unless an amplitude says what counts.
+func stillWater(x *finding.Context) {
+	if x.Is(group.StaticOnly) || !x.Is(group.Amplitude) || !x.Has(group.WaveDeflection) {
+		x.Add(finding.Part{Measure: finding.Load, Basis: finding.Definition, Estimate: 1, Factor: 1, Say: stillWaveLoad, Source: cite.ThisMethod})
+		return
+	}
+	x.Add(finding.Part{Measure: finding.Load, Basis: finding.Canonical, Factor: 1.5, Say: stillWaves, Source: cite.Morison1950,
+		Estimate: x.Get(group.WaveDeflection)})
 }
 
 func stillFrequency(x *finding.Context) {
@@ -80,4 +105,19 @@ func addNearOnset(x *finding.Context, say *finding.Sentence, hazards ...*Entry) 
 	if worst > 0 && !x.Is(group.StaticOnly) {
 		x.Add(finding.Part{Measure: finding.Stability, Basis: finding.Threshold, Limit: 0.5, Factor: 1.5, Estimate: worst, Say: say, Source: cite.ThisMethod})
 	}
+}
+
+// noticeableDamping is the share of the damping that the flow through an array
+// may take before a fluid at rest is another problem.
+const noticeableDamping = 0.1
+
+// addFluidelastic adds the flow's share of the damping in a tube array: the
+// fluid stiffness between tubes, which grows as V², cancels all of it at the
+// critical speed and (V/V_c)² below.
+func addFluidelastic(x *finding.Context) {
+	if !x.Is(group.Array) || x.Is(group.StaticOnly) {
+		return
+	}
+	x.AddOrWait(finding.Part{Measure: finding.Stability, Basis: finding.Threshold, Limit: noticeableDamping, Factor: 1.5, Say: stillArray, Source: cite.Connors1970},
+		group.FluidelasticSpeed, func(u float64) float64 { return u * u })
 }

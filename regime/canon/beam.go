@@ -59,14 +59,14 @@ func checkBeam(function string, support BeamSupport, n int) error {
 // length [kg/m], L length [m], n mode number from 1 (of a free-free beam the
 // first that bends), M = tip mass/(m L), a point mass at the free end x = L.
 //
-// Range: n from 1 to 100 000, M from 0 to 1e6 at a free end; at a supported end
-// the mass does not move and M must be 0.
+// Range: n from 1 to 100 000, M from 0 to 1e6 at a free end (free-free with a mass:
+// n to 1000); at a supported end the mass does not move and M must be 0.
 //
 // Accuracy: 1e-12, Euler–Bernoulli: rotary inertia and shear are left out.
 //
 // Check: 1.8751041, 4.6940911; 4.7300407; 3.9266023; π.
 //
-// Source: Blevins 1979, table 8-1.
+// Source: Blevins 1979, table 8-1 (from memory).
 func BeamMode(support BeamSupport, n int, tipMassRatio float64) (float64, error) {
 	const name = "BeamMode"
 	if err := checkBeam(name, support, n); err != nil {
@@ -82,6 +82,9 @@ func BeamMode(support BeamSupport, n int, tipMassRatio float64) (float64, error)
 	case ClampedFree:
 		return tipMassRoot(n, tipMassRatio), nil
 	case FreeFree:
+		if n > elasticBeamModeLimit {
+			return 0, &RangeError{Function: name, Arg: "n", Value: float64(n), Min: 1, Max: elasticBeamModeLimit, Reason: "a free beam with a mass is solved to the mode 1000"}
+		}
 		return ElasticBeamMode(BeamEnd{}, BeamEnd{Mass: tipMassRatio}, n)
 	}
 	return 0, &RangeError{Function: name, Arg: "tipMassRatio", Value: tipMassRatio, Reason: "the end x = L is supported, so a mass there does not move"}
@@ -298,7 +301,7 @@ func (f *beamFunction) peak(support BeamSupport) float64 {
 //
 // Check: clamped-free, n = 1: w(1) = 1, w(0.5) = 0.3395; pinned-pinned: sin nπx.
 //
-// Source: Blevins 1979, table 8-1.
+// Source: Blevins 1979, table 8-1 (from memory).
 func BeamShape(support BeamSupport, n int, x float64) (float64, error) {
 	const name = "BeamShape"
 	if err := checkBeam(name, support, n); err != nil {
@@ -338,7 +341,7 @@ type BeamFactors struct {
 // Check: clamped-free, n = 1: mean 0.39150, mean square ¼, largest curvature
 // ½·2·1.8751² = 3.5160.
 //
-// Source: Blevins 1979, table 8-1 and appendix C on integrals of beam functions.
+// Source: Blevins 1979, table 8-1 and appendix C on integrals of beam functions (from memory).
 func BeamModeFactors(support BeamSupport, n int) (BeamFactors, error) {
 	if err := checkBeam("BeamModeFactors", support, n); err != nil {
 		return BeamFactors{}, err

@@ -13,6 +13,9 @@ type BeamEnd struct {
 // change that it makes to β, about 1/stiffness, is then below rounding.
 const rigidSpring = 1e12
 
+// elasticBeamModeLimit bounds the mode number where frequencies are counted.
+const elasticBeamModeLimit = 1000
+
 // softestSpring is the smallest relative stiffness other than none: below it the
 // stiffness drowns in the rounding of the beam's own.
 const softestSpring = 1e-6
@@ -266,10 +269,10 @@ func checkSpring(function, side, motion string, stiffness float64) error {
 // Check: all rigid 4.7300407; rotations free π; one end rigid, the other free
 // 1.8751041; one end rigid, the other on k: k = 10 gives 2.6389.
 //
-// Source: Wittrick & Williams 1971; Blevins 1979, table 8-2.
+// Source: Wittrick & Williams 1971; Blevins 1979, table 8-2 (from memory).
 func ElasticBeamMode(left, right BeamEnd, n int) (float64, error) {
 	const name = "ElasticBeamMode"
-	if err := inRange(name, "n", float64(n), 1, 1000); err != nil {
+	if err := inRange(name, "n", float64(n), 1, elasticBeamModeLimit); err != nil {
 		return 0, err
 	}
 	if err := checkBeamEnd(name, "left", left); err != nil {
@@ -329,7 +332,7 @@ var supportEnds = [...][2]BeamEnd{
 //
 // Check: τ → ∞: ω → nπ√τ(1 + 2/√τ) for clamped ends; τ → −buckling load: 0.
 //
-// Source: Bokaian 1990.
+// Source: Bokaian 1990 (from memory).
 func TensionedBeam(support BeamSupport, n int, tension float64) (float64, error) {
 	const name = "TensionedBeam"
 	if err := checkBeam(name, support, n); err != nil {
@@ -338,7 +341,7 @@ func TensionedBeam(support BeamSupport, n int, tension float64) (float64, error)
 	if support == FreeFree {
 		return 0, &RangeError{Function: name, Arg: "support", Value: float64(support), Reason: "free ends hold no tension"}
 	}
-	if err := inRange(name, "n", float64(n), 1, 1000); err != nil {
+	if err := inRange(name, "n", float64(n), 1, elasticBeamModeLimit); err != nil {
 		return 0, err
 	}
 	if err := inRange(name, "tension", tension, -0.999*bucklingLoad(support), tensionLimit); err != nil {

@@ -67,6 +67,7 @@ func TestBeamModeAgainstPublishedRoots(t *testing.T) {
 	if ran != 10 {
 		t.Errorf("ran %d rows", ran)
 	}
+	tally(t, "BeamMode", "published roots", ran)
 }
 
 func TestBeamRootsSolveTheirEquationsAtAnyMode(t *testing.T) {
@@ -91,6 +92,7 @@ func TestBeamRootsSolveTheirEquationsAtAnyMode(t *testing.T) {
 			}
 		}
 	})
+	tally(t, "BeamMode", "residual of the frequency equation", len(allBeamSupports))
 }
 
 func TestBeamTipMass(t *testing.T) {
@@ -118,6 +120,7 @@ func TestBeamTipMass(t *testing.T) {
 			t.Errorf("%v takes a mass on a support", s)
 		}
 	}
+	tally(t, "BeamMode", "heavy mass on a massless spring", 3)
 }
 
 func TestBeamShapesMeetTheirEnds(t *testing.T) {
@@ -133,6 +136,7 @@ func TestBeamShapesMeetTheirEnds(t *testing.T) {
 			}
 		}
 	}
+	tally(t, "BeamShape", "end conditions", 100)
 }
 
 func TestBeamShapesAreOrthonormal(t *testing.T) {
@@ -149,6 +153,7 @@ func TestBeamShapesAreOrthonormal(t *testing.T) {
 			}
 		}
 	}
+	tally(t, "BeamShape", "orthonormality", 180)
 }
 
 func TestBeamModeFactorsAgainstQuadrature(t *testing.T) {
@@ -184,6 +189,8 @@ func TestBeamModeFactorsAgainstQuadrature(t *testing.T) {
 	b, _ := BeamModeFactors(ClampedFree, 1)
 	structureClose(t, "cantilever mean", b.Mean, 0.391495878, 1e-9) // 2σ/β/2, σ = 0.734095514
 	structureClose(t, "cantilever curvature", b.MaxCurvature, 3.516015269, 1e-9)
+	tally(t, "BeamModeFactors", "quadrature of the shape", 5*ran)
+	tally(t, "BeamModeFactors", "published factors of the cantilever", 2)
 }
 
 func TestBeamShapeIsNormalised(t *testing.T) {
@@ -202,6 +209,7 @@ func TestBeamShapeIsNormalised(t *testing.T) {
 			t.Fatalf("%v %d: first lobe %g", s, n, first)
 		}
 	})
+	tally(t, "BeamShape", "published middle of the cantilever", 1)
 }
 
 func TestElasticBeamLimits(t *testing.T) {
@@ -245,6 +253,9 @@ func TestElasticBeamLimits(t *testing.T) {
 	if _, err := ElasticBeamMode(BeamEnd{Translation: 1e-9}, held, 1); !errors.As(err, &e) {
 		t.Errorf("a stiffness below the rounding is accepted: %v", err)
 	}
+	tally(t, "ElasticBeamMode", "rigid springs: the classical supports", ran+1)
+	tally(t, "ElasticBeamMode", "soft springs: bounce and rock", 4)
+	tally(t, "ElasticBeamMode", "cantilever with a tip spring, scalar equation", 3)
 }
 
 func TestElasticBeamRisesWithStiffness(t *testing.T) {
@@ -261,6 +272,7 @@ func TestElasticBeamRisesWithStiffness(t *testing.T) {
 		}
 		structureClose(t, "mirror image", structureMust(t)(ElasticBeamMode(right, left, n)), β, 1e-8)
 	})
+	tally(t, "ElasticBeamMode", "mirror image, and rise with stiffness", 2)
 }
 
 func TestTensionedBeam(t *testing.T) {
@@ -302,6 +314,9 @@ func TestTensionedBeam(t *testing.T) {
 			t.Fatalf("%v %d: %g at %g, %g at more", s, n, a, τ, b)
 		}
 	})
+	tally(t, "TensionedBeam", "pinned ends: √(1 + τ/(n²π²)) by the determinant", 18)
+	tally(t, "TensionedBeam", "slope at no tension by Rayleigh's quotient", 4)
+	tally(t, "TensionedBeam", "buckling", 4)
 }
 
 func BenchmarkBeamMode(b *testing.B) {

@@ -16,7 +16,7 @@ import (
 // smallest term is of order exp(−2|z|), 1e-16 at besselFar.
 //
 // Sources: Abramowitz & Stegun 1964, 9.6.10 to 9.6.13, 9.7.1, 9.7.2;
-// Temme 1975 for the continued fraction.
+// Temme 1975 for the continued fraction (from memory).
 const (
 	besselNear = 2.5
 	besselFar  = 18

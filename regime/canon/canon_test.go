@@ -37,6 +37,7 @@ func TestCanonCheckValues(t *testing.T) {
 	calls := checkCalls(t)
 	rows := stillFluidTable(t, "testdata/canon.csv")
 	evaluated := 0
+	values := map[string]int{}
 	for _, row := range rows {
 		call, renamed := calls[row.name]
 		if !renamed {
@@ -63,6 +64,18 @@ func TestCanonCheckValues(t *testing.T) {
 			}
 		}
 		evaluated++
+		values[entry.Name] += len(row.want)
+		if entry.Name == "RectangularTank" || entry.Name == "UprightTank" {
+			values["SloshingMassFraction"]++
+			tank := slices.Index(tankNames, map[string]string{"RectangularTank": "rectangular", "UprightTank": "upright-circular"}[entry.Name])
+			same, err := sloshingMassFractionEntry.Evaluate([]float64{float64(tank), row.args[0]})
+			if err != nil || same[0] != got[0] {
+				t.Errorf("SloshingMassFraction%v: %v, %v, want %g", row.args, same, err, got[0])
+			}
+		}
+	}
+	for name, n := range values {
+		tally(t, name, checkTable, n)
 	}
 	if evaluated != len(rows) || len(rows) != 141 {
 		t.Errorf("evaluated %d of %d rows, want all 141", evaluated, len(rows))

@@ -59,7 +59,7 @@ func checkDisc(function string, edge CircularEdge, circles, diameters int, nu fl
 // Check: clamped 10.2158, 39.7711, 89.1041 (0, 1, 2 circles), 21.2604 (one
 // diameter); ν = 0.3: simply supported 4.9351, free with two diameters 5.3583.
 //
-// Source: Leissa 1969, chapter 2.
+// Source: Leissa 1969, chapter 2 (from memory).
 func CircularPlateMode(edge CircularEdge, circles, diameters int, nu float64) (float64, error) {
 	if err := checkDisc("CircularPlateMode", edge, circles, diameters, nu); err != nil {
 		return 0, err
@@ -93,7 +93,7 @@ func discRoot(edge CircularEdge, circles, diameters int, nu float64) float64 {
 //
 // Check: κ = 0, ν = 0.3: 4.9351; κ → ∞: 10.2158.
 //
-// Source: Leissa 1969, chapter 2.
+// Source: Leissa 1969, chapter 2 (from memory).
 func ElasticCircularPlateMode(kappa float64, circles, diameters int, nu float64) (float64, error) {
 	const name = "ElasticCircularPlateMode"
 	if err := checkDisc(name, CircularClamped, circles, diameters, nu); err != nil {

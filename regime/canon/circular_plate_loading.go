@@ -99,7 +99,7 @@ var discAddedMasses = newSolvedMemo[discKey, float64](1024)
 // Check: clamped, first mode: 0.6689 by Lamb with the shape (1 − r²)²; the exact
 // shape gives 0.6538; a piston 8/(3π) = 0.8488.
 //
-// Source: Lamb 1920; McLachlan 1932.
+// Source: Lamb 1920; McLachlan 1932 (from memory).
 func CircularPlateAddedMass(edge CircularEdge, circles, diameters int, nu float64) (float64, error) {
 	if err := checkDisc("CircularPlateAddedMass", edge, circles, diameters, nu); err != nil {
 		return 0, err
@@ -119,16 +119,17 @@ func discUncertainty(edge CircularEdge, circles, diameters int, nu, coefficient 
 	return math.Abs(more.addedMass()/coefficient-1) + 1e-15
 }
 
-// baffledDiscUncertainty is the change of either value, in units of ρa and ρc,
-// with more polynomials, a longer integral and finer panels.
+// baffledDiscUncertainty is twice the change of either value, in units of ρa and
+// ρc, with more polynomials, a longer integral and finer panels: the tail of the
+// integral shortens by a power only.
 func baffledDiscUncertainty(edge CircularEdge, circles, diameters int, nu, k0 float64, a baffledAnswer) float64 {
 	λ := discRoot(edge, circles, diameters, nu)
 	more := discModeShapeIn(21+int(1.125*λ), edge, λ, diameters, nu)
 	if k0 < noSound {
-		return math.Abs(more.addedMass()-a.mass) + 1e-15
+		return 2*math.Abs(more.addedMass()-a.mass) + 1e-15
 	}
 	mass := math.Abs(more.baffledMass(k0, λ, 1.5) - a.mass)
-	return max(mass, math.Abs(more.baffledResistance(k0, 1.5)-a.resistance)) + 1e-15
+	return 2*max(mass, math.Abs(more.baffledResistance(k0, 1.5)-a.resistance)) + 1e-15
 }
 
 // noSound is the k₀a below which the loading is that of an incompressible fluid
@@ -155,7 +156,7 @@ var baffledDiscs = newSolvedMemo[discKey, baffledAnswer](4096)
 //
 // Check: k0a = 0: CircularPlateAddedMass; k0a ≫ λ: r̂ → 1.
 //
-// Source: McLachlan 1932; Lamb 1920.
+// Source: McLachlan 1932; Lamb 1920 (from memory).
 func BaffledCircularPlateMode(edge CircularEdge, circles, diameters int, nu, k0a float64) (mass, resistance float64, err error) {
 	const name = "BaffledCircularPlateMode"
 	if edge == CircularFree {

@@ -155,6 +155,9 @@ func pipeFlutter(p conveyingPipe) (u, omega float64, err error) {
 	s := &pipeSearch{pipe: p, m: pipeProjection()}
 	before := pipeState{}
 	last := s.at(pipeSearchStart(p))
+	if last.growth > 0 { // the known onsets were no bound: from the beginning
+		last = s.at(pipeQuiet(p))
+	}
 	if last.growth > 0 {
 		return s.refine(pipeState{growth: -last.growth, omega: last.omega}, last)
 	}
@@ -175,9 +178,9 @@ func pipeFlutter(p conveyingPipe) (u, omega float64, err error) {
 	return 0, 0, pipeUnresolved(p)
 }
 
-// pipeSearchStart is a speed below any onset: without upright weight nothing
-// happens below u = 3.3, Beck's column with internal damping.
-func pipeSearchStart(p conveyingPipe) float64 {
+// pipeQuiet is a speed below any onset: without upright weight nothing happens
+// below u = 3.3, Beck's column with internal damping.
+func pipeQuiet(p conveyingPipe) float64 {
 	if p.gamma < 0 {
 		return 0.05
 	}
@@ -185,6 +188,36 @@ func pipeSearchStart(p conveyingPipe) float64 {
 		return 3
 	}
 	return 3.5
+}
+
+// pipeOnsets are onsets without damping, found from pipeQuiet on, over β and γ.
+// They rise with both; a test holds them to that.
+var (
+	pipeOnsetBeta  = [...]float64{0.05, 0.1, 0.2, 0.3, 0.4, 0.5, 0.6, 0.7, 0.8, 0.9, 0.93}
+	pipeOnsetGamma = [...]float64{0, 10, 40, 100}
+	pipeOnsets     = [...][len(pipeOnsetGamma)]float64{
+		{4.444, 4.859, 5.975, 7.897}, {4.749, 5.230, 6.567, 9.459}, {5.591, 6.339, 9.201, 10.575}, {8.269, 8.702, 9.668, 11.505},
+		{8.778, 9.189, 10.410, 13.899}, {9.322, 9.834, 11.740, 14.725}, {9.991, 10.714, 13.714, 17.627}, {12.769, 13.258, 14.671, 18.914},
+		{13.493, 14.051, 17.983, 22.991}, {14.330, 17.699, 22.869, 32.088}, {17.443, 18.101, 27.824, 32.088}, // the last beyond u = 32, with what is known
+	}
+)
+
+// pipeSearchStart is a speed from which the search may begin: for a pipe without
+// damping, which is not upright, a little below the onset of the next smaller β
+// and γ that are known; it saves most of the way where that is long.
+func pipeSearchStart(p conveyingPipe) float64 {
+	start := pipeQuiet(p)
+	if p.gamma < 0 || p.alpha > 0 {
+		return start
+	}
+	for i, β := range pipeOnsetBeta {
+		for j, γ := range pipeOnsetGamma {
+			if β <= p.beta && γ <= p.gamma {
+				start = max(start, 0.97*pipeOnsets[i][j])
+			}
+		}
+	}
+	return start
 }
 
 // crest looks for a positive maximum of the growth rate near b, where a, b and c

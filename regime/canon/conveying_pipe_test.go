@@ -50,6 +50,7 @@ func TestConveyingPipeBuckling(t *testing.T) {
 	if rows != 18 {
 		t.Errorf("ran %d rows", rows)
 	}
+	tally(t, "ConveyingPipe", "supported pipes π, 2π, 4.4934", 3)
 }
 
 // Weights under which a column buckles (Timoshenko & Gere, from memory: 7.837
@@ -81,6 +82,7 @@ func TestPipeOwnWeight(t *testing.T) {
 	if err != nil || u > 0.2 {
 		t.Errorf("pinned at its own weight: %g, %v", u, err)
 	}
+	tally(t, "ConveyingPipe", "columns under their own weight", rows)
 }
 
 // At the returned point the determinant vanishes, by its two independent
@@ -113,6 +115,7 @@ func TestConveyingPipeDeterminants(t *testing.T) {
 	if rows != 14 {
 		t.Errorf("ran %d rows", rows)
 	}
+	tally(t, "ConveyingPipe", "two determinants and the projection agree", 3*rows)
 }
 
 // Energy: over a period at the onset the fluid does no net work on a cantilever
@@ -137,6 +140,7 @@ func TestConveyingPipeDoesNoNetWorkAtOnset(t *testing.T) {
 	if rows != 5 {
 		t.Errorf("ran %d rows", rows)
 	}
+	tally(t, "ConveyingPipe", "no work over a period at the onset", rows)
 }
 
 // pipeTip gives deflection and slope at the free end of the neutral mode.
@@ -190,6 +194,7 @@ func TestConveyingPipeJumps(t *testing.T) {
 			t.Errorf("jump %d at β %g, want %g", i, jumps[i], want)
 		}
 	}
+	tally(t, "ConveyingPipe", "jumps over β", 3)
 }
 
 // The branch that ends at a fold is followed to it: its two solutions meet there.
@@ -221,6 +226,7 @@ func TestConveyingPipeFold(t *testing.T) {
 	if math.Abs(jacobian(lo, u, omega)) > 0.1*math.Abs(jacobian(lo-0.05, away, wAway)) {
 		t.Errorf("the lowest branch is left at β %g before its fold", lo)
 	}
+	tally(t, "ConveyingPipe", "the lowest branch lasts to its fold", 1)
 }
 
 // Beck's column (β → 0): with vanishing Coriolis damping the onset lies below
@@ -235,6 +241,7 @@ func TestConveyingPipeFollowerForce(t *testing.T) {
 	if err != nil || math.Abs(u*u-10.94) > 0.01 {
 		t.Errorf("β → 0, internal damping: u² %g, %v", u*u, err)
 	}
+	tally(t, "ConveyingPipe", "Beck's column", 2)
 }
 
 func TestConveyingPipeWholeRange(t *testing.T) {
@@ -267,6 +274,54 @@ func TestConveyingPipeWholeRange(t *testing.T) {
 	}
 	_, _, err := ConveyingPipe(0.5, 0, 0, "glued")
 	wantRangeError(t, err)
+}
+
+// The onsets from which the search begins are onsets, rise with β and γ, and change
+// no answer: the search from the beginning finds the same.
+func TestConveyingPipeSearchStart(t *testing.T) {
+	ran := 0
+	full := func(p conveyingPipe) float64 {
+		s := &pipeSearch{pipe: p, m: pipeProjection()}
+		last := s.at(pipeQuiet(p))
+		before := pipeState{}
+		for last.u < pipeSpeedEnd {
+			next := s.at(last.u + last.step())
+			if crest, found := s.crest(before, last, next); found {
+				if u, _, err := s.refine(before, crest); err == nil {
+					return u
+				}
+			}
+			if next.growth > 0 {
+				if u, _, err := s.refine(last, next); err == nil {
+					return u
+				}
+			}
+			before, last = last, next
+		}
+		return pipeSpeedEnd
+	}
+	for i, beta := range pipeOnsetBeta {
+		for j, gamma := range pipeOnsetGamma {
+			known := pipeOnsets[i][j]
+			if u := full(conveyingPipe{beta, gamma, 0}); math.Abs(u-known) > 2e-3 && !(u == pipeSpeedEnd && known > u) {
+				t.Errorf("β %g γ %g: onset %g, listed %g", beta, gamma, u, known)
+			}
+			if i > 0 && known < pipeOnsets[i-1][j] || j > 0 && known < pipeOnsets[i][j-1] {
+				t.Errorf("β %g γ %g: %g lies below a smaller one", beta, gamma, known)
+			}
+			ran++
+		}
+	}
+	for _, p := range []conveyingPipe{{0.07, 3, 0}, {0.23, 25, 0}, {0.297, 0, 0}, {0.298, 0, 0}, {0.25, 12, 0}, {0.62, 7, 0}, {0.69, 0, 0}, {0.71, 39, 0}, {0.88, 5, 0}, {0.95, 0, 0}, {0.95, 30, 0}} {
+		u, _, err := ConveyingPipe(p.beta, p.gamma, 0, PipeCantilever)
+		if want := full(p); err != nil || math.Abs(u-want) > 1e-8 {
+			t.Errorf("%+v: %g, %v; from the beginning %g", p, u, err, want)
+		}
+		ran++
+	}
+	if ran != 55 {
+		t.Errorf("ran %d rows, want 55", ran)
+	}
 }
 
 func TestQuarticRoots(t *testing.T) {

@@ -52,7 +52,7 @@ type Arg struct {
 	Optional bool
 	Default  float64 // used when Optional and not given; index for Choices
 	// Typical is a value in the middle of practice, for pictures: index for
-	// Choices. Zero stands for none: the default, or else one out of the window.
+	// Choices. Zero stands for none: see Usual.
 	Typical float64
 	// From and To are the window that a picture shows; both zero: the range, or
 	// its readable part.
@@ -66,8 +66,9 @@ type Output struct {
 }
 
 // UncertaintyID is the id of the output in which a solution that is cut short
-// (a set of modes, a series, a rule of integration) says by how much, relative,
-// what was left out may change its first output.
+// (a set of modes, a series, a rule of integration) says by how much what was left
+// out may change the others. A series that is summed until a term changes nothing
+// has the accuracy of the entry and no such output.
 const UncertaintyID = "uncertainty"
 
 // uncertaintyOutput is that output of the entries whose doc is the usual one.
@@ -108,9 +109,11 @@ func (e *Entry) Sweep() int {
 	return i
 }
 
-// Usual returns a value in the middle of practice.
+// Usual returns a value in the middle of practice, for an argument that nobody
+// gave and over which nothing is drawn.
 func (a *Arg) Usual() float64 {
-	switch from, to := a.Window(); {
+	from, to := a.Window()
+	switch {
 	case a.Typical != 0 || len(a.Choices) > 0:
 		return a.Typical
 	case a.Optional:
@@ -119,9 +122,8 @@ func (a *Arg) Usual() float64 {
 		return a.Min
 	case from > 0:
 		return math.Sqrt(from * to)
-	default:
-		return (from + to) / 2
 	}
+	return math.Min(to, 0)
 }
 
 // The readable part of a range that spans too many decades for a picture.

@@ -26,11 +26,12 @@ const (
 // L may be either side, and β = 0 is a strip with L across it.
 //
 // Range: σ from 0 to 1e12, β from 0 to 1e6. Accuracy: 1e-9 of each part.
-// Check value: σ = 10, β = 1 gives CHECK. Limits: σ → 0 damping only, (σ/12)
-// ThinFilmLiquid(β); σ → ∞ spring 1, gas that has no time to escape. In rarefied gas
-// η is multiplied by VeijolaViscosity.
+// Check value: σ = 10, β = 1 gives 0.135796862397 and 0.283307853753. Limits:
+// σ → 0 damping only, (σ/12) ThinFilmLiquid(β); σ → ∞ spring 1, gas that has no time
+// to escape. In rarefied gas η is multiplied by VeijolaViscosity.
 //
-// Source: Langlois 1962, Q. Appl. Math. 20; Blech 1983, J. Lubr. Technol. 105.
+// Source: Langlois 1962, Q. Appl. Math. 20; Blech 1983, J. Lubr. Technol. 105
+// (from memory).
 func ThinFilm(sigma, aspect float64) (spring, damping float64, err error) {
 	const name = "ThinFilm"
 	if err := inRange(name, "sigma", sigma, 0, filmMaxSigma); err != nil {
@@ -160,10 +161,11 @@ func filmEdgeTail(s complex128, from float64) (tail, rest complex128) {
 // L and W the sides (m), A = LW, h the gap (m), η the dynamic viscosity (Pa s). L may
 // be either side, and β = 0 is a strip with L across it.
 //
-// Range: β from 0 to 1e6. Accuracy: 1e-12. Limits: β → 0 1; the square 0.4217.
+// Range: β from 0 to 1e6. Accuracy: 1e-12. Check value: the square
+// 0.421731044865. Limits: β → 0 1; β → ∞ 1/β².
 //
 // Source: Langlois 1962, Q. Appl. Math. 20; the series is that of the laminar flow
-// in a rectangular duct.
+// in a rectangular duct (from memory).
 func ThinFilmLiquid(aspect float64) (damping float64, err error) {
 	if err := inRange("ThinFilmLiquid", "aspect", aspect, 0, filmMaxAspect); err != nil {
 		return 0, err
@@ -208,7 +210,8 @@ func filmLiquid(aspect float64) float64 {
 // Boltzmann equation (from memory). Check value: Kn = 0.034 gives 0.8393.
 // Limit: Kn → 0 1.
 //
-// Source: Veijola, Kuisma, Lahdenperä & Ryhänen 1995, Sensors and Actuators A 48.
+// Source: Veijola, Kuisma, Lahdenperä & Ryhänen 1995, Sensors and Actuators A 48
+// (from memory).
 func VeijolaViscosity(kn float64) (ratio float64, err error) {
 	if err := inRange("VeijolaViscosity", "Kn", kn, 0, 880); err != nil {
 		return 0, err

@@ -22,7 +22,7 @@ const flagWaveNumber = 4.694091132974175
 // (below H/L 0.3 ConveyingPipe with the virtual mass πρH²/4 is sharper).
 // Accuracy: a local wave criterion: measured thresholds lie up to a factor of
 // two above two-dimensional theory, and have hysteresis.
-// Check: ρL/m 1, H/L 1e9: 8.5883; ρL/m 1, H/L 1: 10.0899.
+// Check: ρL/m 1, H/L 1e9: 8.5878; ρL/m 1, H/L 1: 10.0899.
 // Source: dispersion relation of a plate between two streams; Eloy et al. 2007,
 // 2008 for comparison (from memory).
 func FlagCritical(massRatio, aspect float64) (float64, error) {

@@ -112,6 +112,9 @@ func TestFlowDocumentedValues(t *testing.T) {
 		{"FixedPointRelaxation", []float64{1, 3}, []float64{0.5, 1. / 3, 1. / 3}, 1e-12},
 		{"ExplicitCoupling", []float64{0.5}, []float64{1, 0.5}, 1e-12},
 	})
+	tally(t, "CylinderDrag", "computed drag at Re 20", 1)
+	tally(t, "PrandtlGlauert", "2/√3 − 1 by hand", 1)
+	tally(t, "FixedPointRelaxation", "two modes by hand", 3)
 }
 
 // C = H₁/(H₁ + iH₀) with J₁Y₀ − J₀Y₁ = 2/(πk): |H₁|²·Re(1/C) = |H₁|² + 2/(πk),
@@ -132,6 +135,7 @@ func TestTheodorsenWronskian(t *testing.T) {
 			t.Fatalf("k = %g: C = %g%+gi outside ½…1 or leading", k, re, im)
 		}
 	})
+	tally(t, "Theodorsen", "Wronskian", 1)
 }
 
 func TestTheodorsenLimitsAndHandOver(t *testing.T) {
@@ -175,6 +179,7 @@ func TestTheodorsenTable(t *testing.T) {
 		{"Theodorsen", []float64{0.5}, []float64{0.5979, -0.1507}, 5e-4},
 		{"Theodorsen", []float64{2}, []float64{0.5129, -0.0577}, 1e-3},
 	})
+	tally(t, "Theodorsen", "published table", 6)
 }
 
 func TestWaveNumberResidual(t *testing.T) {
@@ -193,6 +198,7 @@ func TestWaveNumberResidual(t *testing.T) {
 	}
 	_, err := WaveNumber(-1)
 	wantRangeError(t, err)
+	tally(t, "WaveNumber", "residual of the dispersion relation", 1)
 }
 
 func TestStokesLimits(t *testing.T) {
@@ -213,6 +219,7 @@ func TestStokesLimits(t *testing.T) {
 	wantRangeError(t, err)
 	_, err = Ursell(0.1, 0)
 	wantRangeError(t, err)
+	tally(t, "StokesSecondOrder", "shallow: 3/(32π²) of the Ursell number", 1)
 }
 
 // The circular cylinder is continuous except at the two ends of the drag
@@ -239,6 +246,7 @@ func TestStrouhalContinuity(t *testing.T) {
 	if rows != n {
 		t.Errorf("scanned %d", rows)
 	}
+	tally(t, "Strouhal", "continuous over Re, within its band", 1)
 }
 
 func TestStrouhalRegimes(t *testing.T) {
@@ -285,6 +293,8 @@ func TestStrouhalRegimes(t *testing.T) {
 	wantRangeError(t, err)
 	_, _, _, err = Strouhal(-1, SectionCircle, 1)
 	wantRangeError(t, err)
+	tally(t, "Strouhal", "tables of sections", rows)
+	tally(t, "Strouhal", "regimes of the circular cylinder", 5)
 }
 
 // The band is where the eigenvalues of the pair are complex with growth:
@@ -331,6 +341,7 @@ func TestWakeLockInIsTheUnstableBand(t *testing.T) {
 	wantRangeError(t, err)
 	_, err = WakeLockInParameter(0.2, 0)
 	wantRangeError(t, err)
+	tally(t, "WakeLockIn", "eigenvalues of the pair", 1)
 }
 
 // Khalak & Williamson 1999 (from memory): m* 2.4 in water synchronises from a
@@ -347,6 +358,8 @@ func TestWakeLockInOfALightCylinder(t *testing.T) {
 	if end := hi / 0.2; end < 8 || end > 13 {
 		t.Errorf("end at U* = %g", end)
 	}
+	tally(t, "WakeLockIn", "light cylinder in water", 2)
+	tally(t, "WakeLockInParameter", "light cylinder in water", 1)
 }
 
 func TestVortexAmplitude(t *testing.T) {
@@ -380,6 +393,10 @@ func TestVortexAmplitude(t *testing.T) {
 	wantRangeError(t, err)
 	_, err = SkopGriffin(1, 0.5)
 	wantRangeError(t, err)
+	tally(t, "SkopGriffin", "heavy cylinder in air", 1)
+	tally(t, "VortexAmplitude", "heavy cylinder in air", 1)
+	tally(t, "VortexAmplitude", "the larger of two, falling with damping", 2)
+	tally(t, "GovardhanWilliamson", "falls with damping, not below 0", 2)
 }
 
 func TestCompressibilityLimits(t *testing.T) {
@@ -407,6 +424,8 @@ func TestCompressibilityLimits(t *testing.T) {
 	wantRangeError(t, err)
 	_, err = IsentropicDensityChange(6, 1.4)
 	wantRangeError(t, err)
+	tally(t, "IsentropicDensityChange", "published tables", 2)
+	tally(t, "IsentropicDensityChange", "isothermal: exp(M²/2) − 1", 2)
 }
 
 func TestCylinderDrag(t *testing.T) {
@@ -446,6 +465,8 @@ func TestCylinderDrag(t *testing.T) {
 	}
 	_, _, _, err := CylinderDrag(0)
 	wantRangeError(t, err)
+	tally(t, "CylinderDrag", "another published fit", rows)
+	tally(t, "CylinderDrag", "continuous over Re, within its band", 1)
 }
 
 func TestFlatPlate(t *testing.T) {
@@ -477,6 +498,7 @@ func TestFlatPlate(t *testing.T) {
 	wantRangeError(t, err)
 	_, err = FlatPlate(9e3, true)
 	wantRangeError(t, err)
+	tally(t, "FlatPlate", "mean friction is the mean of the local", 4)
 }
 
 // The bound of each scheme is where the largest root of its own recurrence
@@ -532,6 +554,8 @@ func TestExplicitCouplingBounds(t *testing.T) {
 	wantRangeError(t, err)
 	_, _, err = ExplicitCoupling(1, "other")
 	wantRangeError(t, err)
+	tally(t, "ExplicitCoupling", "schemes marched in time", 2*rows)
+	tally(t, "ExplicitCoupling", "ratio times limit is μ", rows)
 }
 
 // The optimum makes the two extreme modes equally slow; the limit is where the
@@ -554,6 +578,7 @@ func TestFixedPointRelaxation(t *testing.T) {
 	})
 	_, _, _, err := FixedPointRelaxation(2, 1)
 	wantRangeError(t, err)
+	tally(t, "FixedPointRelaxation", "both extreme modes are equally slow", 3)
 }
 
 // ρcΔt/m″: the error of one step late is multiplied by 1 − ratio.
@@ -566,6 +591,7 @@ func TestCompressibleCoupling(t *testing.T) {
 	wantRangeError(t, err)
 	_, _, err = CompressibleCoupling(1, -1)
 	wantRangeError(t, err)
+	tally(t, "CompressibleCoupling", "ratio is 1 at the limit", 1)
 }
 
 // Every entry of this list evaluates over its whole range without a panic and

@@ -23,6 +23,7 @@ func TestSectionFlutterCheckValues(t *testing.T) {
 	if err != nil || u < 2.17 || u > 2.19 {
 		t.Errorf("worked section: %g, %v", u, err)
 	}
+	tally(t, "SectionFlutter", "worked section", 1)
 }
 
 var flutterSections = []flutterSection{
@@ -65,6 +66,7 @@ func TestSectionFlutterIsNeutral(t *testing.T) {
 	if rows != 11 {
 		t.Errorf("ran %d sections", rows)
 	}
+	tally(t, "SectionFlutter", "no work over a period at the onset", 9)
 }
 
 // sectionWork is the work of the aerodynamic loads over a period of the
@@ -164,6 +166,7 @@ func TestSectionFlutterIsTheLowestOnset(t *testing.T) {
 	if rows != 11 {
 		t.Errorf("ran %d sections", rows)
 	}
+	tally(t, "SectionFlutter", "eigenvalues with a rational C", rows)
 }
 
 // unstableModes counts the growing motions at the speed U/(bω_α) with the exact
@@ -247,6 +250,7 @@ func TestSectionFlutterField(t *testing.T) {
 			}
 		}
 	})
+	tally(t, "SectionFlutter", "number of growing motions by the argument principle", 1)
 }
 
 func TestSectionFlutterLimits(t *testing.T) {
@@ -268,6 +272,7 @@ func TestSectionFlutterLimits(t *testing.T) {
 		_, _, _, err := SectionFlutter(s.mu, s.a, s.xAlpha, s.r2, s.ratio, s.zetaH, s.zetaAlpha)
 		wantRangeError(t, err)
 	}
+	tally(t, "SectionFlutter", "balanced section, and no damping", 2)
 }
 
 func TestSectionDivergence(t *testing.T) {
@@ -308,6 +313,8 @@ func TestSectionDivergence(t *testing.T) {
 	wantRangeError(t, err)
 	_, err = SectionDivergenceSpeed(1, 0, 0, 6, 0)
 	wantRangeError(t, err)
+	tally(t, "SectionDivergence", "2/π, and r√(μ/(1 + 2a)) of the typical section", 2)
+	tally(t, "SectionDivergence", "static zero of the flutter determinant", 1)
 }
 
 func BenchmarkSectionFlutter(b *testing.B) {

@@ -49,6 +49,10 @@ func TestSurfaceDocumentedValues(t *testing.T) {
 		{"GeneralisedCoupling", []float64{0.2}, []float64{0.25}, 1e-12},
 		{"PipeConstraint", []float64{2, 10, 0.3}, []float64{1.16909}, 1e-5},
 	})
+	tally(t, "MoensKorteweg", "artery by hand", 1)
+	tally(t, "PulseWave", "no inertia: e^−2π, by hand", 2)
+	tally(t, "Electromechanical", "K² = ¼ by hand", 2)
+	tally(t, "GeneralisedCoupling", "k² = 0.2 by hand", 1)
 }
 
 // Frequencies of two tanks, g 9.80665.
@@ -76,6 +80,8 @@ func TestTankFrequencies(t *testing.T) {
 	if rows != 3 {
 		t.Errorf("ran %d roots", rows)
 	}
+	tally(t, "RectangularTank", "frequency of a tank of 1 m", 1)
+	tally(t, "UprightTank", "frequency of a tank of 1 m, zeros of J₁′", 5)
 }
 
 // In a shallow tank all of the liquid sloshes: Σ8/(n³π³)·nπ = 1 over odd n, and
@@ -116,6 +122,9 @@ func TestTankMassShares(t *testing.T) {
 	wantRangeError(t, err)
 	_, err = flowEntryNamed(t, "UprightTank").Evaluate([]float64{1.5, 1})
 	wantRangeError(t, err)
+	tally(t, "RectangularTank", "the shares of a shallow tank make the whole", 1)
+	tally(t, "UprightTank", "the shares of a shallow tank make the whole", 1)
+	tally(t, "UprightTank", "Housner's formula", rows)
 }
 
 func TestCylinderDiffractionLimits(t *testing.T) {
@@ -159,6 +168,7 @@ func TestCylinderDiffractionLimits(t *testing.T) {
 	}
 	_, _, err = CylinderDiffraction(-1)
 	wantRangeError(t, err)
+	tally(t, "CylinderDiffraction", "slope of the lag by the Wronskian", 1)
 }
 
 // A wall of any thickness: 2·(radial strain at the bore per p/E) of Lamé's
@@ -193,6 +203,8 @@ func TestPipeConstraintIsLame(t *testing.T) {
 	wantRangeError(t, err)
 	_, err = PipeConstraint(ExpansionJoints, 0.3, 0)
 	wantRangeError(t, err)
+	tally(t, "PipeConstraint", "published thin walls", rows)
+	tally(t, "PipeConstraint", "elastic cylinder of any wall", 1)
 }
 
 func TestPressureWaveLimits(t *testing.T) {
@@ -230,6 +242,7 @@ func TestPressureWaveLimits(t *testing.T) {
 	wantRangeError(t, err)
 	_, _, err = PulseWave(0, 2)
 	wantRangeError(t, err)
+	tally(t, "MoensKorteweg", "the wave speed of a soft wall", 1)
 }
 
 // The matched load gives the greatest loss factor of all loads.
@@ -268,6 +281,8 @@ func TestElectromechanical(t *testing.T) {
 	wantRangeError(t, err)
 	_, _, _, err = Electromechanical(-1)
 	wantRangeError(t, err)
+	tally(t, "Electromechanical", "greatest loss factor of all loads", 1)
+	tally(t, "GeneralisedCoupling", "frequency ratio 1/√(1 − k²)", 1)
 }
 
 func BenchmarkCylinderDiffraction(b *testing.B) {

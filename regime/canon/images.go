@@ -23,7 +23,8 @@ const imagesMaxGap = 1e12
 // Range: e from 0 to 1e12. Accuracy: 1e-13. Check value: e = 0.25 gives
 // 1.25878145271. Limits: e → ∞ 1; e = 0 π²/3 − 1.
 //
-// Source: potential theory; Lamb 1932, chapters IV and VI, for the images.
+// Source: potential theory; Lamb 1932, chapters IV and VI, for the images
+// (from memory).
 func CylinderNearWall(e float64) (c float64, err error) {
 	if err := inRange("CylinderNearWall", "e", e, 0, imagesMaxGap); err != nil {
 		return 0, err
@@ -69,7 +70,8 @@ func (k SurfaceKind) String() string {
 // Range: d from 0 to 1e12. Accuracy: 1e-13. Check value: d = 0 gives π²/3 − 1
 // and π²/6 − 1. Limit: d → ∞ 1.
 //
-// Source: potential theory; Lamb 1932, chapters IV and VI, for the images.
+// Source: potential theory; Lamb 1932, chapters IV and VI, for the images
+// (from memory).
 func CylinderBelowSurface(d float64, kind SurfaceKind) (c float64, err error) {
 	const name = "CylinderBelowSurface"
 	if err := inRange(name, "d", d, 0, imagesMaxGap); err != nil {

@@ -62,7 +62,7 @@ const clampedSquareStretching = 0.370485 / 0.75
 // Check: square simply supported plate, ν = 0.3: 1.0195 at w/h = 0.2, 1.402 at 1;
 // pinned beam, w/r = 1: 1.0892.
 //
-// Source: Woinowsky-Krieger 1950; Chu & Herrmann 1956.
+// Source: Woinowsky-Krieger 1950; Chu & Herrmann 1956 (from memory).
 func LargeAmplitude(kind LargeAmplitudeKind, ratio, aspect, nu float64) (float64, error) {
 	const name = "LargeAmplitude"
 	if kind < ImmovablePinnedBeam || kind > ImmovableClampedCircularPlate {

@@ -26,7 +26,8 @@ func viscousRoot(r float64) complex128 {
 // Check value: R = 1 gives 3.96801484714 and 4.56657056633. With δ = √(2ν/ω) the
 // limit R → ∞ is 1 + 2δ/a − i(2δ/a)(1 + δ/(2a)).
 //
-// Source: Stokes 1851, part I section III; Rosenhead 1963, chapter VII.
+// Source: Stokes 1851, part I section III; Rosenhead 1963, chapter VII
+// (from memory).
 func OscillatingCylinder(r float64) (gammaR, gammaI float64, err error) {
 	if err := inRange("OscillatingCylinder", "R", r, oscillationMinR, oscillationMaxR); err != nil {
 		return 0, 0, err
@@ -55,7 +56,8 @@ func oscillatingCylinder(r float64) complex128 {
 // Check value: R = 1 gives 3.68198051534 and 7.68198051534. Limits: R → ∞ ½;
 // R → 0 the damping constant 6πρνa of steady creeping flow.
 //
-// Source: Stokes 1851, part I section II; Landau & Lifshitz 1987, §24 problem 5.
+// Source: Stokes 1851, part I section II; Landau & Lifshitz 1987, §24 problem 5 (from
+// memory).
 func OscillatingSphere(r float64) (addedMass, damping float64, err error) {
 	if err := inRange("OscillatingSphere", "R", r, oscillationMinR, oscillationMaxR); err != nil {
 		return 0, 0, err
@@ -91,7 +93,7 @@ var (
 // of Tuck 1969, as its author says (from memory).
 // Check value: R = 10 gives 1.91831810625 and 0.981621970169. Limit: R → ∞ 1.
 //
-// Source: Sader 1998, eqs 20 to 22.
+// Source: Sader 1998, eqs 20 to 22 (from memory).
 func OscillatingRibbon(r float64) (gammaR, gammaI float64, err error) {
 	if err := inRange("OscillatingRibbon", "R", r, ribbonMinR, ribbonMaxR); err != nil {
 		return 0, 0, err
@@ -125,7 +127,7 @@ func ribbonPolynomial(c []float64, x float64) float64 {
 // Check value: α = 3 gives 0.500989702414 and 0.359962839122. Limits: α → 0
 // α⁴/48 + iα²/8; α → ∞ 1.
 //
-// Source: Womersley 1955, J. Physiol. 127, 553–563.
+// Source: Womersley 1955, J. Physiol. 127, 553–563 (from memory).
 func PulsatileTube(alpha float64) (re, im float64, err error) {
 	if err := inRange("PulsatileTube", "alpha", alpha, 0, 1e8); err != nil {
 		return 0, 0, err

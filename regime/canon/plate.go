@@ -51,7 +51,7 @@ var plateModes = newSolvedMemo[plateKey, plateAnswer](1024)
 // Check: SSSS square 19.739; CCCC square 35.985; CFFF square, ν = 0.3: 3.471;
 // FFFF square, ν = 0.3: 13.468.
 //
-// Source: Leissa 1969, chapter 4; Leissa 1973; Bhat 1985.
+// Source: Leissa 1969, chapter 4; Leissa 1973; Bhat 1985 (from memory).
 func PlateMode(edges string, aspect float64, m, n int, nu float64) (lambda2, uncertainty float64, err error) {
 	key, err := checkPlate(edges, aspect, m, n, nu)
 	if err != nil {

@@ -31,6 +31,7 @@ func TestCircularPlateModeAgainstPublishedValues(t *testing.T) {
 	if ran != 14 {
 		t.Errorf("ran %d rows", ran)
 	}
+	tally(t, "CircularPlateMode", "published values", ran)
 }
 
 func TestCircularPlateModesAreOrthogonal(t *testing.T) {
@@ -54,6 +55,7 @@ func TestCircularPlateModesAreOrthogonal(t *testing.T) {
 			}
 		}
 	}
+	tally(t, "CircularPlateMode", "orthogonality of the modes", 112)
 }
 
 func TestCircularPlateElasticEdge(t *testing.T) {
@@ -71,6 +73,9 @@ func TestCircularPlateElasticEdge(t *testing.T) {
 		}
 	})
 	structureClose(t, "limit", structureMust(t)(ElasticCircularPlateMode(1e11, 0, 0, 0.3)), 10.215826230, 1e-9)
+	structureClose(t, "no spring", structureMust(t)(ElasticCircularPlateMode(0, 0, 0, 0.3)), 4.9351, 1e-5)
+	tally(t, "ElasticCircularPlateMode", "between the two edges, rising", 1)
+	tally(t, "ElasticCircularPlateMode", "published ends 4.9351 and 10.2158", 2)
 }
 
 func TestFreeDiscModesAreCounted(t *testing.T) {
@@ -89,6 +94,7 @@ func TestFreeDiscModesAreCounted(t *testing.T) {
 			}
 		}
 	}
+	tally(t, "CircularPlateMode", "roots of free and clamped edge interleave", 110)
 }
 
 func TestDiscBesselTable(t *testing.T) {
@@ -118,6 +124,9 @@ func TestCircularAddedMassOfKnownShapes(t *testing.T) {
 	exact := structureMust(t)(CircularPlateAddedMass(CircularClamped, 0, 0, 0.3))
 	structureClose(t, "exact shape against Lamb's", exact/lamb.addedMass(), 1, 0.03)
 	structureClose(t, "exact shape", exact, 0.65380, 1e-4)
+	tally(t, "CircularPlateAddedMass", "Lamb's shape 0.6689", 1)
+	tally(t, "CircularPlateAddedMass", "piston 8/(3π)", 1)
+	tally(t, "BaffledCircularPlateMode", "piston's resistance", 4)
 }
 
 func TestCircularAddedMassOfHighModes(t *testing.T) {
@@ -137,6 +146,7 @@ func TestCircularAddedMassOfHighModes(t *testing.T) {
 			t.Errorf("%s: still %g from the infinite plate", circularEdgeNames[edge], last)
 		}
 	}
+	tally(t, "CircularPlateAddedMass", "towards 1/λ with every circle", 30)
 }
 
 func TestBaffledCircularPlate(t *testing.T) {
@@ -163,6 +173,8 @@ func TestBaffledCircularPlate(t *testing.T) {
 	if _, _, err := BaffledCircularPlateMode(CircularFree, 1, 0, 0.3, 1); err == nil {
 		t.Error("a free edge is accepted")
 	}
+	tally(t, "BaffledCircularPlateMode", "monopole of the volume", 1)
+	tally(t, "CircularPlateAddedMass", "integral over wave numbers", 10)
 }
 
 func baffled(t checkReporter, x, y BeamSupport, aspect float64, m, n int, k0a float64) (mass, resistance float64) {
@@ -207,6 +219,7 @@ func TestBaffledSquarePlate(t *testing.T) {
 	g := newBeamFunction(ClampedClamped, 2)
 	clamped, _ := baffled(t, ClampedClamped, PinnedPinned, 1.6, 2, 1, 0)
 	structureClose(t, "spectrum", spectralMass(&g, &f, 1/1.6, 100), clamped, 1e-6)
+	tally(t, "BaffledPlateMode", "mass by the spectrum", 2)
 }
 
 // spectralMass is ∫|X̂|²|Ŷ|² dk dφ/(4π²) over a quarter, four times, for sides 1 and b.
@@ -231,6 +244,7 @@ func TestBaffledPlateHighModes(t *testing.T) {
 		f := newBeamFunction(s, 10)
 		structureClose(t, s.String(), mass*f.β*math.Sqrt2, 1, 0.06)
 	}
+	tally(t, "BaffledPlateMode", "many half waves: ρ/k_b", 3)
 }
 
 // TestBaffledPlateLowFrequency compares with Wallace 1972 (from memory) for modes of
@@ -261,6 +275,7 @@ func TestBaffledPlateLowFrequency(t *testing.T) {
 		_, high := baffled(t, PinnedPinned, PinnedPinned, 1, c.m, c.n, 0.02)
 		structureClose(t, "power of frequency", math.Log2(high/low), c.power, 1e-3)
 	}
+	tally(t, "BaffledPlateMode", "low-frequency forms", ran+4)
 }
 
 // TestBaffledResistanceByRayleighsIntegral finds the resistance in space, where the
@@ -294,6 +309,7 @@ func TestBaffledResistanceByRayleighsIntegral(t *testing.T) {
 	if ran != 4 {
 		t.Errorf("ran %d rows", ran)
 	}
+	tally(t, "BaffledPlateMode", "resistance by Rayleigh's integral in space", ran)
 }
 
 func TestBaffledPlateIdentities(t *testing.T) {
@@ -318,6 +334,7 @@ func TestBaffledPlateIdentities(t *testing.T) {
 		f, g := newBeamFunction(x, m), newBeamFunction(y, n)
 		structureClose(t, "nodes", baffledMass(&f, &g, 1/aspect, k0a, 1.5), mass, 1e-9)
 	})
+	tally(t, "BaffledPlateMode", "reciprocity of the two sides", 2)
 }
 
 func TestBaffledPlateRadiatesAsPlaneWaveAboveCoincidence(t *testing.T) {
@@ -370,6 +387,9 @@ func TestCavityStiffness(t *testing.T) {
 		sum += must(CavityStiffness(ClampedClamped, PinnedPinned, n, 1)) / (8 / (math.Pi * math.Pi))
 	}
 	structureClose(t, "completeness", sum, 1, 1e-3)
+	tally(t, "CavityStiffness", "64/π⁴ by hand", 2)
+	tally(t, "CavityStiffness", "mean and mean square of the shape", len(allBeamSupports))
+	tally(t, "CavityStiffness", "Bessel's inequality is an equation", 1)
 }
 
 func TestSolvedMemoIsBoundedAndShared(t *testing.T) {

@@ -123,7 +123,7 @@ const longestSound = 120
 // Check: pinned square, (1, 1), k0a = 0: μ̂ = 0.40950; high modes μ̂ → 1/(k_b a);
 // k0a → 0, m and n odd: r̂ = 32 k₀²ab/(π⁵m²n²); k₀ ≫ k_b: r̂ → 1.
 //
-// Source: Wallace 1972.
+// Source: Wallace 1972 (from memory).
 func BaffledPlateMode(edgesX, edgesY BeamSupport, aspect float64, m, n int, k0a float64) (mass, resistance float64, err error) {
 	const name = "BaffledPlateMode"
 	for _, err := range [...]error{
@@ -152,13 +152,13 @@ func solveBaffledPlate(k baffledKey) baffledAnswer {
 	}
 }
 
-// baffledUncertainty is the change of either value, in units of ρa and ρc, that
-// half as many nodes again make.
+// baffledUncertainty is twice the change of either value, in units of ρa and ρc,
+// that half as many nodes again make.
 func baffledUncertainty(k baffledKey, a baffledAnswer) float64 {
 	x, y := newBeamFunction(k.x, k.m), newBeamFunction(k.y, k.n)
 	b := 1 / k.aspect
 	mass := math.Abs(baffledMass(&x, &y, b, k.k0, 1.5) - a.mass)
-	return max(mass, math.Abs(baffledResistance(&x, &y, b, k.k0, 1.5)-a.resistance)) + 1e-15
+	return 2*max(mass, math.Abs(baffledResistance(&x, &y, b, k.k0, 1.5)-a.resistance)) + 1e-15
 }
 
 // baffledMass is μ̂ for sides 1 and b: over the triangle below the diagonal with
@@ -236,7 +236,7 @@ func baffledResistance(x, y *beamFunction, b, k0, refine float64) float64 {
 //
 // Check: pinned, (1, 1): 64/π⁴ = 0.65702; even modes between like supports: 0.
 //
-// Source: Blevins 1979, table 8-1 for the mode shapes.
+// Source: Blevins 1979, table 8-1 for the mode shapes (from memory).
 func CavityStiffness(edgesX, edgesY BeamSupport, m, n int) (float64, error) {
 	const name = "CavityStiffness"
 	for _, err := range [...]error{

@@ -66,6 +66,7 @@ func TestPlateModeAgainstPublishedValues(t *testing.T) {
 		t.Errorf("ran %d rows", ran)
 	}
 	structureClose(t, "clamped square to six digits", plateLambda2(t, "CCCC", 1, 1, 1, 0.3), 35.985, 1e-4)
+	tally(t, "PlateMode", "published table of the combinations of edges", ran+1)
 }
 
 func TestPlateUncertaintyCoversLargerSets(t *testing.T) {
@@ -123,6 +124,7 @@ func TestPlatePolynomialsReproduceTheSine(t *testing.T) {
 		λ4, _ := plateEigenvalues(plateEnergy(x, y, 0.8, 0.3), false)
 		structureClose(t, edges, math.Sqrt(λ4[0])/plateLambda2(t, edges, 0.8, 1, 1, 0.3), 1, 1e-8)
 	}
+	tally(t, "PlateMode", "Ritz in both directions against the sine", 5)
 }
 
 func TestPlateStripsAreBeams(t *testing.T) {
@@ -133,6 +135,7 @@ func TestPlateStripsAreBeams(t *testing.T) {
 	structureClose(t, "cantilever plate", plateLambda2(t, "CFFF", 0.1, 1, 1, 0.3)/3.516015, 1, 0.005)
 	structureClose(t, "free beam", plateLambda2(t, "FFFF", 10, 1, 1, 0.3)/(22.3733*math.Sqrt(0.91)), 1, 0.002)
 	structureClose(t, "no Poisson effect", plateLambda2(t, "SFSF", 1, 1, 1, 0), math.Pi*math.Pi, 1e-9)
+	tally(t, "PlateMode", "strips and slender cantilevers are beams", 5)
 }
 
 func TestPlateModesAreReciprocal(t *testing.T) {
@@ -156,6 +159,7 @@ func TestPlateModesAreReciprocal(t *testing.T) {
 		b := plateLambda2(t, turned, 1/aspect, m2, n2, 0.3)
 		structureClose(t, edges, b*aspect*aspect/a, 1, 1e-9+δ)
 	})
+	tally(t, "PlateMode", "reciprocity of the two sides", 1)
 }
 
 func TestPlateStiffensWithItsEdges(t *testing.T) {
@@ -277,6 +281,9 @@ func TestLargeAmplitude(t *testing.T) {
 	// A long simply supported plate is a row of pinned beams, (w/r)² = 12(w/h)², whose
 	// amplitude varies as a sine: the cubic term takes the factor ∫sin⁴/∫sin² = ¾.
 	structureClose(t, "strip", stretchingCoefficient(ImmovableSimplySupportedPlate, 1e-4, 0), 12*0.25*0.75, 1e-6)
+	tally(t, "LargeAmplitude", "published values", ran)
+	tally(t, "LargeAmplitude", "below first order, and turned plate", 2)
+	tally(t, "LargeAmplitude", "purely cubic 0.8472√ε", 1)
 }
 
 // TestStretchingByMembraneRitz finds the cubic stiffness of square plates anew,
@@ -296,6 +303,7 @@ func TestStretchingByMembraneRitz(t *testing.T) {
 	}
 	structureClose(t, "clamped, edges held along and across", membraneStretching(beam, true), clampedSquareStretching, 5e-5)
 	structureClose(t, "simply supported, edges held across", membraneStretching(sine, false), stretchingCoefficient(ImmovableSimplySupportedPlate, 1, 0.3), 1e-9)
+	tally(t, "LargeAmplitude", "membrane by Ritz", 2)
 }
 
 // membraneStretching is ε/(w/h)² of a square plate of shape w(x)w(y), ν = 0.3.

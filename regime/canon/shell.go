@@ -36,7 +36,8 @@ const (
 // R → ∞ (q²+1)/(q²−1); q → ∞ OscillatingCylinder; thin film in a narrow gap
 // h = q−1, Rh² → 0: Γr = 6/(5h), Γi = 12/(Rh³).
 //
-// Source: Chen, Wambsganss & Jendrzejczyk 1976; Fritz 1972 for the ideal fluid.
+// Source: Chen, Wambsganss & Jendrzejczyk 1976; Fritz 1972 for the ideal fluid
+// (from memory).
 func CylinderInShell(r, q float64) (gammaR, gammaI float64, err error) {
 	if err := inRange("CylinderInShell", "R", r, shellMinR, shellMaxR); err != nil {
 		return 0, 0, err

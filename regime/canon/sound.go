@@ -17,7 +17,7 @@ const soundMaxX = 1e10
 // Check value: x = 1 gives 0.622212837086 and 0.738796559136. Limits: x → 0 1
 // with Γi = πx²/2; x → ∞ 1/(2x²) and 1/x, the plane wave.
 //
-// Source: Junger & Feit 1986, chapter 6.
+// Source: Junger & Feit 1986, chapter 6 (from memory).
 func SoundCylinder(x float64) (gammaR, gammaI float64, err error) {
 	if err := inRange("SoundCylinder", "x", x, 0, soundMaxX); err != nil {
 		return 0, 0, err
@@ -50,7 +50,7 @@ func SoundCylinder(x float64) (gammaR, gammaI float64, err error) {
 // Check value: x = 1 gives 1.2 and 0.4. Limits: x → 0 1 with Γi = x³/2; x → ∞
 // 2/x² and 2/x.
 //
-// Source: Junger & Feit 1986, chapter 2.
+// Source: Junger & Feit 1986, chapter 2 (from memory).
 func SoundSphere(x float64) (gammaR, gammaI float64, err error) {
 	if err := inRange("SoundSphere", "x", x, 0, soundMaxX); err != nil {
 		return 0, 0, err
@@ -73,7 +73,7 @@ func SoundSphere(x float64) (gammaR, gammaI float64, err error) {
 // Check value: x = 1 gives 0.423275192243 and 0.646763728284. Limits: x → 0
 // x²/2 and 8x/(3π); x → ∞ 1 and 2/(πx).
 //
-// Source: Rayleigh 1896, vol. II § 302; Kinsler et al. 2000, section 7.5.
+// Source: Rayleigh 1896, vol. II § 302; Kinsler et al. 2000, section 7.5 (from memory).
 func BaffledPiston(x float64) (r1, x1 float64, err error) {
 	if err := inRange("BaffledPiston", "x", x, 0, soundMaxX); err != nil {
 		return 0, 0, err
@@ -117,9 +117,11 @@ func pistonResistanceSeries(x float64) float64 {
 // the resistance of equal impedance.
 //
 // Range: s from 0 to 1e8, k_b L from 1e-3 to 1e12. Accuracy: that of the machine.
-// Limits: s → 0 the mass ρ/k_b; s → ∞ the resistance ρc.
+// Check value: s = 0.6 gives the mass 1.25, s = 1.25 the resistance 5/3, far from
+// the floor. Limits: s → 0 the mass ρ/k_b; s → ∞ the resistance ρc.
 //
-// Source: Junger & Feit 1986, chapter 8; Cremer, Heckl & Petersson 2005, chapter 6.
+// Source: Junger & Feit 1986, chapter 8; Cremer, Heckl & Petersson 2005, chapter 6
+// (from memory).
 func FlexuralWaveLoading(s, kbL float64) (mass, resistance float64, err error) {
 	const name = "FlexuralWaveLoading"
 	if err := inRange(name, "s", s, 0, 1e8); err != nil {

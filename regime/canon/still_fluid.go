@@ -264,7 +264,7 @@ var stillFluidEntries = []*Entry{
 		Problem:  "flexural wave in an infinite plate, a compressible fluid on one face",
 		Equation: "s < 1: added mass per area (ρ/k_b)/√(1 − s²); s ≥ 1: resistance per area ρc/√(1 − 1/s²); s = k₀/k_b, |1 − s²| not below min(1, π/(k_b L))",
 		Args: []Arg{
-			{Name: "s", Symbol: "s", Doc: "wave number of sound over that of the flexural wave", Min: 0, Max: 1e8, From: 0, To: 3},
+			{Name: "s", Symbol: "s", Doc: "wave number of sound over that of the flexural wave", Min: 0, Max: 1e8, From: 0, To: 3, Typical: 2},
 			{Name: "kbL", Symbol: "k_b L", Doc: "flexural wave number times the length of the plate, which sets the floor at coincidence", Min: 1e-3, Max: 1e12, Typical: 100},
 		},
 		Outputs: []Output{

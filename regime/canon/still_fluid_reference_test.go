@@ -61,7 +61,7 @@ func stillFluidError(got, want float64) float64 {
 func TestStillFluidAgainstHighPrecision(t *testing.T) {
 	const tolerance = 1e-9
 	rows := stillFluidTable(t, "testdata/still_fluid_reference.csv")
-	count := map[string]int{}
+	count, values := map[string]int{}, map[string]int{}
 	worst := map[string]float64{}
 	for _, row := range rows {
 		entry := Find(row.name)
@@ -85,6 +85,10 @@ func TestStillFluidAgainstHighPrecision(t *testing.T) {
 			}
 		}
 		count[row.name]++
+		values[row.name] += len(row.want)
+	}
+	for name, n := range values {
+		tally(t, name, referenceTable, n)
 	}
 	for name, n := range count {
 		t.Logf("%s: %d rows, worst %.1e", name, n, worst[name])

@@ -280,6 +280,7 @@ func TestOscillatingCylinderEnergy(t *testing.T) {
 	if len(rows) != 5 {
 		t.Errorf("ran %d rows, want 5", len(rows))
 	}
+	tally(t, "OscillatingCylinder", "kinetic energy and dissipation of the flow", 2*len(rows))
 }
 
 // stillFluidSolve solves a small complex system by elimination with pivots.
@@ -356,6 +357,8 @@ func TestCylinderInShellCoefficientsAndEnergy(t *testing.T) {
 	if len(rows) != 11 {
 		t.Errorf("ran %d rows, want 11", len(rows))
 	}
+	tally(t, "CylinderInShell", "the four coefficients, solved as they stand", 2*len(rows))
+	tally(t, "CylinderInShell", "kinetic energy and dissipation of the flow", 2*len(rows))
 }
 
 // Kelvin: of all flows with these normal velocities the potential flow has the
@@ -381,6 +384,7 @@ func TestCylinderInShellMinimumPrinciples(t *testing.T) {
 			rt.Errorf("R %g: free Γr = %g, %v", stokes, free, err)
 		}
 	})
+	tally(t, "CylinderInShell", "minimum principles of Kelvin and Helmholtz", 2)
 }
 
 func TestCylinderInShellLimits(t *testing.T) {
@@ -424,6 +428,8 @@ func TestCylinderInShellLimits(t *testing.T) {
 	if ran != 27 {
 		t.Errorf("ran %d rows, want 27", ran)
 	}
+	tally(t, "CylinderInShell", "wide shell: the free cylinder", 8)
+	tally(t, "CylinderInShell", "narrow gap: viscous film", 32)
 }
 
 func TestOscillationLimits(t *testing.T) {
@@ -485,6 +491,7 @@ func TestOscillationLimits(t *testing.T) {
 	if ran != 7 {
 		t.Errorf("ran %d rows, want 7", ran)
 	}
+	tally(t, "OscillatingRibbon", "the circular cylinder in creeping flow", 2)
 }
 
 // The images summed as the recurrence gives them.
@@ -540,6 +547,9 @@ func TestImagesRecurrence(t *testing.T) {
 	if ran != 23 {
 		t.Errorf("ran %d rows, want 23", ran)
 	}
+	tally(t, "CylinderNearWall", "images by their recurrence", 10)
+	tally(t, "CylinderNearWall", "almost touching: π²/3 − 1 − 4√e", 3)
+	tally(t, "CylinderBelowSurface", "images by their recurrence", 20)
 }
 
 // The power at infinity is that at the surface: Γi π x² |H₁′|²/2 = 1, with the
@@ -556,6 +566,7 @@ func TestSoundCylinderRadiatedPower(t *testing.T) {
 			rt.Errorf("x = %g: radiated power over surface power %.15g", x, p)
 		}
 	})
+	tally(t, "SoundCylinder", "radiated power", 1)
 }
 
 // The sphere from its Hankel function h₁⁽²⁾(x) = e^{−ix}(i/x² − 1/x).
@@ -574,6 +585,7 @@ func TestSoundSphereFromHankel(t *testing.T) {
 			rt.Errorf("x = %g: %g, %g, want %v", x, gr, gi, want)
 		}
 	})
+	tally(t, "SoundSphere", "spherical Hankel function", 1)
 }
 
 // The resistance is the power in the far field, ∫ directivity² sin θ dθ.
@@ -594,6 +606,7 @@ func TestBaffledPistonRadiatedPower(t *testing.T) {
 	if len(rows) != 8 {
 		t.Errorf("ran %d rows, want 8", len(rows))
 	}
+	tally(t, "BaffledPiston", "radiated power", len(rows))
 }
 
 // Struve's function from its integral (2x/π)∫₀^{π/2} sin(x cos θ) sin²θ dθ.
@@ -610,6 +623,7 @@ func TestStruveIntegral(t *testing.T) {
 	if ran != 26 {
 		t.Errorf("ran %d rows, want 26", ran)
 	}
+	tally(t, "BaffledPiston", "Struve's integral", ran)
 }
 
 func TestSoundLimits(t *testing.T) {
@@ -678,6 +692,8 @@ func TestFlexuralWaveLoading(t *testing.T) {
 			rt.Errorf("s %g: impedance %g, want %g", s, z, want)
 		}
 	})
+	tally(t, "FlexuralWaveLoading", "Pythagorean wave numbers, by hand", 2*len(rows))
+	tally(t, "FlexuralWaveLoading", "impedance of the fluid", 1)
 }
 
 func TestThinFilmLimits(t *testing.T) {
@@ -739,6 +755,7 @@ func TestThinFilmDoubleSeries(t *testing.T) {
 	if ran != 12 {
 		t.Errorf("ran %d rows, want 12", ran)
 	}
+	tally(t, "ThinFilm", "double series, term by term, from both sides", 2*ran)
 }
 
 // Published behaviour, from memory of Blech 1983: the damping of a square plate is
@@ -766,6 +783,8 @@ func TestThinFilmPublished(t *testing.T) {
 	if len(rows) != 2 {
 		t.Errorf("ran %d rows, want 2", len(rows))
 	}
+	tally(t, "ThinFilm", "cut-off of strip and square", 2*len(rows))
+	tally(t, "ThinFilmLiquid", "square plate 0.42", 1)
 }
 
 func TestVeijolaViscosity(t *testing.T) {
@@ -782,6 +801,7 @@ func TestVeijolaViscosity(t *testing.T) {
 		t.Fatal(err)
 	}
 	stillFluidNear(t, "slip flow", got, 1/(1+6*0.03), 0.03)
+	tally(t, "VeijolaViscosity", "slip flow", 1)
 }
 
 // The imaginary part is what the wall shear dissipates, the real part what moves.
@@ -819,6 +839,7 @@ func TestPulsatileTubeEnergy(t *testing.T) {
 		stillFluidNear(t, "slow re", re, a2*a2/48, 1e-7)
 		stillFluidNear(t, "slow im", im, a2/8, 1e-7)
 	}
+	tally(t, "PulsatileTube", "kinetic energy and dissipation of the flow", 2*len(rows))
 }
 
 // The check values that the documentation of the functions gives.

@@ -18,7 +18,7 @@ import "math"
 //
 // Check: λ² = 4π²: n = 1 gives 2π; λ² → ∞: 2.861π.
 //
-// Source: Irvine & Caughey 1974.
+// Source: Irvine & Caughey 1974 (from memory).
 func StringMode(n int, sag float64) (float64, error) {
 	const name = "StringMode"
 	if err := inRange(name, "n", float64(n), 1, beamModeLimit); err != nil {
@@ -78,7 +78,7 @@ func sagRoot(n int, sag float64) float64 {
 //
 // Check: n = 2: 6/√5 = 2.6833; n = 3: 24/√10 = 7.5895.
 //
-// Source: Love 1927, section 293.
+// Source: Love 1927, section 293 (from memory).
 func RingMode(n int) (float64, error) {
 	if err := inRange("RingMode", "n", float64(n), 2, 1000); err != nil {
 		return 0, err
@@ -112,7 +112,7 @@ var tubeEndNames = []string{"axially-free", "axially-held"}
 //
 // Check: held, ν = 0.3: 1.04828.
 //
-// Source: Love 1927, section 293; Blevins 1979, table 12-1.
+// Source: Love 1927, section 293; Blevins 1979, table 12-1 (from memory).
 func BreathingTube(ends TubeEnds, nu float64) (float64, error) {
 	const name = "BreathingTube"
 	if ends != AxiallyFree && ends != AxiallyHeld {

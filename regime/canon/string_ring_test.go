@@ -29,6 +29,8 @@ func TestStringMode(t *testing.T) {
 			t.Fatalf("mode %d at %g π", n, ω/math.Pi)
 		}
 	})
+	tally(t, "StringMode", "published crossover 2π and 2.861π", 2)
+	tally(t, "StringMode", "residual of the frequency equation", 1)
 }
 
 func TestRingAndTube(t *testing.T) {
@@ -43,4 +45,6 @@ func TestRingAndTube(t *testing.T) {
 	structureClose(t, "free", must(BreathingTube(AxiallyFree, 0.3)), 1, 0)
 	structureClose(t, "held", must(BreathingTube(AxiallyHeld, 0.3)), 1/math.Sqrt(0.91), 1e-15)
 	structureClose(t, "no Poisson effect", must(BreathingTube(AxiallyHeld, 0)), 1, 0)
+	tally(t, "RingMode", "published 2.683 and 7.589", 2)
+	tally(t, "BreathingTube", "ν = 0.3 by hand", 1)
 }

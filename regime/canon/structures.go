@@ -144,7 +144,7 @@ func beamEndArgs(side string, typical float64) []Arg {
 	return []Arg{
 		{Name: side + "Translation", Symbol: "kL³/EI", Doc: "spring across the " + side + " end; 1e12: held", Min: 0, Max: rigidSpring, Typical: typical, From: 0.01, To: 1e6},
 		{Name: side + "Rotation", Symbol: "kθL/EI", Doc: "rotational spring at the " + side + " end; 1e12: held", Min: 0, Max: rigidSpring, Typical: typical, From: 0.01, To: 1e6},
-		{Name: side + "Mass", Symbol: "M", Doc: "mass at the " + side + " end over the mass of the beam", Min: 0, Max: beamTipMassLimit},
+		{Name: side + "Mass", Symbol: "M", Doc: "mass at the " + side + " end over the mass of the beam", Min: 0, Max: beamTipMassLimit, From: 0, To: 5},
 	}
 }
 
@@ -152,7 +152,7 @@ var elasticBeamModeEntry = &Entry{
 	Name:     "ElasticBeamMode",
 	Problem:  "bending modes of a uniform beam on elastic ends with end masses",
 	Equation: "ω = β²√(EI/(mL⁴)); det[K(β) + springs − masses β⁴] = 0",
-	Args:     append(append(beamEndArgs("left", rigidSpring), beamEndArgs("right", 1e-6)...), beamModeNumber(1000)),
+	Args:     append(append(beamEndArgs("left", rigidSpring), beamEndArgs("right", 1e-6)...), beamModeNumber(elasticBeamModeLimit)),
 	Outputs:  []Output{{ID: "beta", Symbol: "β", Doc: "wave number times length"}},
 	Accuracy: 1e-8, Factor: 1.1,
 	Sources: []*cite.Source{cite.WittrickWilliams1971, cite.Blevins1979},
@@ -173,7 +173,7 @@ var tensionedBeamEntry = &Entry{
 	Problem:  "effect of axial tension or compression on the natural frequency of a beam",
 	Equation: "pinned-pinned ω/ω₀ = √(1 + τ/(n²π²)), τ = TL²/EI; others by the boundary determinant",
 	Args: []Arg{
-		{Name: "support", Doc: "supports of the two ends", Choices: beamSupportNames[:FreeFree]}, beamModeNumber(1000),
+		{Name: "support", Doc: "supports of the two ends", Choices: beamSupportNames[:FreeFree]}, beamModeNumber(elasticBeamModeLimit),
 		{Name: "tension", Symbol: "τ", Doc: "TL²/EI, negative in compression", Min: -4 * math.Pi * math.Pi, Max: tensionLimit, From: -20, To: 200},
 	},
 	Outputs:  []Output{{ID: "frequency_ratio", Symbol: "ω/ω₀", Doc: "frequency over that without tension"}},
@@ -315,7 +315,7 @@ var circularPlateAddedMassEntry = &Entry{
 	Sources: []*cite.Source{cite.Lamb1920, cite.McLachlan1932},
 	Note:    "Clamped first mode: 0.6538 with the exact shape; Lamb's trial shape (1 − r²/a²)² gives 0.6689, 2.3 % more. Twice as much with fluid on both sides.",
 	Limits: []Limit{
-		{"infinite plate, ρ/k_b: 1/λ", "coefficient", High, 0.05, func(v []float64) float64 {
+		{"infinite plate, ρ/k_b: 1/λ", "coefficient", High, 0.25, func(v []float64) float64 {
 			return 1 / discRoot(CircularEdge(v[0]), int(v[1]), int(v[2]), v[3])
 		}},
 	},
@@ -332,7 +332,7 @@ var circularPlateAddedMassEntry = &Entry{
 var baffledLoadingOutputs = []Output{
 	{ID: "mass", Symbol: "μ̂", Doc: "added mass per area over ρa; added mass ratio over ρa/(ρ_s h)"},
 	{ID: "resistance", Symbol: "r̂", Doc: "radiation resistance per area over ρc"},
-	{ID: UncertaintyID, Symbol: "δ", Doc: "change of either that finer integration makes"},
+	{ID: UncertaintyID, Symbol: "δ", Doc: "twice the change of either that finer integration makes"},
 }
 
 var baffledCircularPlateModeEntry = &Entry{

@@ -14,7 +14,7 @@ const (
 // never cancels, the middle; Y₁ and the expansion in 1/x² the far range.
 //
 // Relative accuracy 1e-13. Check value: H₁(2) = 0.64676372828356.
-// Source: Abramowitz & Stegun 1964, 12.1.5, 12.1.20, 12.1.31.
+// Source: Abramowitz & Stegun 1964, 12.1.5, 12.1.20, 12.1.31 (from memory).
 func struveH1(x float64) float64 {
 	switch {
 	case x <= struveNear:

@@ -1,8 +1,37 @@
 package canon
-import ("testing";"fmt")
+import ("testing";"fmt";"syscall")
+func cpu() float64 { var r syscall.Rusage; syscall.Getrusage(0,&r); return float64(r.Utime.Sec+r.Stime.Sec)+float64(r.Utime.Usec+r.Stime.Usec)*1e-6 }
+func per(name string, n int, f func()) { best:=1e9; for range 5 { t:=cpu(); for range n { f() }; if d:=(cpu()-t)/float64(n)*1e6; d<best {best=d} }; fmt.Printf("%s %.2f µs cpu\n",name,best) }
 func TestZZ(t *testing.T){
- for _,q:=range [][]any{{"ThinFilm",[]float64{10,1}},{"ThinFilm",[]float64{1e-6,1}},{"ThinFilm",[]float64{3000,.5}},{"ThinFilm",[]float64{3300,.5}},{"ConveyingPipe",[]float64{.2}},{"ConveyingPipe",[]float64{.294}},{"ConveyingPipe",[]float64{.2,10}},{"ConveyingPipe",[]float64{.95,40,.01}},{"ConveyingPipe",[]float64{.9,100}},{"CircularPlateAddedMass",[]float64{0,0}},{"CircularPlateAddedMass",[]float64{0,10,10}},{"BaffledCircularPlateMode",[]float64{1,0,0,.3,1}},{"BaffledCircularPlateMode",[]float64{0,10,10,.3,60}},{"BaffledPlateMode",[]float64{0,0,1,1,1,1}},{"BaffledPlateMode",[]float64{2,2,1,10,10,60}},{"PanelFlutter",[]float64{}},{"PanelFlutter",[]float64{20}},{"PanelFlutter",[]float64{2,3}}}{
-  v,err:=Find(q[0].(string)).Evaluate(q[1].([]float64)); fmt.Println(q,v,err)
- }
- for _,e:=range All(){ i:=e.Sweep(); if i<0 {fmt.Println(e.Name,"none");continue}; a:=&e.Args[i]; f,to:=a.Window(); u:=[]float64{}; for k:=range e.Args{u=append(u,e.Args[k].Usual())}; v,err:=e.Evaluate(u); fmt.Println(e.Name,a.Name,f,to,u,v,err)}
+ per("panel10",100,func(){PanelFlutter(10,0)})
+ per("panel20",40,func(){PanelFlutter(20,0)})
+ per("panel8",100,func(){PanelFlutter(8,0)})
+ var p panel; p.modes=20
+ per("solve20",100,func(){p.solve(343)})
+ p.modes=10
+ per("solve10",100,func(){p.solve(343)})
+ for _,c:=range [][3]float64{{.2,0,0},{.5,0,0},{.8,0,0},{.95,0,0},{.9,100,0},{.5,10,0},{.9,0,1e-3},{.9,0,.1},{.2,-5,0},{.9,40,.01}} { per(fmt.Sprint("pipe ",c),20,func(){ConveyingPipe(c[0],c[1],c[2],PipeCantilever)}) }
+ per("flutter",50,func(){SectionFlutter(20,-.2,.1,.24,.4,0,0)})
+ per("flutter damped",50,func(){SectionFlutter(20,-.2,.1,.24,.4,0.01,0.01)})
+ for _,c:=range []plateKey{{edges:[4]byte([]byte("CCCC")),aspect:1,m:1,n:1,nu:.3},{edges:[4]byte([]byte("CFFF")),aspect:1,m:1,n:1,nu:.3},{edges:[4]byte([]byte("CCFF")),aspect:1,m:3,n:1,nu:.3},{edges:[4]byte([]byte("FFFF")),aspect:1,m:1,n:1,nu:.3},{edges:[4]byte([]byte("CCCC")),aspect:1,m:10,n:10,nu:.3},{edges:[4]byte([]byte("CFFF")),aspect:10,m:10,n:1,nu:.3},{edges:[4]byte([]byte("CCFF")),aspect:1,m:10,n:1,nu:.3}} { per("plate "+string(c.edges[:])+fmt.Sprint(c.m),5,func(){solvePlate(c)}) }
+ per("shell general 1000",3000,func(){CylinderInShell(1000,1.5)})
+ per("shell general 100",3000,func(){CylinderInShell(100,2)})
+ per("shell gap",3000,func(){CylinderInShell(1,1.4)})
+ per("shell power",3000,func(){CylinderInShell(1,2)})
+ per("cyl 6",3000,func(){OscillatingCylinder(6)})
+ per("cyl 10",3000,func(){OscillatingCylinder(10)})
+ per("cyl 100",3000,func(){OscillatingCylinder(100)})
+ per("cyl 400",3000,func(){OscillatingCylinder(400)})
+ per("ribbon 10",3000,func(){OscillatingRibbon(10)})
+ per("film",3000,func(){ThinFilm(30,.3)})
+ per("film3000",3000,func(){ThinFilm(3000,.3)})
+ per("tube13",3000,func(){PulsatileTube(13)})
+ per("theo",3000,func(){Theodorsen(.3)})
+ per("theo40",3000,func(){Theodorsen(40)})
+ per("sound19",3000,func(){SoundCylinder(19)})
+ per("piston19",3000,func(){BaffledPiston(19)})
+ per("piston1",3000,func(){BaffledPiston(1)})
+ per("diffr",3000,func(){CylinderDiffraction(.7)})
+ per("elastic",200,func(){ElasticBeamMode(BeamEnd{Translation:1e12,Rotation:10},BeamEnd{Translation:3},1)})
+ per("disc",200,func(){CircularPlateMode(CircularFree,3,3,.3)})
 }

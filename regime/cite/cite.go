@@ -16,7 +16,7 @@ type Source struct {
 // All lists every source, in the order of the files of this package.
 func All() []*Source {
 	var all []*Source
-	for _, list := range [][]*Source{stillFluid, flow, structures, fluids, standards, method, assumptions} {
+	for _, list := range [][]*Source{stillFluid, flow, structures, fluids, standards, method, assumptions, internalFlow} {
 		all = append(all, list...)
 	}
 	return all

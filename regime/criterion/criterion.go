@@ -8,6 +8,10 @@ import "regimed/regime/finding"
 // append-only.
 var All = []*finding.Criterion{
 	asmeN1324, dnvC205, en199114, ptc193,
+	enGalloping, enDivergence,
+	pettigrewTaylor, asmeN1331Lower, asmeN1331Mean, connors,
+	dnvC205Slender, api650Convective, api650Period, api650Freeboard,
+	asmeB314,
 }
 
 // Find returns the criterion of that id, or nil.

@@ -25,7 +25,7 @@ var (
 		Standard: "DNV-RP-C205", Edition: "from memory, edition not checked", Clause: "section 9",
 		Formula:  "across: V_R outside 3 … 16; along: V_R outside 1 … 4.5 or Sc > 1.8",
 		Source:   cite.DNVC205,
-		Applies:  func(x *finding.Context) bool { return x.Is(group.Circular | group.Liquid) },
+		Applies:  func(x *finding.Context) bool { return x.Is(group.Circular|group.Liquid) && !x.Is(group.Array) },
 		Estimate: dnv,
 		Say:      finding.Say("By DNV-RP-C205 lock-in stands at {u} of what would exclude it."),
 	}
@@ -34,7 +34,7 @@ var (
 		Standard: "EN 1991-1-4", Edition: "2005, from memory", Clause: "E.1.2(2)",
 		Formula:  "v_crit = b n/St > 1.25 v_m, v_m the highest mean speed of operation",
 		Source:   cite.EN1991LockIn,
-		Applies:  func(x *finding.Context) bool { return x.Is(group.Gas | group.Bluff) },
+		Applies:  func(x *finding.Context) bool { return x.Is(group.Gas|group.Bluff) && !x.Is(group.Array) },
 		Estimate: en,
 		Say:      finding.Say("By EN 1991-1-4 E.1.2 the highest speed of operation stands at {u} of the critical speed over 1.25."),
 	}
@@ -43,7 +43,7 @@ var (
 		Standard: "ASME PTC 19.3 TW", Edition: "2016, from memory", Clause: "sections 6 to 8",
 		Formula:  "f_v < 0.8 f_n; along: f_v < 0.4 f_n or Sc > 2.5; both suppressed for Sc > 64",
 		Source:   cite.PTC193TW,
-		Applies:  func(x *finding.Context) bool { return x.Is(group.Circular | group.Cantilever) },
+		Applies:  func(x *finding.Context) bool { return x.Is(group.Circular|group.Cantilever) && !x.Is(group.Array) },
 		Estimate: ptc,
 		Say:      finding.Say("By ASME PTC 19.3 TW the shedding frequency stands at {u} of its limit."),
 	}

@@ -38,7 +38,7 @@ func (x *Context) Publish(list []*Criterion, assumption string) {
 		if c.Assumption != assumption {
 			continue
 		}
-		picked := x.Picked == c
+		picked := x.Picked.Has(c)
 		if !picked && !c.Applies(x) {
 			continue
 		}

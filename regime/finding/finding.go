@@ -2,6 +2,8 @@ package finding
 
 import (
 	"math"
+	"slices"
+	"sync"
 
 	"regimed/regime/cite"
 	"regimed/regime/group"
@@ -103,14 +105,49 @@ const Room = 80
 
 // NewContext makes the context for a number of findings.
 func NewContext(g *group.Set, s Study, findings int) *Context {
-	return &Context{Set: g, Study: s, Made: make([]Finding, findings), arena: make([]Part, 0, Room)}
+	x := contexts.Get().(*Context)
+	made, arena := x.Made, x.arena
+	if cap(made) < findings {
+		made, arena = make([]Finding, findings), make([]Part, 0, Room)
+	}
+	made = made[:findings]
+	clear(made)
+	*x = Context{Set: g, Study: s, Made: made, arena: arena[:0]}
+	return x
 }
+
+var contexts = sync.Pool{New: func() any { return new(Context) }}
+
+// Release gives the memory of the findings back; nothing may use them
+// afterwards.
+func (x *Context) Release() { contexts.Put(x) }
 
 // Study is how the analyst wants a case judged.
 type Study struct {
 	Tolerance Tolerance
 	Interest  Interest
-	Picked    *Criterion // the criterion that the case asks for, or nil
+	Picked    Picks // the criteria that the case asks for
+}
+
+// Picks are the criteria that a case lets decide, one a field of the case.
+type Picks [5]*Criterion
+
+// Has reports whether a criterion was picked.
+func (p *Picks) Has(c *Criterion) bool { return slices.Contains(p[:], c) }
+
+// IDs lists the picked criteria by id, "" where none was picked.
+func (p *Picks) IDs() string {
+	ids := ""
+	for _, c := range p {
+		switch {
+		case c == nil:
+		case ids == "":
+			ids = c.ID
+		default:
+			ids += ", " + c.ID
+		}
+	}
+	return ids
 }
 
 // Begin directs what follows into a finding.

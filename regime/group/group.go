@@ -6,7 +6,10 @@
 // package kind, which fills a Set; what a group means stands in the table here.
 package group
 
-import "math"
+import (
+	"math"
+	"sync"
+)
 
 // ID names a group. The list is append-only.
 type ID uint8
@@ -137,9 +140,15 @@ func (s *Set) Drop(id ID) {
 	s.state[id] = Absent
 }
 
+var sets = sync.Pool{New: func() any { return new(Set) }}
+
+// Release gives the memory of a set back; nothing may use it afterwards.
+func (s *Set) Release() { sets.Put(s) }
+
 // New returns a set in which no group has a value.
 func New() *Set {
-	s := &Set{}
+	s := sets.Get().(*Set)
+	*s = Set{}
 	for i := range s.x {
 		s.x[i] = math.NaN()
 	}

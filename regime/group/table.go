@@ -128,6 +128,57 @@ const (
 	SloshingDamping
 	WaveMagnification
 
+	ReducedFrequencyTorsion
+	TorsionRatio
+	FlutterIndex
+	AspectRatio
+	GallopingInteraction
+	CriticalSpeedRatio
+	GustBackground
+	GustResonance
+	ChordReynolds
+	PitchRatio
+	ArrayMassDamping
+	FluidelasticSpeed
+	VoidFraction
+	DampingTwoPhase
+	DuctResonance
+	DuctMode
+	NeighbourAlong
+	NeighbourAcross
+	OvallingSpeed
+	OvallingMode
+	BodyReynolds
+
+	WallCompliance
+	WaveSpeedRatio
+	SurgeRatio
+	SurgePressure
+	SurgeSudden
+	ColumnSeparation
+	ColumnSeparationSudden
+	AxialCoupling
+	ColumnFrequency
+	ColumnMode
+	FrictionLoss
+	TransitRatio
+	WaveDiameter
+	FrontDiameter
+	PipeWeight
+	PipeCompression
+	Womersley
+	PulseTransit
+	PulseLength
+	WallStrain
+	ReynoldsPeak
+	SpeedIndex
+	PulseSpeed
+	PulseDecay
+	CollapsePressure
+	WallMassRatio
+
+	AddedMassSoftest
+
 	Count // number of groups
 )
 
@@ -232,7 +283,7 @@ var table = [Count]Def{
 	DampingFlow: {ID: "damping_flow", Symbol: "ζ_flow", Title: "flow damping ratio",
 		Definition: "damping by the mean flow; across a cylinder C_D ρ U D/(4 ω m_w) for motion along the stream"},
 	DampingTotal: {ID: "damping_total", Symbol: "ζ", Title: "total damping ratio",
-		Definition: "ζ_s + ζ_v + ζ_rad + ζ_flow"},
+		Definition: "ζ_s + ζ_v + ζ_rad + ζ_flow, in a mixture + ζ_TP"},
 
 	Displacement: {ID: "displacement", Symbol: "ξ/L", Title: "displacement ratio",
 		Definition: "amplitude of the motion / flow length"},
@@ -414,4 +465,104 @@ var table = [Count]Def{
 		Definition: "damping ratio of the first sloshing mode by the Stokes layers on walls and bottom"},
 	WaveMagnification: {ID: "wave_magnification", Symbol: "DAF", Title: "dynamic magnification in waves",
 		Definition: "1/√((1 − r²)² + (2ζr)²), r = f_wave/f_w"},
+
+	ReducedFrequencyTorsion: {ID: "reduced_frequency_torsion", Symbol: "k_α", Title: "reduced frequency of torsion",
+		Definition: "2π f_α b/U, f_α the dry frequency of torsion, b half the length along the flow"},
+	TorsionRatio: {ID: "torsion_ratio", Symbol: "f_α/f", Title: "torsion over bending frequency",
+		Definition: "dry frequency of torsion / dry frequency of bending"},
+	FlutterIndex: {ID: "flutter_speed_index", Symbol: "V_F", Title: "flutter speed index",
+		Definition: "U/(b ω_α √μ_s), μ_s = m/(πρb²), b half the length along the flow"},
+	AspectRatio: {ID: "aspect_ratio", Symbol: "A", Title: "aspect ratio",
+		Definition: "span between the free tips / chord; a wing that ends at a wall counts with its mirror image"},
+	GallopingInteraction: {ID: "galloping_interaction", Symbol: "U_CG/U_crit", Title: "galloping over critical speed",
+		Definition: "onset speed of galloping / speed at which shedding meets the first mode"},
+	CriticalSpeedRatio: {ID: "critical_speed_ratio", Symbol: "U/U_crit", Title: "critical speed ratio",
+		Definition: "highest speed of operation / speed at which shedding meets the first mode, f_w D/St"},
+	GustBackground: {ID: "gust_background", Symbol: "B²", Title: "background response to gusts",
+		Definition: "1/(1 + 0.9((b + ℓ)/L_u)^0.63), b the width across the wind, ℓ the length, L_u the length scale of the turbulence"},
+	ChordReynolds: {ID: "chord_reynolds", Symbol: "Re_B", Title: "Reynolds number of the breadth",
+		Definition: "U B/ν, B the length of the section along the flow"},
+	GustResonance: {ID: "gust_resonance", Symbol: "S_L R_ℓ R_b", Title: "gust energy at the mode",
+		Definition: "n S_u(n)/σ_u² at the natural frequency, times the size reductions over the length and the width"},
+	PitchRatio: {ID: "pitch_ratio", Symbol: "P/D", Title: "pitch ratio",
+		Definition: "distance between the axes of neighbouring tubes / diameter"},
+	ArrayMassDamping: {ID: "array_mass_damping", Symbol: "2πζm/(ρD²)", Title: "mass-damping of a tube array",
+		Definition: "2π ζ m/(ρ D²), ζ and m (tube, contents and added mass) in the fluid at rest"},
+	FluidelasticSpeed: {ID: "fluidelastic_speed", Symbol: "V_p/V_c", Title: "fluidelastic speed ratio",
+		Definition: "highest speed in the gaps in operation / K f_w D √(2π ζ m/(ρD²)), K = 3"},
+	VoidFraction: {ID: "void_fraction", Symbol: "ε_g", Title: "void fraction",
+		Definition: "volume of the gas / volume of the mixture"},
+	DampingTwoPhase: {ID: "damping_two_phase", Symbol: "ζ_TP", Title: "two-phase damping ratio",
+		Definition: "0.04 (ρ_ℓD²/m) f(ε_g) (1 + (D/D_e)³)/(1 − (D/D_e)²)²"},
+	DuctResonance: {ID: "duct_resonance", Symbol: "f_v/f_a", Title: "shedding over acoustic frequency",
+		Definition: "shedding frequency / n c_e/(2W), c_e = c/√(1 + σ), σ the solidity, at the worst speed of operation and for the worst mode"},
+	DuctMode: {ID: "duct_mode", Symbol: "n", Title: "acoustic mode across the duct",
+		Definition: "number of half waves of the acoustic mode nearest to the shedding frequency"},
+	NeighbourAlong: {ID: "neighbour_along", Symbol: "S_x/D", Title: "distance of the neighbour along the flow",
+		Definition: "distance of the axes along the flow / diameter"},
+	NeighbourAcross: {ID: "neighbour_across", Symbol: "S_y/D", Title: "distance of the neighbour across the flow",
+		Definition: "distance of the axes across the flow / diameter"},
+	OvallingSpeed: {ID: "ovalling_speed", Symbol: "U/U_ov", Title: "ovalling speed ratio",
+		Definition: "highest speed of operation / f_n D/(2 St), f_n the lowest shell mode of n ≥ 2 waves around"},
+	OvallingMode: {ID: "ovalling_mode", Symbol: "n", Title: "ovalling mode",
+		Definition: "waves around the circumference of the lowest shell mode"},
+	BodyReynolds: {ID: "body_reynolds", Symbol: "Re_D", Title: "Reynolds number of the leading body",
+		Definition: "U D/ν, D the diameter of the body that holds the structure"},
+	WallCompliance: {ID: "wall_compliance", Symbol: "ψ", Title: "compliance of the wall",
+		Definition: "c₁ K D/(E e): compliance of the wall of a tube / compressibility of the fluid in it, c₁ by anchoring"},
+	WaveSpeedRatio: {ID: "wave_speed_ratio", Symbol: "a/c", Title: "pressure wave speed ratio",
+		Definition: "1/√(1 + ψ): speed of pressure waves in the elastic tube / speed of sound"},
+	SurgeRatio: {ID: "surge_ratio", Symbol: "t_c a/(2ℓ)", Title: "closure time ratio",
+		Definition: "time of the change of the flow / return time 2ℓ_c/a of the pressure wave",
+		Bands:      []Band{{1, "sudden"}, {10, "slow for the wave"}, {huge, "rigid column"}}},
+	SurgePressure: {ID: "surge_pressure", Symbol: "Δp/p", Title: "surge pressure ratio",
+		Definition: "ρ a ΔU min(1, (2ℓ/a)/t_c) / gauge pressure inside"},
+	SurgeSudden: {ID: "surge_sudden", Symbol: "ρaΔU/p", Title: "surge pressure ratio of a sudden change",
+		Definition: "ρ a ΔU / gauge pressure inside"},
+	ColumnSeparation: {ID: "column_separation", Symbol: "Δp/(p−p_v)", Title: "surge over what parts the liquid from vapour",
+		Definition: "surge pressure / (absolute pressure − vapour pressure)"},
+	ColumnSeparationSudden: {ID: "column_separation_sudden", Symbol: "ρaΔU/(p−p_v)", Title: "sudden surge over what parts the liquid from vapour",
+		Definition: "ρ a ΔU / (absolute pressure − vapour pressure)"},
+	AxialCoupling: {ID: "axial_coupling", Symbol: "κa²/(c_s²−a²)", Title: "Poisson coupling of wall and fluid",
+		Definition: "κ a²/(c_s² − a²), κ = 4ν² m_f/m_p, c_s = √(E/ρ_s) the bar speed of the wall"},
+	ColumnFrequency: {ID: "column_frequency", Symbol: "f_w/f_a", Title: "column resonance ratio",
+		Definition: "wet natural frequency / nearest of the first three acoustic frequencies of the fluid column"},
+	ColumnMode: {ID: "column_mode", Symbol: "j", Title: "acoustic mode of the column",
+		Definition: "number of the acoustic mode of the fluid column that is nearest to the wet frequency"},
+	FrictionLoss: {ID: "friction_loss", Symbol: "fℓ/D", Title: "friction loss",
+		Definition: "Darcy friction factor × length of the column / inner diameter: pressure drop / (½ρU²)"},
+	TransitRatio: {ID: "transit_ratio", Symbol: "f_w ℓ/U", Title: "transit time over period",
+		Definition: "time that the flow takes through the tube / period of the motion"},
+	WaveDiameter: {ID: "wave_diameter", Symbol: "f D/a", Title: "diameter over pressure wavelength",
+		Definition: "wet natural frequency × inner diameter / pressure wave speed"},
+	FrontDiameter: {ID: "front_diameter", Symbol: "D/(π a t_c)", Title: "diameter over length of the wave front",
+		Definition: "inner diameter / (π × pressure wave speed × closure time)"},
+	PipeWeight: {ID: "pipe_weight", Symbol: "γ_w", Title: "weight over bending stiffness",
+		Definition: "(m + m_f − m_displaced) g ℓ³ sin(inclination)/(E I), positive where the downstream end hangs lower"},
+	PipeCompression: {ID: "pipe_compression", Symbol: "Π", Title: "axial compression over bending stiffness",
+		Definition: "((1 − 2ν) p A − T) ℓ²/(E I), p the gauge pressure inside, ends held along the axis"},
+	Womersley: {ID: "womersley", Symbol: "α", Title: "Womersley number",
+		Definition: "R √(ω/ν), R the inner radius, ω of the pulse",
+		Bands:      []Band{{1, "quasi-steady profile"}, {10, "viscous and inertial forces comparable"}, {huge, "thin boundary layer"}}},
+	PulseTransit: {ID: "pulse_transit", Symbol: "f ℓ/c", Title: "pulse transit over period",
+		Definition: "time that the pulse wave takes through the segment / period of the pulse"},
+	PulseLength: {ID: "pulse_length", Symbol: "R f/c", Title: "radius over pulse wavelength",
+		Definition: "inner radius × pulse frequency / pulse wave speed"},
+	WallStrain: {ID: "wall_strain", Symbol: "ε_θ", Title: "hoop strain of the pulse",
+		Definition: "Δp R/(E h), Δp the pulse pressure"},
+	ReynoldsPeak: {ID: "reynolds_peak", Symbol: "Re_peak", Title: "peak Reynolds number",
+		Definition: "peak speed × diameter / ν"},
+	SpeedIndex: {ID: "speed_index", Symbol: "U/c", Title: "speed index",
+		Definition: "highest speed of the flow / pulse wave speed",
+		Bands:      []Band{{1, "subcritical"}, {huge, "supercritical"}}},
+	PulseSpeed: {ID: "pulse_speed", Symbol: "c/c₀", Title: "viscous over inviscid pulse wave speed",
+		Definition: "phase speed by the profile of the Womersley number / Moens–Korteweg speed"},
+	PulseDecay: {ID: "pulse_decay", Symbol: "e^{−2πκ}", Title: "pulse left after one wavelength",
+		Definition: "amplitude of the pulse wave after one wavelength / before, by viscosity"},
+	CollapsePressure: {ID: "collapse_pressure", Symbol: "(p_e − p)/p_cr", Title: "collapse pressure ratio",
+		Definition: "external pressure above the lowest internal one / pressure under which the tube buckles into lobes"},
+	WallMassRatio: {ID: "wall_mass_ratio", Symbol: "ρ_s h/(ρR)", Title: "wall mass ratio",
+		Definition: "mass per area of the wall / (density of the fluid × radius)"},
+	AddedMassSoftest: {ID: "added_mass_ratio_softest", Symbol: "μ_max", Title: "largest added mass ratio",
+		Definition: "added mass / dry mass of that motion of a free body in which it is largest"},
 }

@@ -38,7 +38,16 @@ const (
 	Piercing                         // the body pierces the free surface
 	Sloshing                         // the liquid of a tank, with a free surface
 	Spectrum                         // the excitation is a spectrum, given by its acceleration at the mode
-	WaveLocked                       // the amplitude is that of a motion in waves
+	Elongated                        // a section more than twice as long along the flow as it is deep
+	BluntEdge                        // a streamlined body that sheds from a blunt trailing edge
+	Lifting                          // lift at incidence is what the flow does to the body
+	Array                            // a tube among tubes in cross flow
+	WakeOfBody                       // the structure lies in the wake of a bluff body that holds it
+	TwoPhase                         // the fluid is a mixture of a liquid and a gas
+	Duct                             // side walls between which sound can stand across the flow
+	Neighboured                      // another cylinder stands near, across or along the flow
+	Column                           // a column of fluid inside a tube
+	Pulsatile                        // a pulse runs through a compliant tube
 )
 
 // Flow are the traits that mean a mean flow.

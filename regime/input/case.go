@@ -1,10 +1,8 @@
 package input
 
 import (
-	"bytes"
 	"math"
 	"slices"
-	"strings"
 
 	"regimed/units"
 )
@@ -97,22 +95,6 @@ func (c *Case) Without(f *Field) *Case {
 
 func (c *Case) set(v Value) {
 	c.given = append(c.given, v)
-}
-
-// sorted returns what was given in the order of a canonical object: names of
-// the case itself and of blocks together, then names inside a block.
-func (c *Case) sorted() []*Value {
-	vs := make([]*Value, len(c.given))
-	for i := range c.given {
-		vs[i] = &c.given[i]
-	}
-	slices.SortFunc(vs, func(a, b *Value) int {
-		if d := strings.Compare(topName(a.Field), topName(b.Field)); d != 0 {
-			return d
-		}
-		return bytes.Compare([]byte(a.Field.Name), []byte(b.Field.Name))
-	})
-	return vs
 }
 
 func topName(f *Field) string {

@@ -3,7 +3,10 @@ package input
 import (
 	"crypto/sha256"
 	"encoding/hex"
+	"math"
+	"slices"
 	"strconv"
+	"strings"
 
 	"github.com/go-json-experiment/json/jsontext"
 
@@ -11,54 +14,67 @@ import (
 )
 
 // Canonical appends the case as canonical JSON (RFC 8785): what was given, in
-// SI, names sorted, numbers in the shortest form.
+// SI, names sorted, numbers as ECMAScript writes them.
 func (c *Case) Canonical(dst []byte) []byte {
-	start := len(dst)
 	dst = append(dst, '{')
-	block, open := "", false
-	wroteKind := false
-	for _, v := range c.sorted() {
-		if open && v.Field.Of != block {
+	block, first := "", true
+	for _, v := range c.canonicalOrder() {
+		name := topName(v.field)
+		if block != "" && name != block {
 			dst = append(dst, '}')
-			open = false
+			block = ""
 		}
-		if !open && v.Field.Of == "" {
-			dst = comma(dst, start)
-		}
-		if v.Field.Of != "" && !open {
-			dst = comma(dst, start)
-			dst = appendName(dst, v.Field.Of)
-			dst = append(dst, '{')
-			block, open = v.Field.Of, true
-			if block == "structure" {
-				dst = appendName(dst, "kind")
-				dst = appendString(dst, c.Kind)
-				wroteKind = true
-				dst = append(dst, ',')
-			}
-		} else if open {
+		if !first && (block == "" || name != block) {
 			dst = append(dst, ',')
 		}
-		dst = appendName(dst, v.Field.Name)
-		dst = v.append(dst)
+		first = false
+		switch {
+		case v.field.Of == "":
+			dst = appendName(dst, v.field.Name)
+			dst = v.value.append(dst)
+			continue
+		case block == "":
+			block = name
+			dst = append(appendName(dst, name), '{')
+		default:
+			dst = append(dst, ',')
+		}
+		dst = appendName(dst, v.field.Name)
+		if v.value == nil {
+			dst = appendString(dst, c.Kind)
+			continue
+		}
+		dst = v.value.append(dst)
 	}
-	if open {
+	if block != "" {
 		dst = append(dst, '}')
 	}
-	if !wroteKind {
-		dst = comma(dst, start)
-		dst = appendName(dst, "structure")
-		dst = append(dst, '{')
-		dst = appendName(dst, "kind")
-		dst = appendString(dst, c.Kind)
-		dst = append(dst, '}')
+	return append(dst, '}')
+}
+
+// kindField stands for the kind of the structure in the canonical order.
+var kindField = &Field{Name: "kind", Of: "structure"}
+
+type ordered struct {
+	field *Field
+	value *Value // nil: the kind
+}
+
+// canonicalOrder sorts what was given, and the kind, by the names of the case
+// itself and of its blocks together, then by the names inside a block.
+func (c *Case) canonicalOrder() []ordered {
+	list := make([]ordered, 0, len(c.given)+1)
+	list = append(list, ordered{field: kindField})
+	for i := range c.given {
+		list = append(list, ordered{c.given[i].Field, &c.given[i]})
 	}
-	dst = append(dst, '}')
-	doc := jsontext.Value(dst[start:])
-	if err := doc.Canonicalize(); err != nil {
-		return dst // only for text that is no valid UTF-8, which the decoder refuses
-	}
-	return append(dst[:start], doc...)
+	slices.SortFunc(list, func(a, b ordered) int {
+		if d := strings.Compare(topName(a.field), topName(b.field)); d != 0 {
+			return d
+		}
+		return strings.Compare(a.field.Name, b.field.Name)
+	})
+	return list
 }
 
 // Digest is the SHA-256 of the canonical case, in hexadecimal.
@@ -68,15 +84,9 @@ func (c *Case) Digest() string {
 	return hex.EncodeToString(sum[:])
 }
 
-func comma(dst []byte, start int) []byte {
-	if len(dst) > start+1 {
-		return append(dst, ',')
-	}
-	return dst
-}
-
+// appendName writes the name of a field, which needs no escape.
 func appendName(dst []byte, name string) []byte {
-	return append(appendString(dst, name), ':')
+	return append(append(append(dst, '"'), name...), '"', ':')
 }
 
 func appendString(dst []byte, s string) []byte {
@@ -87,8 +97,23 @@ func appendString(dst []byte, s string) []byte {
 	return out
 }
 
+// appendFloat writes a number as ECMAScript does: plain between 1e-6 and 1e21,
+// with the shortest exponent beyond.
 func appendFloat(dst []byte, x float64) []byte {
-	return strconv.AppendFloat(dst, x, 'g', -1, 64)
+	a := math.Abs(x)
+	if a == 0 {
+		return append(dst, '0')
+	}
+	if a >= 1e-6 && a < 1e21 {
+		return strconv.AppendFloat(dst, x, 'f', -1, 64)
+	}
+	start := len(dst)
+	dst = strconv.AppendFloat(dst, x, 'e', -1, 64)
+	if n := len(dst); n-start >= 4 && dst[n-2] == '0' && (dst[n-3] == '-' || dst[n-3] == '+') { // e-07
+		dst[n-2] = dst[n-1]
+		dst = dst[:n-1]
+	}
+	return dst
 }
 
 func (v *Value) append(dst []byte) []byte {
@@ -124,20 +149,20 @@ func (v *Value) append(dst []byte) []byte {
 }
 
 func appendQuantity(dst []byte, q *units.Quantity, k units.Kind) []byte {
-	dst = append(dst, `{"unit":`...)
-	dst = appendString(dst, k.SI())
-	dst = append(dst, `,"value":`...)
-	dst = appendFloat(dst, q.Value)
+	dst = append(dst, '{')
 	if q.Gauge {
-		dst = append(dst, `,"gauge":true`...)
+		dst = append(dst, `"gauge":true,`...)
 	}
 	switch q.Form {
-	case units.Normal:
-		dst = append(dst, `,"std":`...)
-		dst = appendFloat(dst, q.Spread)
 	case units.Uniform:
-		dst = append(dst, `,"half_width":`...)
-		dst = appendFloat(dst, q.Spread)
+		dst = append(dst, `"half_width":`...)
+		dst = append(appendFloat(dst, q.Spread), ',')
+	case units.Normal:
+		dst = append(dst, `"std":`...)
+		dst = append(appendFloat(dst, q.Spread), ',')
 	}
-	return append(dst, '}')
+	dst = append(dst, `"unit":"`...)
+	dst = append(dst, k.SI()...)
+	dst = append(dst, `","value":`...)
+	return append(appendFloat(dst, q.Value), '}')
 }

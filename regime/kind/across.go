@@ -12,6 +12,7 @@ import (
 // wake is the flow across a bluff body, solved for shedding, lock-in and drag.
 type wake struct {
 	shape      canon.SectionShape
+	ratio      float64 // length along the flow over width across it, for the tables
 	strouhal   float64 // own, NaN where it follows from shape and Reynolds number
 	drag       float64 // own, NaN likewise
 	lift       float64 // r.m.s. lift coefficient
@@ -96,11 +97,24 @@ func (w *wake) strouhalAt(re float64) (st, lo, hi float64) {
 		}
 		return w.strouhal, w.strouhal, w.strouhal
 	}
-	st, lo, hi, err := canon.Strouhal(math.Min(re, 1e10), w.shape, 1)
+	st, lo, hi, err := canon.Strouhal(math.Min(re, 1e10), w.shape, w.tableRatio())
 	if err != nil {
 		return math.NaN(), math.NaN(), math.NaN()
 	}
 	return st, lo, hi
+}
+
+// tableRatio is the side ratio within the tables of the shape, whose ends are
+// held beyond them.
+func (w *wake) tableRatio() float64 {
+	lo, hi := 1.0, 2.0
+	switch w.shape {
+	case canon.SectionRectangle:
+		lo, hi = 0.5, 10
+	case canon.SectionTee:
+		lo = 1.3
+	}
+	return math.Max(lo, math.Min(w.ratio, hi))
 }
 
 // rough reports whether the surface trips the boundary layer.

@@ -42,31 +42,41 @@ var Cylinder = &Kind{
 	Fields: modal(elastic(cylDiameter, cylRadius, cylLength, cylWall, cylMass, cylBending, cylContents, cylContentsDry, cylSupport, cylTension, cylEndStiffness,
 		cylMode, cylTip, cylRoughness, cylEnd, cylHeld, cylDrag, cylStrouhal, cylLift)...),
 	Directions: []string{"cross", "axial"},
+	Waves:      true,
 	New:        newCylinder,
 }
 
 // cylinder holds the solved problems of one cylinder.
 type cylinder struct {
-	d         float64
-	support   canon.BeamSupport
-	beam      bool // bends: a length or a mode shape is known
-	spring    bool // rigid on springs
-	n         int
-	factors   canon.BeamFactors
-	shell     float64 // D_s/D, NaN without
-	cover     float64 // above the top over D, NaN without
-	confined  float64 // added mass coefficient near walls
-	wake      wake
-	massRatio float64
-	bucklingU float64 // critical U, NaN where none
-	flutterU  float64
-	axialMass float64 // added mass per length in axial flow
-	u         float64 // dimensionless axial speed
-	beta      float64
+	d           float64
+	support     canon.BeamSupport
+	beam        bool // bends: a length or a mode shape is known
+	spring      bool // rigid on springs
+	n           int
+	factors     canon.BeamFactors
+	shell       float64 // D_s/D, NaN without
+	cover       float64 // above the top over D, NaN without
+	confined    float64 // added mass coefficient near walls
+	wake        wake
+	massRatio   float64
+	bucklingU   float64 // critical U, NaN where none
+	flutterU    float64
+	axialMass   float64 // added mass per length in axial flow
+	u           float64 // dimensionless axial speed
+	beta        float64
+	wet         float64 // share of the added mass that a partly wetted mode has
+	sea         sea
+	inertia     float64 // coefficient C_M in waves
+	diffracts   bool    // C_M is that of a standing cylinder that diffracts the waves
+	dragInertia float64
+	beside      neighbour
+	thin        bool    // a thin shell, whose section may oval
+	ovalling    float64 // frequency of the lowest shell mode
+	ovals       int     // its waves around
 }
 
 func newCylinder(r *Resolver) Physics {
-	c := &cylinder{shell: math.NaN(), cover: math.NaN(), bucklingU: math.NaN(), flutterU: math.NaN(), axialMass: math.NaN(), massRatio: math.NaN()}
+	c := &cylinder{shell: math.NaN(), cover: math.NaN(), bucklingU: math.NaN(), flutterU: math.NaN(), axialMass: math.NaN(), massRatio: math.NaN(), dragInertia: math.NaN(), wet: 1}
 	if !c.diameter(r) {
 		return c
 	}
@@ -82,6 +92,9 @@ func newCylinder(r *Resolver) Physics {
 	}
 	if r.Is(group.Axial) {
 		c.along(r)
+	}
+	if r.Is(group.Waves) {
+		c.inWaves(r)
 	}
 	c.strain(r)
 	return c
@@ -232,10 +245,15 @@ func (c *cylinder) addedMass(r *Resolver, displaced, contents float64, dry bool)
 	if !math.IsNaN(gap) {
 		r.derive(scale.Gap, gap, units.Length, "nearest gap")
 	}
-	r.derive(scale.AddedMassFree, displaced+contents, units.MassPerLength, "ρπD²/4, and contents")
 	how := "ρπD²/4, and contents"
+	if share := c.wettedShare(r); share < 1 {
+		c.wet = c.modalMean(share, 2, func(float64) float64 { return 1 })
+		displaced *= c.wet
+		how = fmt.Sprintf("%.3g ρπD²/4, the wetted part of the mode, and contents", c.wet)
+	}
+	r.derive(scale.AddedMassFree, displaced+contents, units.MassPerLength, how)
 	if c.confined > 1 {
-		how = fmt.Sprintf("%.4g ρπD²/4 between the walls, and contents", c.confined)
+		how = fmt.Sprintf("%.4g ρπD²/4 between the walls, and contents", c.confined*c.wet)
 	}
 	r.derive(scale.AddedMass, c.confined*displaced+contents, units.MassPerLength, how)
 	for _, id := range []scale.ID{scale.AddedMass, scale.AddedMassFree} {
@@ -348,7 +366,7 @@ func (c *cylinder) outside(s *scale.Set) float64 {
 	if !(added > 0) {
 		return 1
 	}
-	return c.confined * s.X(scale.DisplacedMass) / added
+	return c.confined * c.wet * s.X(scale.DisplacedMass) / added
 }
 
 // viscous is Γ at S = ωa²/ν per ideal added mass as confined.
@@ -393,6 +411,8 @@ var modeFactors = map[canon.BeamSupport]float64{
 
 // across solves the flow across the cylinder.
 func (c *cylinder) across(r *Resolver) {
+	c.beside = r.neighbour(c.d)
+	c.oval(r)
 	c.wake = wake{shape: canon.SectionCircle, strouhal: r.c.X(cylStrouhal), drag: r.c.X(cylDrag), lift: defaultLift,
 		roughness: r.c.X(cylRoughness) / c.d, modeFactor: modeFactors[c.support], modes: c.modeRatios(r), first: c.n}
 	if v := r.c.Lookup(cylLift); v != nil {
@@ -490,6 +510,9 @@ func (c *cylinder) Groups(s *scale.Set, g *group.Set) {
 		c.crossGroups(s, g)
 	case g.Is(group.Axial):
 		c.axialGroups(s, g)
+	}
+	if g.Is(group.Waves) {
+		c.waveGroups(s, g)
 	}
 	massDamping(s, g, c.massRatio, 1, math.Pi/4)
 }
@@ -624,6 +647,8 @@ func (c *cylinder) dragDamping(s *scale.Set, g *group.Set) {
 
 // crossGroups puts what flow across makes.
 func (c *cylinder) crossGroups(s *scale.Set, g *group.Set) {
+	c.beside.groups(g)
+	c.ovallingGroups(s, g)
 	c.wake.groups(s, g)
 	g.Drop(group.ReducedFrequency)
 	g.Put(group.FlowStiffness, 0) // by symmetry: drag does not change with the place
@@ -633,6 +658,7 @@ func (c *cylinder) crossGroups(s *scale.Set, g *group.Set) {
 	}
 	g.Put(group.SuctionPeak, suctionOfCylinder(g.Get(group.Reynolds)))
 	putOrWait(s, g, group.SpanRatio, c.d/s.X(scale.Span), scale.Span)
+	gusts(s, g, c.d)
 }
 
 // suctionOfCylinder is −Cp_min: 1.2 in a subcritical wake, up to the 3 of

@@ -47,11 +47,13 @@ var (
 	FluidPrandtl       = pure("prandtl_number", "gt=0", "Prandtl number", "0.7 for a gas by values")
 	fluidBlock         = &input.Block{Name: "fluid", Title: "Fluid", Doc: "the fluid around or inside the structure: by name with its state, or by values", Shorthand: FluidName, Fields: []*input.Field{FluidName, FluidPhase, FluidTemperature, FluidPressure, FluidSalinity, FluidDensity, FluidViscosity, FluidKinematic, FluidSoundSpeed, FluidVapour, FluidTension, FluidHeatRatio, FluidPrandtl}}
 	FlowSpeed          = quantity("speed", units.Speed, "gte=0", "speed of the free stream", "")
-	FlowDirection      = choice("direction", "how the flow runs to the structure: across it, along it, or over its surface", "the usual one of the kind", "cross", "axial", "grazing")
+	FlowGapSpeed       = quantity("gap_speed", units.Speed, "gt=0", "speed in the gaps of a tube array, in place of that of the free stream; the speeds of operation then are in the gaps too", "U P/(P − D)")
+	FlowDirection      = choice("direction", "how the flow runs to the structure: across it, along it, over its surface, or inside it", "the usual one of the kind", "cross", "axial", "grazing", "internal")
 	FlowTurbulence     = pure("turbulence_intensity", "gte=0,lte=2", "r.m.s. of the speed over the mean speed", "not considered")
+	FlowGustLength     = quantity("turbulence_length", units.Length, "gt=0", "length scale of the turbulence along the flow; in natural wind some 50 to 300 m", "")
 	FlowOperating      = &input.Field{Name: "operating", Type: input.Interval, Kind: units.Speed, Rule: "gte=0", Doc: "lowest and highest speed in service", Default: "from 0 to the speed"}
 	FlowIncidence      = quantity("incidence", units.Angle, "gte=-1.6,lte=1.6", "steady angle between the flow and the chord of a streamlined body", "0 deg")
-	flowBlock          = &input.Block{Name: "flow", Title: "Mean flow", Doc: "the mean flow; without it the fluid is at rest", Fields: []*input.Field{FlowSpeed, FlowDirection, FlowTurbulence, FlowOperating, FlowIncidence}}
+	flowBlock          = &input.Block{Name: "flow", Title: "Mean flow", Doc: "the mean flow; without it the fluid is at rest", Fields: []*input.Field{FlowSpeed, FlowGapSpeed, FlowDirection, FlowTurbulence, FlowGustLength, FlowOperating, FlowIncidence}}
 	MotionAmplitude    = quantity("amplitude", units.Length, "gte=0", "largest amplitude of the motion", "")
 	MotionFrequency    = quantity("frequency", units.Frequency, "gt=0", "frequency of a forced motion", "the wet natural frequency")
 	motionBlock        = &input.Block{Name: "motion", Title: "Motion", Doc: "the motion that matters", Fields: []*input.Field{MotionAmplitude, MotionFrequency}}
@@ -61,7 +63,10 @@ var (
 	ShellDiameter      = quantity("shell_diameter", units.Length, "gt=0", "diameter of a concentric shell around a cylinder", "no shell")
 	DepthBelowSurface  = quantity("depth_below_surface", units.Length, "gt=0", "depth of the axis or the middle below a free surface", "no free surface")
 	BackingDepth       = quantity("backing_depth", units.Length, "gt=0", "depth of a closed cavity behind a plate", "no cavity")
-	surroundingsBlock  = &input.Block{Name: "surroundings", Title: "Surroundings", Doc: "walls, surfaces, gravity and pressure", Fields: []*input.Field{Gravity, AmbientPressure, WallGap, ShellDiameter, DepthBelowSurface, BackingDepth}}
+	NeighbourDistance  = quantity("neighbour_spacing", units.Length, "gt=0", "distance between the axis of a cylinder and that of its neighbour, of about the same diameter", "no neighbour")
+	NeighbourPlace     = choice("neighbour_arrangement", "how the neighbour stands to the flow", "from the angle", "tandem", "side-by-side", "staggered")
+	NeighbourAngle     = quantity("neighbour_angle", units.Angle, "gte=0,lte=1.5707963267948968", "angle between the flow and the line of the two axes: 0 in tandem, 90° side by side", "by the arrangement")
+	surroundingsBlock  = &input.Block{Name: "surroundings", Title: "Surroundings", Doc: "walls, surfaces, gravity and pressure", Fields: []*input.Field{Gravity, AmbientPressure, WallGap, ShellDiameter, DepthBelowSurface, BackingDepth, NeighbourDistance, NeighbourPlace, NeighbourAngle}}
 	Title              = &input.Field{Name: "title", Type: input.Text, Rule: "max=200", Doc: "a title for the case"}
 	Reference          = &input.Field{Name: "reference", Type: input.Text, Rule: "max=200", Doc: "a reference of the caller's own: drawing, ticket, source"}
 	InterestField      = &input.Field{Name: "interest", Type: input.Choices, Options: finding.MeasureNames(), Doc: "the measures that count in this study", Default: "frequency, load, stability, scale"}

@@ -14,7 +14,10 @@ type Kind struct {
 	Title      string
 	Doc        string         // what it stands for, in a sentence
 	Fields     []*input.Field // its own fields; mass, frequency and damping come with Modal
-	Directions []string       // how a flow may run; the first is assumed
+	Directions []string       // how a flow may run; the first is assumed; none: no flow
+	Waves      bool           // surface waves may run across it
+	Surface    bool           // it has a free surface by what it is
+	Gaps       bool           // a flow may be given by its speed in the gaps
 	// New reads the case: it checks what its fields must agree on, fills the
 	// scales, and returns the solved problems of the kind.
 	New func(r *Resolver) Physics

@@ -115,6 +115,9 @@ func (r *Resolver) frequencies(derived float64, how string, gamma func(f float64
 		r.derive(scale.FrequencyMotion, r.X(scale.FrequencyWet), units.Frequency, "the wet natural frequency")
 	}
 	r.missingFrequency()
+	if r.Is(group.Waves) && !r.c.Has(MotionFrequency) && r.Has(scale.FrequencyWave) {
+		r.derive(scale.FrequencyMotion, r.X(scale.FrequencyWave), units.Frequency, "the waves force the motion")
+	}
 	r.closeGroups()
 }
 
@@ -223,7 +226,7 @@ func damping(s *scale.Set, g *group.Set) {
 		return
 	}
 	total := g.Get(group.DampingRatio)
-	for _, id := range []group.ID{group.DampingViscous, group.DampingRadiation, group.DampingFlow} {
+	for _, id := range []group.ID{group.DampingViscous, group.DampingRadiation, group.DampingFlow, group.DampingTwoPhase} {
 		if g.Has(id) {
 			total += g.Get(id)
 		}
@@ -269,5 +272,5 @@ func InterestOf(c *input.Case) finding.Interest {
 
 // StudyOf returns how a case wants to be judged.
 func StudyOf(c *input.Case) finding.Study {
-	return finding.Study{Tolerance: ToleranceOf(c), Interest: InterestOf(c), Picked: PickedCriterion(c)}
+	return finding.Study{Tolerance: ToleranceOf(c), Interest: InterestOf(c), Picked: PickedCriteria(c)}
 }

@@ -492,17 +492,22 @@ func (p *plate) viscous(f, nu float64) (gr, gi float64, err error) {
 	return 1 + layer, layer, nil
 }
 
-// gapFactor is 1/(1 − tanh s/s) at s = (1 + i)x/√2·√2, x = (g/2)√(ω/2ν).
+// gapFactor is 1/(1 − tanh s/s) at s = (1 + i)x, x = (g/2)√(ω/2ν): of a slow motion,
+// where the difference from 1 would cancel, by the continued fraction
+// 1 + 3/s² + 1/(5 + s²/(7 + s²/(9 + …))), which gives all digits at any s.
 func gapFactor(x float64) complex128 {
-	s := complex(x, x)
+	s, s2 := complex(x, x), complex(0, 2*x*x)
 	if x > 300 {
 		return 1 / (1 - 1/s)
 	}
-	if x < 1e-2 { // s²/3 − 2s⁴/15: the difference from 1 would cancel
-		s2 := s * s
-		return 1 / (s2/3 - 2*s2*s2/15)
+	if x > 5 {
+		return 1 / (1 - cmplx.Tanh(s)/s)
 	}
-	return 1 / (1 - cmplx.Tanh(s)/s)
+	rest := complex(45, 0)
+	for odd := 43; odd >= 5; odd -= 2 {
+		rest = complex(float64(odd), 0) + s2/rest
+	}
+	return 1 + 3/s2 + 1/rest
 }
 
 // ribbon is Γ of a strip; beyond the range of the fit the layer is thin, and

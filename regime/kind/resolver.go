@@ -21,6 +21,7 @@ type Resolver struct {
 	c          *input.Case
 	kind       *Kind
 	given      []GivenGroup
+	throat     float64 // speed at the structure over that of the stream, 0: the same
 	warnings   []Warning
 	violations input.Violations
 }
@@ -196,7 +197,7 @@ func (r *Resolver) fluidByValues() {
 		r.Value(scale.VapourPressure).Kind = units.Pressure
 	}
 	r.takeOrNeed(scale.SoundSpeed, FluidSoundSpeed)
-	if !r.take(scale.SurfaceTension, FluidTension) && r.c.Has(DepthBelowSurface) {
+	if !r.take(scale.SurfaceTension, FluidTension) && (r.c.Has(DepthBelowSurface) || r.c.HasBlock("waves") || r.kind.Surface) {
 		r.takeOrNeed(scale.SurfaceTension, FluidTension)
 	}
 	r.take(scale.HeatCapacityRatio, FluidHeatRatio)
@@ -289,17 +290,28 @@ func (r *Resolver) environment() {
 		depth := r.X(scale.Density) * r.X(scale.Gravity) * r.X(scale.Depth)
 		r.derive(scale.Pressure, r.X(scale.AmbientPressure)+depth, units.Pressure, "p₀ + ρgd")
 	}
+	r.waves()
 	if !r.Is(group.Fluid) {
 		return
 	}
-	if !r.c.HasBlock("flow") || r.c.Has(FlowSpeed) && r.c.X(FlowSpeed) == 0 && !r.c.Has(FlowOperating) {
-		r.trait(group.Still)
+	if !r.c.HasBlock("flow") || r.c.Has(FlowSpeed) && r.c.X(FlowSpeed) == 0 && !r.c.Has(FlowOperating) && !r.c.Has(FlowGapSpeed) {
+		if !r.Is(group.Waves) {
+			r.trait(group.Still)
+		}
 		return
 	}
 	r.flow()
 }
 
 func (r *Resolver) flow() {
+	if len(r.kind.Directions) == 0 {
+		r.contradict(FlowSpeed, "A "+r.kind.Name+" has no mean flow.")
+		return
+	}
+	if r.c.Has(FlowGapSpeed) && !r.kind.Gaps {
+		r.contradict(FlowGapSpeed, "A "+r.kind.Name+" has no gaps between tubes; give the speed of the stream.")
+		return
+	}
 	direction := r.c.Choice(FlowDirection, r.kind.Directions[0])
 	if !slices.Contains(r.kind.Directions, direction) {
 		r.violations.Add(FlowDirection.Pointer(), input.OutOfRange, fmt.Sprintf("A flow does not run %s to a %s; it runs %s.", direction, r.kind.Name, list(r.kind.Directions)), nil)
@@ -312,12 +324,16 @@ func (r *Resolver) flow() {
 		r.trait(group.Axial)
 	case "grazing":
 		r.trait(group.Grazing)
+	case "internal":
+		r.trait(group.Internal)
 	}
 	if !r.c.Has(FlowDirection) && len(r.kind.Directions) > 1 {
 		r.warn(FlowDirection, "assumed", fmt.Sprintf("The flow is taken to run %s.", map[string]string{"cross": "across the structure", "axial": "along the structure", "grazing": "over the surface"}[direction]))
 	}
 	r.takeOrNeed(scale.Speed, FlowSpeed)
-	r.take(scale.Turbulence, FlowTurbulence)
+	if r.take(scale.Turbulence, FlowTurbulence) {
+		r.takeOrNeed(scale.TurbulenceLength, FlowGustLength)
+	}
 	r.operating()
 	r.takeOr(scale.Incidence, FlowIncidence, 0, "the flow meets the body without incidence")
 }
@@ -334,6 +350,9 @@ func (r *Resolver) operating() {
 		return
 	}
 	low, high := v.Ends[0].Value, v.Ends[1].Value
+	if r.throat > 0 {
+		low, high = low*r.throat, high*r.throat
+	}
 	r.Put(scale.SpeedLow, low, units.Speed, scale.Given, "")
 	r.Put(scale.SpeedHigh, high, units.Speed, scale.Given, "")
 	if !r.Has(scale.Speed) {

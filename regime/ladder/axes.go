@@ -11,13 +11,13 @@ func axes(c *Class, kind string, g *group.Set, fs []finding.Finding) Axes {
 	a := c.Axes
 	at := func(e *assumption.Entry) finding.Verdict { return fs[e.Index()].Verdict }
 	invalid := func(e *assumption.Entry) bool { return at(e) == finding.Invalid && fs[e.Index()].OfInterest }
-	set(&a.Compressible, yesNo(c.Axes.Fluid == "film" && g.Has(group.Squeeze) && g.Get(group.Squeeze) > 1 || invalid(assumption.IncompressibleFlow) || invalid(assumption.IncompressibleOscillation)))
+	set(&a.Compressible, yesNo(c.Axes.Fluid == "film" && g.Has(group.Squeeze) && g.Get(group.Squeeze) > 1 || invalid(assumption.IncompressibleFlow) || invalid(assumption.IncompressibleOscillation) || invalid(assumption.NoAcousticResonance)))
 	set(&a.Viscous, yesNo(invalid(assumption.InviscidFlow) || invalid(assumption.InviscidOscillation)))
 	set(&a.FreeSurface, freeSurface(at))
 	set(&a.Turbulence, turbulence(at(assumption.LaminarFlow)))
 	set(&a.Structure, structure(c, invalid(assumption.SmallDisplacement) || invalid(assumption.LinearStructure), !invalid(assumption.RigidStructure) && g.Is(group.StaticOnly)))
 	set(&a.FluidInertia, inertia(c, at(assumption.FluidAbsent)))
-	set(&a.Phases, phases(invalid(assumption.NoCavitation) || invalid(assumption.NoSurfaceTension)))
+	set(&a.Phases, phases(g.Is(group.TwoPhase) || invalid(assumption.NoCavitation) || invalid(assumption.NoSurfaceTension)))
 	set(&a.Dimensions, dimensions(at(assumption.TwoDimensional), g.Is(group.Uniform)))
 	set(&a.Electromechanical, "none")
 	return a

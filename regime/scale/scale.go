@@ -5,6 +5,7 @@ package scale
 
 import (
 	"math"
+	"sync"
 
 	"regimed/units"
 )
@@ -88,6 +89,39 @@ const (
 	BaseAcceleration
 	SloshingHeight
 
+	Breadth
+	SheddingWidth
+	InertiaPerLength
+	FrequencyTorsion
+	TorsionStiffness
+	ElasticAxis
+	CentreOfGravity
+	LiftSlope
+	MomentSlope
+	Sweep
+	DivergenceSpeed
+	FlutterSpeed
+	GallopingSpeed
+	CriticalSpeed
+	TurbulenceLength
+	Pitch
+	FreeSpeed
+	DuctWidth
+	GasDensity
+	NeighbourSpacing
+	BodyDiameter
+
+	WaveSpeed
+	ColumnFrequency
+	ClosureTime
+	SpeedChange
+	ExternalDensity
+	Roughness
+	PulsePressure
+	SpeedPeak
+	ExternalPressure
+	ColumnLength
+
 	Count
 )
 
@@ -129,9 +163,15 @@ type Set struct {
 	v [Count]Value
 }
 
+var sets = sync.Pool{New: func() any { return new(Set) }}
+
+// Release gives the memory of a set back; nothing may use it afterwards.
+func (s *Set) Release() { sets.Put(s) }
+
 // New returns a set in which no scale has a value.
 func New() *Set {
-	s := &Set{}
+	s := sets.Get().(*Set)
+	*s = Set{}
 	for i := range s.v {
 		s.v[i].X = math.NaN()
 	}
@@ -253,4 +293,37 @@ var table = [Count]Def{
 	FrequencyExcitation: {"frequency_excitation", "f_exc", "frequency of the excitation", "motion.frequency"},
 	BaseAcceleration:    {"base_acceleration", "A", "acceleration that excites the sloshing", "structure.base_acceleration"},
 	SloshingHeight:      {"sloshing_height", "η", "wave amplitude at the wall of the tank", ""},
+
+	Breadth:          {"breadth", "B", "length of the section along the flow", "structure.breadth"},
+	SheddingWidth:    {"shedding_width", "D_s", "width across the flow of what sheds: the thickness of a blunt trailing edge", "structure.trailing_edge_thickness"},
+	InertiaPerLength: {"inertia_per_length", "I_α", "mass moment of inertia per length about the elastic axis", "structure.inertia_per_length"},
+	FrequencyTorsion: {"frequency_torsion", "f_α", "natural frequency of torsion, dry and uncoupled", "structure.frequency_torsion"},
+	TorsionStiffness: {"torsion_stiffness", "K_α", "torsional stiffness per length of the mode", ""},
+	ElasticAxis:      {"elastic_axis", "x_ea", "elastic axis behind the leading edge, in chords", "structure.elastic_axis"},
+	CentreOfGravity:  {"centre_of_gravity", "x_cg", "centre of gravity behind the leading edge, in chords", "structure.centre_of_gravity"},
+	LiftSlope:        {"lift_slope", "C_Lα", "slope of the lift coefficient per radian, on the chord", "structure.lift_slope"},
+	MomentSlope:      {"moment_slope", "C_Mα", "slope of the coefficient of the moment about the elastic axis per radian, on the breadth squared", "structure.moment_slope"},
+	Sweep:            {"sweep", "Λ", "sweep of the elastic axis, aft positive", "structure.sweep"},
+	DivergenceSpeed:  {"speed_divergence", "U_D", "divergence speed", "structure.divergence_speed"},
+	FlutterSpeed:     {"speed_flutter", "U_F", "flutter speed", "structure.flutter_speed"},
+	GallopingSpeed:   {"speed_galloping", "U_CG", "onset speed of galloping", ""},
+	CriticalSpeed:    {"speed_critical", "U_crit", "speed at which the shedding meets the first mode, f_w D/St", ""},
+	TurbulenceLength: {"turbulence_length", "L_u", "length scale of the turbulence along the flow", "flow.turbulence_length"},
+
+	Pitch:            {"pitch", "P", "distance between the axes of neighbouring tubes", "structure.pitch"},
+	FreeSpeed:        {"free_speed", "U", "speed of the stream ahead of the tubes", "flow.speed"},
+	DuctWidth:        {"duct_width", "W", "width of the duct or shell across the flow and the tubes", "structure.duct_width"},
+	GasDensity:       {"gas_density", "ρ_g", "density of the gas of a mixture", "structure.gas_density"},
+	NeighbourSpacing: {"neighbour_spacing", "S", "distance to the axis of the neighbour", "surroundings.neighbour_spacing"},
+	BodyDiameter:     {"body_diameter", "D", "diameter of the leading body", "structure.leading_body"},
+	WaveSpeed:        {"wave_speed", "a", "speed of pressure waves in the tube", ""},
+	ColumnFrequency:  {"column_frequency", "f_a", "first acoustic frequency of the fluid column", ""},
+	ClosureTime:      {"closure_time", "t_c", "time in which the flow changes", "structure.closure_time"},
+	SpeedChange:      {"speed_change", "ΔU", "largest change of the flow speed", "structure.speed_change"},
+	ExternalDensity:  {"external_density", "ρ_e", "density of the fluid around the pipe", "structure.external_density"},
+	Roughness:        {"roughness", "k_s", "height of the roughness of the bore", "structure.roughness"},
+	PulsePressure:    {"pulse_pressure", "Δp", "pulse pressure, highest less lowest", "structure.pulse_pressure"},
+	SpeedPeak:        {"speed_peak", "U_p", "peak speed of the pulse", "structure.peak_speed"},
+	ColumnLength:     {"column_length", "ℓ_c", "length of the column of fluid", "structure.column_length"},
+	ExternalPressure: {"external_pressure", "p_e", "absolute pressure around the vessel", "structure.external_pressure"},
 }
