@@ -31,7 +31,7 @@ type FieldRecord struct {
 // typeNames are the types of fields in words.
 var typeNames = [...]string{
 	input.Quantity: "quantity", input.Number: "number", input.Integer: "integer", input.Flag: "flag",
-	input.Text: "text", input.Choice: "choice", input.Choices: "choices", input.Interval: "interval",
+	input.Text: "text", input.Choice: "choice", input.Choices: "choices", input.Interval: "interval", input.Rows: "list",
 }
 
 func fieldRecord(f *input.Field) FieldRecord {
@@ -148,26 +148,11 @@ func classRecord(c *ladder.Class) ClassRecord {
 	return r
 }
 
-// traits names the traits that a class may ask for.
-var traits = []struct {
-	trait group.Traits
-	name  string
-}{
-	{group.Fluid, "fluid"}, {group.Still, "still"}, {group.Cross, "cross-flow"}, {group.Axial, "axial-flow"},
-	{group.Grazing, "grazing-flow"}, {group.Internal, "internal-flow"}, {group.Waves, "waves"}, {group.Contained, "contained"},
-	{group.Liquid, "liquid"}, {group.Gas, "gas"}, {group.Bluff, "bluff"}, {group.Streamlined, "streamlined"},
-	{group.Circular, "circular"}, {group.Confined, "confined"}, {group.NearSurface, "near-surface"}, {group.Film, "film"},
-	{group.ViscousSolved, "viscous-solution"}, {group.Cantilever, "cantilever"}, {group.Restrained, "restrained"},
-	{group.Uniform, "uniform"}, {group.ModesDerived, "modes-derived"}, {group.StaticOnly, "static-only"},
-	{group.LidImage, "lid-image"}, {group.FreeImage, "free-image"}, {group.Cavity, "cavity"}, {group.TaperedEnd, "tapered-end"},
-	{group.Amplitude, "amplitude-given"}, {group.Flexible, "flexible"}, {group.PanelLike, "panel"}, {group.FrequencyLost, "frequency-unknown"},
-}
-
 func traitNames(t group.Traits) []string {
 	names := []string{}
-	for _, x := range traits {
-		if t.Any(x.trait) {
-			names = append(names, x.name)
+	for _, x := range group.TraitNames {
+		if t.Any(x.Trait) {
+			names = append(names, x.Name)
 		}
 	}
 	return names

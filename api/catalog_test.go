@@ -124,12 +124,12 @@ func TestCatalogsAgree(t *testing.T) {
 func TestTraitsHaveNames(t *testing.T) {
 	var named group.Traits
 	seen := map[string]bool{}
-	for _, x := range traits {
-		if named.Any(x.trait) || seen[x.name] {
-			t.Errorf("%s twice", x.name)
+	for _, x := range group.TraitNames {
+		if named.Any(x.Trait) || seen[x.Name] {
+			t.Errorf("%s twice", x.Name)
 		}
-		named |= x.trait
-		seen[x.name] = true
+		named |= x.Trait
+		seen[x.Name] = true
 	}
 	for _, c := range classes() {
 		if d := c.Domain; (d.States|d.Needs|d.Bars)&^named != 0 {

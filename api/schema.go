@@ -155,6 +155,9 @@ func (b *schemaBuilder) field(f *input.Field) OrderedMembers {
 func (b *schemaBuilder) shape(f *input.Field) OrderedMembers {
 	switch f.Type {
 	case input.Quantity:
+		if f.Service != nil {
+			return OrderedMembers{{"anyOf", []OrderedMembers{b.quantity(f.Kind), serviceRange()}}}
+		}
 		return b.quantity(f.Kind)
 	case input.Number:
 		return append(b.quantity(units.Dimensionless), bounds(f.Rule)...)
@@ -168,6 +171,9 @@ func (b *schemaBuilder) shape(f *input.Field) OrderedMembers {
 		return OrderedMembers{{"type", "array"}, {"items", OrderedMembers{{"type", "string"}, {"enum", f.Options}}}}
 	case input.Interval:
 		return OrderedMembers{{"type", "array"}, {"items", b.quantity(f.Kind)}, {"minItems", 2}, {"maxItems", 2}}
+	}
+	if f.Type == input.Rows {
+		return OrderedMembers{{"type", "array"}, {"items", b.block(f.Row, false)}, {"minItems", 1}, {"maxItems", 50}}
 	}
 	return append(OrderedMembers{{"type", "string"}}, lengths(f.Rule)...)
 }

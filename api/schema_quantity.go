@@ -128,6 +128,8 @@ func examples(f *input.Field) []any {
 		return []any{f.Options[0]}
 	case input.Choices:
 		return []any{f.Options[:min(2, len(f.Options))]}
+	case input.Rows:
+		return []any{[]any{exampleRow(f.Row)}}
 	case input.Interval:
 		return []any{[]string{"0 " + f.Kind.SI(), f.Kind.Example()}}
 	}
@@ -168,4 +170,33 @@ func defaultOf(f *input.Field) (any, bool) {
 		return names, true
 	}
 	return nil, false
+}
+
+// exampleRow is an example of an object in a list: its first field, and the
+// first pure number.
+func exampleRow(row *input.Block) OrderedMembers {
+	o := OrderedMembers{{row.Fields[0].Name, examples(row.Fields[0])[0]}}
+	for _, f := range row.Fields {
+		if f.Type == input.Number {
+			return append(o, Member{f.Name, examples(f)[0]})
+		}
+	}
+	return o
+}
+
+// serviceRange is a range that is meant as one of operation.
+func serviceRange() OrderedMembers {
+	return OrderedMembers{
+		{"title", "Range of operation"},
+		{"description", "The lowest and the highest value in service."},
+		{"type", "object"},
+		{"properties", OrderedMembers{
+			{"low", partSchema("The lowest value, in the unit.")},
+			{"high", partSchema("The highest value, in the unit.")},
+			{"unit", OrderedMembers{{"description", "The unit expression."}, {"type", "string"}, {"examples", []string{"m/s"}}}},
+			{"as", OrderedMembers{{"description", "What the range means."}, {"type", "string"}, {"const", "range"}}},
+		}},
+		{"required", []string{"low", "high", "unit", "as"}},
+		{"additionalProperties", false},
+	}
 }

@@ -22,6 +22,7 @@ type Answer struct {
 	Setup          []setup.Figure
 	finding.Study
 	Warnings []kind.Warning
+	Modes    []Mode // where a case gives several
 
 	judged *finding.Context // what Findings lies in
 }

@@ -13,6 +13,13 @@ import (
 // groups are judged, the cheapest class that holds is recommended, and figures
 // for setting it up follow.
 func Classify(c *input.Case) (*Answer, []input.Violation) {
+	if modes := c.Lookup(kind.Modes); modes != nil {
+		return classifyModes(c, modes)
+	}
+	return classifyOne(c)
+}
+
+func classifyOne(c *input.Case) (*Answer, []input.Violation) {
 	resolved, warnings, violations := kind.Resolve(c)
 	if len(violations) > 0 {
 		return nil, violations
@@ -38,6 +45,8 @@ func Decide(r *kind.Resolved, s finding.Study) *Answer {
 func (a *Answer) Release() {
 	a.Scales.Release()
 	a.Groups.Release()
-	a.judged.Release()
+	if a.judged != nil {
+		a.judged.Release()
+	}
 	*a = Answer{}
 }

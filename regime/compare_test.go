@@ -71,7 +71,7 @@ func (c comparison) groups(a, b *group.Set) string {
 			return fmt.Sprintf("%s: %v (state %d) and %v (state %d), relative difference %.2g", group.Of(id).ID,
 				a.Get(id), a.State(id), b.Get(id), b.State(id), math.Abs(a.Get(id)/b.Get(id)-1))
 		}
-		if a.Need(id).Input != b.Need(id).Input {
+		if a.State(id) == group.Missing && a.Need(id).Input != b.Need(id).Input {
 			return fmt.Sprintf("%s waits for %s and %s", group.Of(id).ID, a.Need(id).Input, b.Need(id).Input)
 		}
 	}

@@ -112,6 +112,11 @@ func (d *drawer) sea() {
 		}
 		d.name("fluid.name", pick(d, "water", "seawater"))
 	}
+	if d.kind == "plate" && d.word("fluid.name") != "" && d.chance(1) {
+		d.number("structure.wetted_sides", 1)
+		d.maybe(7, "surroundings.shock_pressure", 1e4, 1e8)
+		d.maybe(7, "surroundings.shock_decay_time", 1e-5, 1e-2)
+	}
 	if !k.Waves || !d.liquid() || d.word("flow.direction") == "axial" {
 		return
 	}

@@ -27,7 +27,7 @@ var structures = map[string]func(d *drawer){"generic": (*drawer).generic, "cylin
 
 // cases draws cases of the kinds above with any of the optional fields.
 func cases() *rapid.Generator[*sample] {
-	return casesOf("tank", "tank", "floater", "floater", "generic", "cylinder", "cylinder", "plate", "plate", "pipe", "pipe", "vessel", "section", "section", "wing", "tube_array", "tube_array", "flag")
+	return casesOf("tank", "tank", "floater", "floater", "generic", "cylinder", "cylinder", "plate", "plate", "pipe", "pipe", "vessel", "section", "section", "wing", "tube_array", "tube_array", "flag", "piston", "film", "microbeam")
 }
 
 // anyCases draws the structure of every kind that there is field by field, so
@@ -37,15 +37,15 @@ func anyCases() *rapid.Generator[*sample] {
 	for _, k := range kind.All {
 		names = append(names, k.Name)
 	}
-	return drawn(func(d *drawer) { d.fields(kind.Schema().Kind(d.kind).Fields, 5) }, names)
+	return drawn(func(d *drawer) { d.fields(kind.Schema().Kind(d.kind).Fields, 5) }, true, names)
 }
 
 func casesOf(names ...string) *rapid.Generator[*sample] {
-	return drawn(func(d *drawer) { structures[d.kind](d) }, names)
+	return drawn(func(d *drawer) { structures[d.kind](d) }, false, names)
 }
 
 // drawn draws a case of one of the kinds, with a structure and what surrounds it.
-func drawn(structure func(d *drawer), kinds []string) *rapid.Generator[*sample] {
+func drawn(structure func(d *drawer), blocks bool, kinds []string) *rapid.Generator[*sample] {
 	return rapid.Custom(func(t *rapid.T) *sample {
 		d := &drawer{T: t}
 		d.kind = pick(d, kinds...)
@@ -59,46 +59,73 @@ func drawn(structure func(d *drawer), kinds []string) *rapid.Generator[*sample] 
 		d.surroundings()
 		d.study()
 		d.givenGroups()
-		for _, b := range kind.Schema().Blocks {
-			if !slices.Contains(drawnBlocks, b.Name) && d.chance(2) {
-				d.fields(b.Fields, 5)
-			}
+		d.active()
+		if blocks {
+			d.otherBlocks()
 		}
 		return &d.sample
 	})
 }
 
+// otherBlocks gives blocks that the drawer has no functions for, field by field.
+func (d *drawer) otherBlocks() {
+	for _, b := range kind.Schema().Blocks {
+		if !slices.Contains(drawnBlocks, b.Name) && d.chance(1) {
+			d.fields(b.Fields, 5)
+		}
+	}
+}
+
 // drawnBlocks are the blocks that the drawer has functions for.
-var drawnBlocks = []string{"fluid", "flow", "waves", "motion", "surroundings", "tolerance", "criteria", "given_groups"}
+var drawnBlocks = []string{"fluid", "flow", "waves", "motion", "surroundings", "tolerance", "criteria", "given_groups", "active"}
 
 // fields gives what is needed of a list of fields, and each of the others in n
 // of 8 cases.
 func (d *drawer) fields(list []*input.Field, n int) {
 	for _, f := range list {
-		rival := map[string]bool{"log_decrement": true, "loss_factor": true, "quality_factor": true, "damping_ratio": true, "frequency_wet": d.has("structure.frequency_dry")}
+		frequency, modes := d.has("structure.frequency_dry") || d.has("structure.frequency_wet"), d.has("structure.modes")
+		rival := map[string]bool{"log_decrement": true, "loss_factor": true, "quality_factor": true, "damping_ratio": true,
+			"frequency_dry": frequency || modes, "frequency_wet": frequency || modes, "modes": frequency || d.chance(6)}
 		if !f.Needed && (rival[f.Name] || !d.chance(n)) {
 			continue
 		}
-		switch f.Type {
-		case input.Quantity:
-			d.quantity(f.Path(), d.usual(f))
-		case input.Number:
-			d.number(f.Path(), d.log(0.01, 0.9))
-		case input.Integer:
-			d.number(f.Path(), pick(d, 1.0, 2, 3))
-		case input.Flag:
-			d.switchOf(f.Path())
-		case input.Choice:
-			d.name(f.Path(), pick(d, f.Options...))
-		case input.Choices:
-			d.put(f.Path(), entry{list: []string{pick(d, f.Options...)}})
-		case input.Interval:
-			x := d.usual(f)
-			d.put(f.Path(), entry{ends: [2]float64{x / 2, x}})
-		default:
-			d.name(f.Path(), "drawn")
-		}
+		d.put(f.Path(), d.value(f))
 	}
+}
+
+// value draws a value of a field by its type alone.
+func (d *drawer) value(f *input.Field) entry {
+	e := entry{f: f}
+	switch f.Type {
+	case input.Quantity:
+		e.x = d.usual(f)
+	case input.Number:
+		e.x = d.log(0.01, 0.9)
+	case input.Integer:
+		e.x = pick(d, 1.0, 2, 3)
+	case input.Flag:
+		e.flag = d.chance(4)
+	case input.Choice:
+		e.text = pick(d, f.Options...)
+	case input.Choices:
+		e.list = []string{pick(d, f.Options...)}
+	case input.Interval:
+		x := d.usual(f)
+		e.ends = [2]float64{x / 2, x}
+	case input.Rows:
+		for range pick(d, 1, 2, 3) {
+			var row []entry
+			for _, g := range f.Row.Fields {
+				if g.Needed || d.chance(5) {
+					row = append(row, d.value(g))
+				}
+			}
+			e.rows = append(e.rows, row)
+		}
+	default:
+		e.text = "drawn"
+	}
+	return e
 }
 
 // usual is a quantity as it might be of a structure of about a metre: in powers

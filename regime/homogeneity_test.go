@@ -58,16 +58,28 @@ func byValue(s *sample, a *regime.Answer) *sample {
 func scaled(s *sample, mass, length, time float64) *sample {
 	v := s.clone()
 	for i := range v.given {
-		e := &v.given[i]
-		if e.f.Type != input.Quantity && e.f.Type != input.Interval {
-			continue
+		v.given[i] = v.given[i].scaled(mass, length, time)
+	}
+	return v
+}
+
+func (e entry) scaled(mass, length, time float64) entry {
+	switch e.f.Type {
+	case input.Rows:
+		rows := make([][]entry, len(e.rows))
+		for i, row := range e.rows {
+			for _, x := range row {
+				rows[i] = append(rows[i], x.scaled(mass, length, time))
+			}
 		}
+		e.rows = rows
+	case input.Quantity, input.Interval:
 		f := powerOf(e.f.Kind, mass, length, time)
 		e.x *= f
 		e.ends[0] *= f
 		e.ends[1] *= f
 	}
-	return v
+	return e
 }
 
 func powerOf(k units.Kind, mass, length, time float64) float64 {

@@ -26,6 +26,7 @@ type entry struct {
 	ends   [2]float64 // Interval
 	text   string     // Text, Choice
 	list   []string   // Choices
+	rows   [][]entry  // Rows
 	flag   bool
 	gauge  bool    // an absolute pressure to be written as a gauge pressure
 	spread float64 // standard deviation over the value; 0: certain
@@ -129,6 +130,8 @@ func (e *entry) spell(spell speller) string {
 		return "[" + spell(e, e.f.Kind, e.ends[0]) + "," + spell(e, e.f.Kind, e.ends[1]) + "]"
 	case input.Number, input.Integer:
 		return decimal(e.x)
+	case input.Rows:
+		return e.spellRows(spell)
 	case input.Flag:
 		return strconv.FormatBool(e.flag)
 	case input.Choices:
@@ -137,6 +140,18 @@ func (e *entry) spell(spell speller) string {
 	default:
 		return quoted(e.text)
 	}
+}
+
+func (e *entry) spellRows(spell speller) string {
+	var objects []string
+	for _, row := range e.rows {
+		var members []string
+		for i := range row {
+			members = append(members, quoted(row[i].f.Name)+":"+row[i].spell(spell))
+		}
+		objects = append(objects, "{"+strings.Join(members, ",")+"}")
+	}
+	return "[" + strings.Join(objects, ",") + "]"
 }
 
 func quoted(s string) string { return strconv.Quote(s) }

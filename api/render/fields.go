@@ -23,6 +23,7 @@ const (
 	Recommendation
 	Setup
 	Frequencies
+	Modes
 	Warnings
 	Cautions
 
@@ -33,7 +34,7 @@ const (
 const All = fieldsEnd - 1
 
 var fieldNames = []string{"digest", "engine", "title", "reference", "kind", "study", "scales", "groups", "findings",
-	"recommendation", "setup", "frequencies", "warnings", "cautions"}
+	"recommendation", "setup", "frequencies", "modes", "warnings", "cautions"}
 
 // FieldNames lists the top-level members by name, in the order of the answer.
 func FieldNames() []string { return append([]string(nil), fieldNames...) }

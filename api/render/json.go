@@ -45,6 +45,9 @@ func AppendJSON(dst []byte, a *regime.Answer, only Fields) []byte {
 	if only.Has(Frequencies) {
 		dst = appendFrequencies(name(dst, "frequencies"), a)
 	}
+	if only.Has(Modes) && len(a.Modes) > 0 {
+		dst = appendModes(name(dst, "modes"), a)
+	}
 	if only.Has(Warnings) {
 		dst = appendWarnings(name(dst, "warnings"), a)
 	}
@@ -199,6 +202,26 @@ func appendFrequencies(dst []byte, a *regime.Answer) []byte {
 		dst = number(dst, "value", f.value)
 		dst = member(dst, "unit", "Hz")
 		dst = number(dst, "ratio_to_wet", f.value/wet)
+		dst = append(dst, '}')
+	}
+	return append(dst, ']')
+}
+
+// appendModes lists the modes of a case that gives several.
+func appendModes(dst []byte, a *regime.Answer) []byte {
+	dst = append(dst, '[')
+	for i := range a.Modes {
+		m := &a.Modes[i]
+		dst = append(comma(dst), '{')
+		dst = number(dst, "mode", float64(m.Number))
+		dst = number(dst, "frequency_dry", m.FrequencyDry)
+		dst = number(dst, "frequency_wet", m.FrequencyWet)
+		dst = member(dst, "unit", "Hz")
+		dst = member(dst, "class", m.Class.ID)
+		if m.Worst != nil {
+			dst = member(dst, "finding", m.Worst.ID)
+			dst = number(dst, "utilisation", m.Utilisation)
+		}
 		dst = append(dst, '}')
 	}
 	return append(dst, ']')

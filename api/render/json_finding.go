@@ -24,6 +24,9 @@ func appendFinding(dst []byte, a *regime.Answer, f *finding.Finding) []byte {
 	}
 	dst = member(dst, "verdict", f.Verdict.String())
 	dst = flag(dst, "of_interest", f.OfInterest)
+	if f.Mode > 0 {
+		dst = number(dst, "mode", float64(f.Mode))
+	}
 	if p != nil {
 		dst = appendFigures(dst, p)
 	}

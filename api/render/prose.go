@@ -117,6 +117,9 @@ func endOfClause(s string) int {
 func placeValue(a *regime.Answer, g *finding.Segment, p *finding.Part) float64 {
 	switch {
 	case g.Place == finding.GroupValue:
+		if p != nil && p.Groups != nil {
+			return p.Groups.Get(g.Group)
+		}
 		return a.Groups.Get(g.Group)
 	case p == nil:
 		return math.NaN()
@@ -311,7 +314,11 @@ type hold struct {
 
 // holdOf reads the bound of a part that waits.
 func holdOf(a *regime.Answer, p *finding.Part) hold {
-	n := a.Groups.Need(p.Wait)
+	groups := a.Groups
+	if p.Groups != nil {
+		groups = p.Groups
+	}
+	n := groups.Need(p.Wait)
 	h := hold{input: n.Input, named: n.Input != "", unit: n.Unit, least: p.Least, value: math.NaN(), group: p.Wait, of: p.Hold}
 	if !h.named {
 		h.input = "the " + group.Of(p.Wait).Title

@@ -40,6 +40,7 @@ func AppendText(dst []byte, a *regime.Answer, o TextOptions) []byte {
 	p.assumptions(a)
 	p.groups(a)
 	p.scales(a)
+	p.modes(a)
 	p.setup(a)
 	p.frequencies(a)
 	p.warnings(a)
@@ -411,6 +412,28 @@ func (p *page) scales(a *regime.Answer) {
 			p.room = append(append(p.room, ", "...), v.Note...)
 		}
 		p.wrap(plain, string(lead), p.room)
+	}
+}
+
+// modes lists the modes of a case that gives several, with what each asks for.
+func (p *page) modes(a *regime.Answer) {
+	if len(a.Modes) == 0 {
+		return
+	}
+	p.heading("Modes")
+	for i := range a.Modes {
+		m := &a.Modes[i]
+		p.room = append(strconv.AppendInt(append(p.room[:0], "  "...), int64(m.Number), 10), ' ')
+		p.room = right(p.room, units.Format(m.FrequencyDry, units.Frequency), 16-len(p.room)+4)
+		p.room = append(p.room, " dry"...)
+		p.room = right(p.room, units.Format(m.FrequencyWet, units.Frequency), 12)
+		p.room = append(append(p.room, " wet  "...), m.Class.ID...)
+		if m.Worst != nil {
+			var space [24]byte
+			p.room = append(append(p.room, ", most loaded by "...), m.Worst.ID...)
+			p.room = append(append(p.room, " at "...), units.AppendNumber(space[:0], m.Utilisation, digits)...)
+		}
+		p.line(plain, string(p.room))
 	}
 }
 

@@ -36,7 +36,7 @@ var Catalogue = number(
 	// hazards
 	NoLockIn, NoGalloping, NoDivergence, NoFlutter, NoBucklingByFlow, NoAcousticResonance, NoPressureSurge,
 	NoFluidelasticInstability, NoWakeInterference, NoOvalling,
-	NoWaveResonance, NoSloshingResonance, NoSlamming,
+	NoWaveResonance, NoSloshingResonance, NoSlamming, NoShock,
 	// still fluid
 	FluidAbsent, StillFluid, InviscidOscillation, IncompressibleOscillation, UnboundedFluid,
 	FreeSurfaceAbsent, RigidLid, LinearFreeSurface, IsothermalWalls, Continuum, SlipFilm,
@@ -46,7 +46,7 @@ var Catalogue = number(
 	TwoDimensional, QuasiSteady, PseudoStatic, CalibratedWake,
 	QuasiStaticGusts,
 	// structure
-	RigidStructure, SmallDisplacement, SmallStroke, SingleMode, LinearStructure,
+	RigidStructure, SmallDisplacement, SmallStroke, SingleMode, LinearStructure, PassiveStructure,
 	// scales of reduced models
 	Lubrication, Slender, PlugFlow, OneDimensionalWaves, LongPulse, NoAxialCoupling, LongWave, RigidWalls,
 	// coupling

@@ -14,7 +14,7 @@ var IncompressibleOscillation = &Entry{
 	Title:     "Incompressible oscillation",
 	LeavesOut: "sound: compressibility of the oscillating fluid and radiation",
 	Estimated: "frequency: |√((1 + μΓr)/(1 + μ)) − 1| with Γ of the acoustic solution; response: ζ_rad/ζ; sound: 1",
-	Measures:  []finding.Measure{finding.Frequency, finding.Response, finding.Sound},
+	Measures:  []finding.Measure{finding.Frequency, finding.Response, finding.Sound, finding.Load},
 	Sources:   []*cite.Source{cite.JungerFeit1986},
 	Estimate:  estimateIncompressibleOscillation,
 }
@@ -46,6 +46,9 @@ func estimateIncompressibleOscillation(x *finding.Context) {
 			addShare(x, finding.Part{Measure: finding.Response, Basis: finding.Canonical, Factor: x.Factors.Acoustic,
 				Say: soundDamping, Source: cite.JungerFeit1986}, x.Get(group.DampingRadiation))
 		}
+	}
+	if x.Is(group.Shock) {
+		x.Add(finding.Part{Measure: finding.Load, Basis: finding.Definition, Estimate: 1, Factor: 1, Say: shockSound, Source: cite.Cole1948})
 	}
 	x.Add(finding.Part{Measure: finding.Sound, Basis: finding.Definition, Estimate: 1, Factor: 1,
 		Say: soundItself, Source: cite.JungerFeit1986})

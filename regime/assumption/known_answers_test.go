@@ -104,6 +104,8 @@ func knownOfGroups() []knownGroup {
 	wind, beside := group.Fluid|group.Gas|group.Cross, water|group.Cross|group.Neighboured
 	resonant := math.Sqrt(0.5 + math.Pi/4*0.02/0.01) // √(B² + R²)
 	return []knownGroup{
+		{of(assumption.PassiveStructure, "K² ¼ in open circuit", finding.Frequency, math.Sqrt(1.25) - 1, 0.05, finding.Invalid), group.Active, of1{group.Electromechanical: 0.25}},
+		{of(assumption.PassiveStructure, "K² of a thin patch", finding.Frequency, math.Sqrt(1.01) - 1, 0.05, finding.Valid), group.Active, of1{group.Electromechanical: 0.01}},
 		{of(assumption.NoWaveResonance, "half way to the band", finding.Stability, 0.5, 1, finding.Valid), waves, of1{group.WaveRatio: 0.4}},
 		{of(assumption.NoWaveResonance, "resonance", finding.Stability, 1.25, 1, finding.Invalid), waves, of1{group.WaveRatio: 1}},
 		{of(assumption.NoSloshingResonance, "twice the band", finding.Stability, 0.5, 1, finding.Valid), tank, of1{group.SloshingRatio: 2.5}},
@@ -334,7 +336,7 @@ func TestKnownAnswers(t *testing.T) {
 			t.Errorf("%s has no known answer", e.ID)
 		}
 	}
-	if rows != 71 {
+	if rows != 73 {
 		t.Errorf("%d known answers", rows)
 	}
 }

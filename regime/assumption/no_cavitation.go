@@ -40,6 +40,10 @@ func estimateCavitation(x *finding.Context) {
 		return
 	}
 	p := finding.Part{Measure: finding.Stability, Basis: finding.Threshold, Factor: 1.3, Say: cavitationFlow, Source: cite.Brennen1995}
+	if x.Is(group.Shock) {
+		x.AddOrWait(finding.Part{Measure: finding.Stability, Basis: finding.Canonical, Factor: 1.5, Say: shockCavity, Source: cite.Taylor1941},
+			group.ShockTension, identity)
+	}
 	if x.Is(group.Column) {
 		part := p
 		part.Factor, part.Say, part.Source = 1.5, separation, cite.WylieStreeter1993

@@ -99,6 +99,11 @@ func lockInAcross(x *finding.Context) {
 		band.Say = lockInBandOpen
 	}
 	band.Estimate, band.Inner = finding.Band(position, lo, hi, band.Factor)
+	if x.Has(group.WakeBandHigh) { // the linear band is narrower, and the vibration strongest inside it
+		if u, inner := finding.Band(position, lo, x.Get(group.WakeBandHigh), band.Factor); u/inner > band.Estimate/band.Inner {
+			band.Estimate, band.Inner = u, inner
+		}
+	}
 	if position > hi && !x.Is(group.ModesDerived) && band.Estimate < 1 {
 		band.Estimate = 1 // higher modes, which are not known, lie ahead
 	}

@@ -24,8 +24,8 @@ var (
 	waveMode   = finding.Say("The waves run at {wave_frequency_ratio} times the wet natural frequency.")
 	wavePitch  = finding.Say("The waves run at {wave_frequency_ratio_pitch} times the frequency of pitch.")
 	waveSurge  = finding.Say("The waves run at {wave_frequency_ratio_surge} times the frequency of surge.")
-	waveSecond = finding.Say("The second harmonic of the waves meets the mode (springing): the waves run at {wave_frequency_ratio} times its frequency, with a steepness of {wave_steepness}.")
-	waveThird  = finding.Say("The third harmonic of the waves meets the mode (ringing): the waves run at {wave_frequency_ratio} times its frequency, with a steepness of {wave_steepness}.")
+	waveSecond = finding.Say("For the second harmonic of the waves (springing): they run at {wave_frequency_ratio} times the frequency of the mode, with a steepness of {wave_steepness}.")
+	waveThird  = finding.Say("For the third harmonic of the waves (ringing): they run at {wave_frequency_ratio} times the frequency of the mode, with a steepness of {wave_steepness}.")
 )
 
 func estimateWaveResonance(x *finding.Context) {

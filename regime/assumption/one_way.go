@@ -33,6 +33,9 @@ func estimateOneWay(x *finding.Context) {
 	case x.Is(group.Sloshing):
 		addMovingWalls(x)
 		return
+	case x.Is(group.Shock) && !x.Any(group.Flow):
+		addShockFeedback(x)
+		return
 	case !x.Any(group.Flow | group.Waves):
 		x.NotApplicable(noFlow)
 		return

@@ -47,7 +47,7 @@ func fluidDamping(x *finding.Context) float64 {
 // damping ratio left. It waits for the structural damping where that is not
 // known.
 func addShare(x *finding.Context, p finding.Part, left float64) {
-	others := fluidDamping(x)
+	others := fluidDamping(x) + orZero(x, group.DampingElectric)
 	x.AddOrWait(p, group.DampingRatio, func(structural float64) float64 {
 		total := structural + math.Max(others, left)
 		if total <= 0 {

@@ -30,6 +30,17 @@ func besselSize(z complex128) float64 {
 	return math.Abs(real(z)) + math.Abs(imag(z))
 }
 
+// besselScale is fz: a product with a real number costs half of a complex one.
+func besselScale(z complex128, f float64) complex128 {
+	return complex(real(z)*f, imag(z)*f)
+}
+
+// besselInverse is 1/z for z of moderate size, which needs no care for overflow.
+func besselInverse(z complex128) complex128 {
+	d := 1 / (real(z)*real(z) + imag(z)*imag(z))
+	return complex(real(z)*d, -imag(z)*d)
+}
+
 // besselKRatio returns K₁(z)/K₀(z) for |arg z| ≤ π/2, z ≠ 0.
 func besselKRatio(z complex128) complex128 {
 	switch r := cmplx.Abs(z); {
@@ -67,11 +78,11 @@ func besselKSeries(z complex128) (k0, k1 complex128) {
 	var term complex128 = 1
 	harmonic := 0.0
 	for k := 1.0; k < 60; k++ {
-		term *= t * complex(1/(k*k), 0)
+		term = besselScale(term*t, 1/(k*k))
 		harmonic += 1 / k
 		i0 += term
-		i1 += term * complex(1/(k+1), 0)
-		sum += term * complex(harmonic, 0)
+		i1 += besselScale(term, 1/(k+1))
+		sum += besselScale(term, harmonic)
 		if besselSize(term)*harmonic < besselEps {
 			break
 		}
@@ -85,7 +96,7 @@ func besselKSeries(z complex128) (k0, k1 complex128) {
 func besselKFraction(z complex128) (s, ratio complex128) {
 	const a1 = 0.25 // ¼ − ν² with ν = 0
 	b := 2 * (1 + z)
-	d := 1 / b
+	d := besselInverse(b)
 	h, step := d, d
 	q := complex(a1, 0)
 	var q1, q2 complex128 = 0, 1
@@ -94,11 +105,11 @@ func besselKFraction(z complex128) (s, ratio complex128) {
 	for i := 2.0; i < 500; i++ {
 		a -= 2 * (i - 1)
 		c = -a * c / i
-		next := (q1 - b*q2) * complex(1/a, 0)
+		next := besselScale(q1-b*q2, 1/a)
 		q1, q2 = q2, next
-		q += complex(c, 0) * next
+		q += besselScale(next, c)
 		b += 2
-		d = 1 / (b + complex(a, 0)*d)
+		d = besselInverse(b + besselScale(d, a))
 		step *= b*d - 1
 		h += step
 		ds := q * step
@@ -118,7 +129,7 @@ func besselHankel(m float64, w complex128) complex128 {
 	last := math.Inf(1)
 	for k := 1.0; k < 60; k++ {
 		odd := 2*k - 1
-		term *= complex((m-odd*odd)/(8*k), 0) * w
+		term = besselScale(term*w, (m-odd*odd)/(8*k))
 		size := besselSize(term)
 		if size >= last {
 			break
@@ -138,11 +149,11 @@ func besselISeries(z complex128) (i0, i1, i2 complex128) {
 	var term complex128 = 1
 	i0, i1, i2 = 1, 1, 0.5
 	for k := 1.0; k < 200; k++ {
-		term *= t * complex(1/(k*k), 0)
+		term = besselScale(term*t, 1/(k*k))
 		i0 += term
-		u := term * complex(1/(k+1), 0)
+		u := besselScale(term, 1/(k+1))
 		i1 += u
-		i2 += u * complex(1/(k+2), 0)
+		i2 += besselScale(u, 1/(k+2))
 		if besselSize(term) < besselEps*besselSize(i0) {
 			break
 		}

@@ -240,9 +240,10 @@ func structureRoot(f func(float64) float64, lo, hi float64) float64 {
 		}
 		return hi
 	}
+	stale := 0 // the end that stays while the other moves: its weight is halved
 	for i := range 200 {
 		mid := (lo*fhi - hi*flo) / (fhi - flo)
-		if i%4 == 3 || !(mid > lo && mid < hi) {
+		if i%8 == 7 || !(mid > lo && mid < hi) {
 			mid = 0.5 * (lo + hi)
 		}
 		fmid := f(mid)
@@ -251,11 +252,17 @@ func structureRoot(f func(float64) float64, lo, hi float64) float64 {
 		}
 		if (fmid > 0) == (flo > 0) {
 			lo, flo = mid, fmid
-			fhi *= 0.5
-		} else {
-			hi, fhi = mid, fmid
+			if stale == 1 {
+				fhi *= 0.5
+			}
+			stale = 1
+			continue
+		}
+		hi, fhi = mid, fmid
+		if stale == -1 {
 			flo *= 0.5
 		}
+		stale = -1
 	}
 	return 0.5 * (lo + hi)
 }

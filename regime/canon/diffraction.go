@@ -42,7 +42,7 @@ var cylinderDiffractionEntry = &Entry{
 	Name:     "CylinderDiffraction",
 	Problem:  "wave force on a vertical circular cylinder that diffracts the wave",
 	Equation: "C_M = 4/(π(ka)²|H₁′(ka)|), lag = arctan(J₁′/Y₁′)",
-	Args:     []Arg{{Name: "ka", Symbol: "ka", Doc: "wave number times radius", Min: 0, Max: diffractionMax, From: 0.01, To: 10}},
+	Args:     []Arg{{Name: "ka", Symbol: "ka", Doc: "wave number times radius", Min: 0, Max: diffractionMax, From: 0.01, To: 5}},
 	Outputs: []Output{
 		{ID: "inertia", Symbol: "C_M", Doc: "inertia coefficient"},
 		{ID: "lag", Symbol: "α", Doc: "lag of the force behind the undisturbed acceleration, rad"},

@@ -92,7 +92,8 @@ type Limit struct {
 	// Within is the relative distance that is left at that end of the range, the
 	// other arguments at their usual values; a test holds it.
 	Within float64
-	// Value is the limit as a function of all arguments, in their order.
+	// Value is the limit as a function of all arguments, in their order; NaN where it
+	// means nothing.
 	Value func(args []float64) float64
 }
 

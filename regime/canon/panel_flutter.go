@@ -108,20 +108,29 @@ func panelUncertainty(modes int, aspect, lambda float64) (float64, error) {
 func (p *panel) meeting(pair int, lo, hi float64) (lambda, square float64) {
 	gapLo, _ := p.gap(pair, lo)
 	gapHi, _ := p.gap(pair, hi)
+	stale := 0 // the end that stays while the other moves: its weight is halved
 	for range 60 {
+		before := lambda
 		lambda = (lo*gapHi - hi*gapLo) / (gapHi - gapLo)
 		var g float64
 		g, square = p.gap(pair, lambda)
-		switch {
-		case math.Abs(g) < 1e-13*square*square || hi-lo < 1e-13*hi:
-			return lambda, square
-		case g < 0:
+		// The gap of two frequencies that meet drowns in rounding about here.
+		if math.Abs(lambda-before) < 1e-11*lambda || hi-lo < 1e-13*hi {
+			break
+		}
+		if g < 0 {
 			hi, gapHi = lambda, g
-			gapLo /= 2
-		default:
-			lo, gapLo = lambda, g
+			if stale == -1 {
+				gapLo /= 2
+			}
+			stale = -1
+			continue
+		}
+		lo, gapLo = lambda, g
+		if stale == 1 {
 			gapHi /= 2
 		}
+		stale = 1
 	}
 	return lambda, square
 }

@@ -210,8 +210,8 @@ func shellGeneral(r, q float64) complex128 {
 	span := complex(h*(2+h), 0)
 	cq := complex(q, 0)
 	travel := z * complex(h, 0)
-	i1q, i2q := besselIRatios(zq)
 	if real(travel) > 42 {
+		i1q, i2q := besselIRatios(zq)
 		k1 := besselKRatio(z)
 		k2 := 1 + 2*k1/z
 		return 2*cq*cq*i2q*k2/(span*i2q-2/z*(i1q/cq+k1)) - 1

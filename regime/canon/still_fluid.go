@@ -62,8 +62,12 @@ func orNone(x float64, err error) float64 {
 	return x
 }
 
-// creepingLogarithm is the real part of ln(z/2) + γ, z = √(iR).
+// creepingLogarithm is the real part of ln(z/2) + γ, z = √(iR), where the flow
+// still creeps.
 func creepingLogarithm(r float64) float64 {
+	if r > 0.3 {
+		return math.NaN()
+	}
 	return math.Log(math.Sqrt(r)/2) + eulerGamma
 }
 
@@ -165,7 +169,7 @@ var stillFluidEntries = []*Entry{
 		Name:     "CylinderNearWall",
 		Problem:  "circular cylinder oscillating across its axis close to a plane wall in ideal fluid at rest",
 		Equation: "C = 1 + 2Σsᵢ, sᵢ₊₁ = sᵢ/dᵢ², dᵢ₊₁ = 2(1 + 2e) − 1/dᵢ; added mass C ρπD²/4 per length",
-		Args:     []Arg{{Name: "e", Symbol: "e", Doc: "gap between cylinder and wall over diameter", Min: 0, Max: imagesMaxGap, From: 1e-3, To: 10}},
+		Args:     []Arg{{Name: "e", Symbol: "e", Doc: "gap between cylinder and wall over diameter", Min: 0, Max: imagesMaxGap, From: 1e-4, To: 10}},
 		Outputs:  []Output{{ID: "coefficient", Symbol: "C", Doc: "added mass over displaced mass"}},
 		Accuracy: 1e-13,
 		Factor:   exactGeometryFactor,
@@ -182,7 +186,7 @@ var stillFluidEntries = []*Entry{
 		Problem:  "circular cylinder oscillating across its axis below a free surface in ideal fluid at rest, slow or fast",
 		Equation: "rigid lid: C = 1 + 2Σsᵢ; pressure-free: C = 1 + 2Σ(−1)ⁱsᵢ; sᵢ as near a wall with d for e; added mass C ρπD²/4 per length",
 		Args: []Arg{
-			{Name: "d", Symbol: "d", Doc: "distance from the surface to the top of the cylinder over diameter", Min: 0, Max: imagesMaxGap, From: 1e-3, To: 10},
+			{Name: "d", Symbol: "d", Doc: "distance from the surface to the top of the cylinder over diameter", Min: 0, Max: imagesMaxGap, From: 1e-4, To: 10},
 			{Name: "kind", Symbol: "kind", Doc: "rigid-lid for ω²d/g ≪ 1, pressure-free for ω²d/g ≫ 1", Choices: []string{RigidLid.String(), PressureFree.String()}},
 		},
 		Outputs:  []Output{{ID: "coefficient", Symbol: "C", Doc: "added mass over displaced mass"}},

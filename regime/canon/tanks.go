@@ -113,6 +113,7 @@ func uprightTankRoot(n int) float64 {
 // tank says what the entries of the two tanks differ in.
 type tank struct {
 	name, problem, equation, length string
+	inShallow, inDeep               string // the formulas of the mass fraction
 	solve                           func(n int, depth float64) (frequency, massFraction float64, err error)
 	// wave is the wave number of mode n, and shallow the mass that it takes along
 	// in shallow liquid, both over the length.
@@ -122,9 +123,10 @@ type tank struct {
 var (
 	rectangularTank = tank{
 		name: "RectangularTank", problem: "sloshing mode of a rectangular tank", length: "L",
-		equation: "ω²L/g = nπ tanh(nπh/L); m_n/m = 8 tanh(nπh/L)/(n³π³h/L), n odd",
-		solve:    RectangularTank,
-		wave:     func(n int) float64 { return float64(n) * math.Pi },
+		equation:  "ω²L/g = nπ tanh(nπh/L); m_n/m = 8 tanh(nπh/L)/(n³π³h/L), n odd",
+		inShallow: "8/(n²π²), odd n", inDeep: "8L/(n³π³h), odd n",
+		solve: RectangularTank,
+		wave:  func(n int) float64 { return float64(n) * math.Pi },
 		shallow: func(n int) float64 {
 			if n%2 == 0 {
 				return 0
@@ -134,9 +136,10 @@ var (
 	}
 	uprightTank = tank{
 		name: "UprightTank", problem: "sloshing mode of an upright circular tank", length: "R",
-		equation: "ω²R/g = ε_n tanh(ε_n h/R), J₁′(ε_n) = 0; m_n/m = 2 tanh(ε_n h/R)/(ε_n(ε_n² − 1)h/R)",
-		solve:    UprightTank,
-		wave:     uprightTankRoot,
+		equation:  "ω²R/g = ε_n tanh(ε_n h/R), J₁′(ε_n) = 0; m_n/m = 2 tanh(ε_n h/R)/(ε_n(ε_n² − 1)h/R)",
+		inShallow: "2/(ε_n² − 1)", inDeep: "2R/(ε_n(ε_n² − 1)h)",
+		solve: UprightTank,
+		wave:  uprightTankRoot,
 		shallow: func(n int) float64 {
 			ε := uprightTankRoot(n)
 			return 2 / (ε*ε - 1)
@@ -172,8 +175,8 @@ func (t *tank) entry() *Entry {
 		Limits: []Limit{
 			{"shallow: κ√(h/" + t.length + ")", "frequency", Low, 1e-6, func(a []float64) float64 { return t.wave(int(a[0])) * math.Sqrt(a[1]) }},
 			{"deep: √κ", "frequency", High, 1e-12, func(a []float64) float64 { return math.Sqrt(t.wave(int(a[0]))) }},
-			{"shallow", "mass_fraction", Low, 1e-6, func(a []float64) float64 { return t.shallow(int(a[0])) }},
-			{"deep", "mass_fraction", High, 1e-12, func(a []float64) float64 { return t.deep(int(a[0]), a[1]) }},
+			{"shallow: " + t.inShallow, "mass_fraction", Low, 1e-6, func(a []float64) float64 { return t.shallow(int(a[0])) }},
+			{"deep: " + t.inDeep, "mass_fraction", High, 1e-12, func(a []float64) float64 { return t.deep(int(a[0]), a[1]) }},
 		},
 		Eval: func(a []float64) ([]float64, error) {
 			frequency, mass, err := t.solve(int(a[0]), a[1])

@@ -78,6 +78,10 @@ var (
 		Full: "Diederich, F. W. & Budiansky, B., Divergence of swept wings, NACA TN 1680, 1948", Locator: "uniform swept cantilever"}
 	Davenport1967 = &Source{ID: "davenport-1967", Short: "Davenport 1967", Memory: true,
 		Full: "Davenport, A. G., Gust loading factors, Journal of the Structural Division ASCE 93, 11-34, 1967"}
+	Taylor1941 = &Source{ID: "taylor-1941", Short: "Taylor 1941", Memory: true,
+		Full: "Taylor, G. I., The pressure and impulse of submarine explosion waves on plates, 1941, in Scientific Papers vol. 3, Cambridge University Press, 1963"}
+	Cole1948 = &Source{ID: "cole-1948", Short: "Cole 1948", Memory: true,
+		Full: "Cole, R. H., Underwater Explosions, Princeton University Press, 1948", Locator: "ch. 7, shock wave; ch. 10, damage to plates"}
 	ThisMethod = &Source{ID: "this-method", Short: "definition of this method",
 		Full: "A definition or a judgement of this tool, with its reason beside it; no outside source"}
 )
@@ -87,4 +91,4 @@ var assumptions = []*Source{GovardhanWilliamson2000, Blevins1990, GadElHak1999, 
 	KinslerFrey2000, Landau1987, Newman1977, ScanlanTomko1971, LowryPolhamus1957, DiederichBudiansky1948, Davenport1967, WeaverFitzpatrickElKashlan1987,
 	PettigrewTaylor2003, Zukauskas1972, Parker1978, Zdravkovich1987, BokaianGeoola1984, ASMESTS1, PaidoussisPriceSuen1982, TurekHron2006,
 	ApeltWest1975, Sader2016, ThisMethod,
-	Faltinsen1990, Miche1944, WienkeOumeraci2005, Keulegan1959, Malhotra2000, Housner1957, Morison1950}
+	Faltinsen1990, Miche1944, WienkeOumeraci2005, Keulegan1959, Malhotra2000, Housner1957, Morison1950, Taylor1941, Cole1948}

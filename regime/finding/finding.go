@@ -44,6 +44,10 @@ type Part struct {
 	Least bool
 
 	Utilisation float64 // set by the judge
+
+	// Groups are those of the mode that the part belongs to, where it is
+	// another one than that of the answer; nil otherwise.
+	Groups *group.Set
 }
 
 // Finding is the judgement of one assumption in one case.
@@ -52,6 +56,7 @@ type Finding struct {
 	OfInterest bool      // false: no part is of interest; reported, rules out nothing
 	Reason     *Sentence // why it is not applicable
 	Governing  int8      // index of the part that governs; −1: none
+	Mode       int8      // number of the mode that it was judged for, where a case gives several; 0: one mode
 	parts      []Part
 	published  []Published
 }
@@ -273,4 +278,27 @@ func (f *Finding) promoteInvalid(x *Context) {
 			worst, f.Governing = p.Utilisation, int8(i)
 		}
 	}
+}
+
+// WorseThan orders findings of several modes: by verdict, then by u·φ.
+func (f *Finding) WorseThan(g *Finding) bool {
+	if f.Verdict != g.Verdict {
+		return f.Verdict > g.Verdict
+	}
+	p, q := f.Main(), g.Main()
+	if p == nil || q == nil {
+		return p != nil
+	}
+	return p.Utilisation*p.Factor > q.Utilisation*q.Factor
+}
+
+// OfMode returns a copy of the finding that knows the mode it was judged for.
+func (f *Finding) OfMode(number int, g *group.Set) Finding {
+	c := *f
+	c.Mode = int8(number)
+	c.parts = append([]Part(nil), f.parts...)
+	for i := range c.parts {
+		c.parts[i].Groups = g
+	}
+	return c
 }

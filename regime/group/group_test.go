@@ -149,7 +149,7 @@ func TestTraits(t *testing.T) {
 	if group.Flow != group.Cross|group.Axial|group.Grazing|group.Internal {
 		t.Error("a mean flow is cross, axial, grazing or internal")
 	}
-	for _, f := range []group.Traits{group.Fluid, group.Still, group.Cross, group.Liquid, group.Film, group.FrequencyLost} {
+	for _, f := range []group.Traits{group.Fluid, group.Still, group.Cross, group.Liquid, group.Film, group.Shock} {
 		if bits.OnesCount64(uint64(f)) != 1 {
 			t.Errorf("trait %b is not one bit", f)
 		}

@@ -178,6 +178,16 @@ const (
 	WallMassRatio
 
 	AddedMassSoftest
+	Electromechanical
+	DampingElectric
+	ElectricLoad
+	HarvestShare
+	QualityFluid
+
+	Taylor
+	ShockImpulse
+	ShockTension
+	ShockPeriod
 
 	Count // number of groups
 )
@@ -565,4 +575,22 @@ var table = [Count]Def{
 		Definition: "mass per area of the wall / (density of the fluid × radius)"},
 	AddedMassSoftest: {ID: "added_mass_ratio_softest", Symbol: "μ_max", Title: "largest added mass ratio",
 		Definition: "added mass / dry mass of that motion of a free body in which it is largest"},
+	Electromechanical: {ID: "electromechanical", Symbol: "K²", Title: "generalised electromechanical coupling",
+		Definition: "(open-circuit / short-circuit frequency)² − 1 = k²/(1 − k²)"},
+	DampingElectric: {ID: "damping_electric", Symbol: "ζ_e", Title: "damping ratio of the circuit",
+		Definition: "(Bl)²/(2 R m_w ω_w) of a moving coil; ½ K² r/(1 + (1 + K²) r²), r = ωRC, of a resistor on a piezoelectric part"},
+	ElectricLoad: {ID: "electric_load", Symbol: "ωRC", Title: "electric load",
+		Definition: "ω_w × load resistance × capacitance; matched at 1/√(1 + K²)"},
+	HarvestShare: {ID: "harvest_share", Symbol: "4πζ_m", Title: "energy that a matched load takes in a cycle",
+		Definition: "4πζ_m, ζ_m the damping ratio of a matched load: × ½ m_w ω² ξ² f is the power that can be harvested, in order of magnitude"},
+	QualityFluid: {ID: "quality_fluid", Symbol: "Q_f", Title: "quality factor by the fluid alone",
+		Definition: "1/(2(ζ_v + ζ_rad)) at the wet frequency"},
+	Taylor: {ID: "taylor_parameter", Symbol: "ψ", Title: "Taylor's parameter",
+		Definition: "ρ c θ/m″, θ the decay time of the shock, m″ the mass per area of the plate"},
+	ShockImpulse: {ID: "shock_impulse", Symbol: "I/2Pθ", Title: "share of the shock's impulse",
+		Definition: "impulse that the plate takes until the liquid lets go / impulse on a rigid wall 2Pθ, ψ^(ψ/(1 − ψ))"},
+	ShockTension: {ID: "shock_tension", Symbol: "p_t/(p − p_v)", Title: "tension of the reflected shock",
+		Definition: "largest tension at the face of the plate / (p − p_v)"},
+	ShockPeriod: {ID: "shock_period", Symbol: "θ f_w", Title: "decay time over wet period",
+		Definition: "decay time of the shock / wet period"},
 }

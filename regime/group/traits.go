@@ -27,14 +27,10 @@ const (
 	Uniform                          // a uniform section in a uniform fluid
 	ModesDerived                     // higher frequencies follow from the kind
 	StaticOnly                       // no frequency, and none is of interest
-	LidImage                         // the surface acts as a rigid lid
-	FreeImage                        // the surface acts as pressure-free
 	Cavity                           // a closed cavity behind the structure
-	TaperedEnd                       // the free end in axial flow is tapered
 	Amplitude                        // the amplitude of the motion was given
 	Flexible                         // the structure bends: slopes and strains exist
 	PanelLike                        // a flush panel: no separation of its own
-	FrequencyLost                    // a frequency arises but is not known
 	Piercing                         // the body pierces the free surface
 	Sloshing                         // the liquid of a tank, with a free surface
 	Spectrum                         // the excitation is a spectrum, given by its acceleration at the mode
@@ -48,10 +44,30 @@ const (
 	Neighboured                      // another cylinder stands near, across or along the flow
 	Column                           // a column of fluid inside a tube
 	Pulsatile                        // a pulse runs through a compliant tube
+	Active                           // a piezoelectric part or a moving coil
+	Shock                            // a shock wave meets the structure
 )
 
 // Flow are the traits that mean a mean flow.
 const Flow = Cross | Axial | Grazing | Internal
+
+// TraitName pairs a trait with its name in the catalogue.
+type TraitName struct {
+	Trait Traits
+	Name  string
+}
+
+// TraitNames lists the traits by name.
+var TraitNames = []TraitName{
+	{Fluid, "fluid"}, {Still, "still"}, {Cross, "cross-flow"}, {Axial, "axial-flow"}, {Grazing, "grazing-flow"}, {Internal, "internal-flow"},
+	{Waves, "waves"}, {Contained, "contained"}, {Liquid, "liquid"}, {Gas, "gas"}, {Bluff, "bluff"}, {Streamlined, "streamlined"},
+	{Circular, "circular"}, {Confined, "confined"}, {NearSurface, "near-surface"}, {Film, "film"}, {ViscousSolved, "viscous-solution"},
+	{Cantilever, "cantilever"}, {Restrained, "restrained"}, {Uniform, "uniform"}, {ModesDerived, "modes-derived"}, {StaticOnly, "static-only"},
+	{Cavity, "cavity"}, {Amplitude, "amplitude-given"}, {Flexible, "flexible"}, {PanelLike, "panel"}, {Piercing, "surface-piercing"},
+	{Sloshing, "sloshing"}, {Spectrum, "spectrum"}, {Elongated, "elongated"}, {BluntEdge, "blunt-edge"}, {Lifting, "lifting"},
+	{Array, "array"}, {WakeOfBody, "wake-of-body"}, {TwoPhase, "two-phase"}, {Duct, "duct"}, {Neighboured, "neighboured"},
+	{Column, "column"}, {Pulsatile, "pulsatile"}, {Active, "active"}, {Shock, "shock"},
+}
 
 // Is reports whether every one of the traits holds.
 func (t Traits) Is(want Traits) bool { return t&want == want }

@@ -15,6 +15,7 @@ type Value struct {
 	Text  string            // Text, Choice
 	List  []string          // Choices
 	Flag  bool
+	Rows  [][]Value // Rows
 }
 
 // Case is what the caller said. It holds only what was given.

@@ -264,6 +264,12 @@ func (d *decoder) field(f *Field, at string, raw jsontext.Value) {
 		d.bad.Add(at, WrongType, fmt.Sprintf("%s is null; leave the field out instead.", f.Path()), raw)
 		return
 	}
+	if f.Service != nil && raw.Kind() == '{' {
+		if as, marked := find(raw, "as"); marked {
+			d.service(f, at, raw, as)
+			return
+		}
+	}
 	v := Value{Field: f}
 	ok := false
 	switch f.Type {
@@ -289,10 +295,55 @@ func (d *decoder) field(f *Field, at string, raw jsontext.Value) {
 		v.List, ok = d.choices(f, at, raw)
 	case Interval:
 		v.Ends, ok = d.interval(f, at, raw)
+	case Rows:
+		v.Rows, ok = d.rows(f, at, raw)
 	}
-	if ok && d.made != nil {
+	d.keep(v, ok, at, raw)
+}
+
+// keep keeps a value that was read, unless its field has one already.
+func (d *decoder) keep(v Value, ok bool, at string, raw jsontext.Value) {
+	switch {
+	case !ok || d.made == nil:
+	case d.made.Has(v.Field):
+		d.bad.Add(at, Duplicate, v.Field.Path()+" is given twice.", raw)
+	default:
 		d.made.set(v)
 	}
+}
+
+// service reads a range that is marked as one of operation, "as": "range", in
+// place of the field that holds one.
+func (d *decoder) service(f *Field, at string, raw, as jsontext.Value) {
+	if as.Kind() != '"' || text(as) != "range" {
+		d.bad.Add(at+"/as", UnknownChoice, "as is \"range\": the values in service.", as)
+		return
+	}
+	o, ok := d.object(f, at, raw)
+	if !ok {
+		return
+	}
+	if o.Low == nil || o.High == nil || o.Value != nil || o.Std != nil || o.Percent != nil {
+		d.bad.Add(at, MissingField, "A range of operation has low, high and unit.", raw)
+		return
+	}
+	v := Value{Field: f.Service}
+	for i, x := range []float64{*o.Low, *o.High} {
+		q, err := units.FromValueUnit(x, o.Unit, f.Kind)
+		if err != nil {
+			d.unitError(f, at, raw, err)
+			return
+		}
+		if !d.rule(f, q.Value, at, raw) {
+			return
+		}
+		v.Ends[i] = q
+	}
+	if v.Ends[0].Value > v.Ends[1].Value {
+		d.bad.Add(at, Contradiction, fmt.Sprintf("%s: the lowest value is above the highest.", f.Path()), raw)
+		return
+	}
+	d.keep(v, true, at, raw)
 }
 
 // rule checks the plain range of a number.
@@ -402,6 +453,9 @@ func (d *decoder) object(f *Field, at string, raw jsontext.Value) (units.Object,
 }
 
 func (d *decoder) objectMember(f *Field, o *units.Object, name, pointer string, value jsontext.Value) bool {
+	if name == "as" && f.Service != nil {
+		return true
+	}
 	if name == "unit" {
 		if value.Kind() != '"' {
 			d.bad.Add(pointer, WrongType, "A unit is a string.", value)
@@ -507,6 +561,32 @@ func (d *decoder) interval(f *Field, at string, raw jsontext.Value) ([2]units.Qu
 		ok = false
 	}
 	return ends, ok
+}
+
+// maxRows is the most objects that a list may have.
+const maxRows = 50
+
+// rows reads a list of objects.
+func (d *decoder) rows(f *Field, at string, raw jsontext.Value) ([][]Value, bool) {
+	if raw.Kind() != '[' {
+		d.bad.Add(at, WrongType, fmt.Sprintf("%s is a list of objects.", f.Path()), raw)
+		return nil, false
+	}
+	list := elements(raw)
+	if len(list) == 0 || len(list) > maxRows {
+		d.bad.Add(at, OutOfRange, fmt.Sprintf("%s has between 1 and %d objects.", f.Path(), maxRows), raw)
+		return nil, false
+	}
+	var rows [][]Value
+	for i, value := range list {
+		sub := &decoder{schema: d.schema, made: NewCase(d.schema, "")}
+		sub.block(f.Row, at+"/"+strconv.Itoa(i), value)
+		for _, v := range sub.bad.list {
+			d.bad.Add(v.Pointer, v.Code, v.Sentence, []byte(v.Value))
+		}
+		rows = append(rows, sub.made.given)
+	}
+	return rows, true
 }
 
 func elements(raw jsontext.Value) []jsontext.Value {

@@ -145,7 +145,32 @@ func (v *Value) append(dst []byte) []byte {
 		}
 		return append(dst, ']')
 	}
+	if v.Field.Type == Rows {
+		return v.appendRows(dst)
+	}
 	return append(dst, "null"...)
+}
+
+// appendRows writes a list of objects, the names of each sorted.
+func (v *Value) appendRows(dst []byte) []byte {
+	dst = append(dst, '[')
+	for i, row := range v.Rows {
+		if i > 0 {
+			dst = append(dst, ',')
+		}
+		sorted := slices.Clone(row)
+		slices.SortFunc(sorted, func(a, b Value) int { return strings.Compare(a.Field.Name, b.Field.Name) })
+		dst = append(dst, '{')
+		for j := range sorted {
+			if j > 0 {
+				dst = append(dst, ',')
+			}
+			dst = appendName(dst, sorted[j].Field.Name)
+			dst = sorted[j].append(dst)
+		}
+		dst = append(dst, '}')
+	}
+	return append(dst, ']')
 }
 
 func appendQuantity(dst []byte, q *units.Quantity, k units.Kind) []byte {

@@ -19,6 +19,7 @@ const (
 	Choice // one of a list of names
 	Choices
 	Interval // lowest and highest of a quantity
+	Rows     // a list of objects with fields of their own
 )
 
 // Field describes one field of a case.
@@ -32,6 +33,8 @@ type Field struct {
 	Options []string   // names of a Choice
 	Needed  bool       // a case without it is refused
 	Of      string     // block; filled in by the schema: "structure"
+	Row     *Block     // fields of each object of Rows
+	Service *Field     // the Interval that a range marked "as": "range" stands for; may be nil
 }
 
 // Pointer is the JSON Pointer of the field (RFC 6901).

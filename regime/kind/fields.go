@@ -46,7 +46,7 @@ var (
 	FluidHeatRatio     = pure("heat_capacity_ratio", "gt=1,lt=2", "ratio of specific heats of a gas", "1.4 for a gas by values")
 	FluidPrandtl       = pure("prandtl_number", "gt=0", "Prandtl number", "0.7 for a gas by values")
 	fluidBlock         = &input.Block{Name: "fluid", Title: "Fluid", Doc: "the fluid around or inside the structure: by name with its state, or by values", Shorthand: FluidName, Fields: []*input.Field{FluidName, FluidPhase, FluidTemperature, FluidPressure, FluidSalinity, FluidDensity, FluidViscosity, FluidKinematic, FluidSoundSpeed, FluidVapour, FluidTension, FluidHeatRatio, FluidPrandtl}}
-	FlowSpeed          = quantity("speed", units.Speed, "gte=0", "speed of the free stream", "")
+	FlowSpeed          = &input.Field{Name: "speed", Type: input.Quantity, Kind: units.Speed, Rule: "gte=0", Doc: "speed of the free stream; a range marked \"as\": \"range\" gives the speeds in service", Service: FlowOperating}
 	FlowGapSpeed       = quantity("gap_speed", units.Speed, "gt=0", "speed in the gaps of a tube array, in place of that of the free stream; the speeds of operation then are in the gaps too", "U P/(P − D)")
 	FlowDirection      = choice("direction", "how the flow runs to the structure: across it, along it, over its surface, or inside it", "the usual one of the kind", "cross", "axial", "grazing", "internal")
 	FlowTurbulence     = pure("turbulence_intensity", "gte=0,lte=2", "r.m.s. of the speed over the mean speed", "not considered")
@@ -66,7 +66,7 @@ var (
 	NeighbourDistance  = quantity("neighbour_spacing", units.Length, "gt=0", "distance between the axis of a cylinder and that of its neighbour, of about the same diameter", "no neighbour")
 	NeighbourPlace     = choice("neighbour_arrangement", "how the neighbour stands to the flow", "from the angle", "tandem", "side-by-side", "staggered")
 	NeighbourAngle     = quantity("neighbour_angle", units.Angle, "gte=0,lte=1.5707963267948968", "angle between the flow and the line of the two axes: 0 in tandem, 90° side by side", "by the arrangement")
-	surroundingsBlock  = &input.Block{Name: "surroundings", Title: "Surroundings", Doc: "walls, surfaces, gravity and pressure", Fields: []*input.Field{Gravity, AmbientPressure, WallGap, ShellDiameter, DepthBelowSurface, BackingDepth, NeighbourDistance, NeighbourPlace, NeighbourAngle}}
+	surroundingsBlock  = &input.Block{Name: "surroundings", Title: "Surroundings", Doc: "walls, surfaces, gravity and pressure", Fields: []*input.Field{Gravity, AmbientPressure, WallGap, ShellDiameter, DepthBelowSurface, BackingDepth, NeighbourDistance, NeighbourPlace, NeighbourAngle, ShockPressure, ShockDecay}}
 	Title              = &input.Field{Name: "title", Type: input.Text, Rule: "max=200", Doc: "a title for the case"}
 	Reference          = &input.Field{Name: "reference", Type: input.Text, Rule: "max=200", Doc: "a reference of the caller's own: drawing, ticket, source"}
 	InterestField      = &input.Field{Name: "interest", Type: input.Choices, Options: finding.MeasureNames(), Doc: "the measures that count in this study", Default: "frequency, load, stability, scale"}
@@ -100,9 +100,16 @@ var (
 	LinearStrain  = pure("linear_strain", "gt=0", "strain up to which the material is about linear", "that of the material")
 )
 
+// modeFields are what a mode has of its own.
+var modeFields = []*input.Field{FrequencyDry, FrequencyWet, DampingRatio, LogDecrement, LossFactor, QualityFactor}
+
+// Modes gives several modes at once; each finding is then that of its worst mode.
+var Modes = &input.Field{Name: "modes", Type: input.Rows, Row: &input.Block{Name: "mode", Title: "Mode", Doc: "a mode: its frequency and damping", Fields: modeFields},
+	Doc: "several modes, each with the frequency and damping that it has of its own (at most 50)", Default: "the one mode of the structure"}
+
 // modal lists the fields that every kind has, before those of its own.
 func modal(own ...*input.Field) []*input.Field {
-	return append(own, FrequencyDry, FrequencyWet, DampingRatio, LogDecrement, LossFactor, QualityFactor)
+	return append(append(own, modeFields...), Modes)
 }
 
 // elastic lists the fields of a structure made of a material.

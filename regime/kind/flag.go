@@ -20,7 +20,7 @@ var (
 	flBending   = quantity("bending_stiffness", units.BendingStiffnessPlate, "gt=0", "bending stiffness per width", "Eh³/(12(1 − ν²))")
 	flEdge      = choice("clamped_edge", "edge that is held: leading, or trailing of an inverted flag", "leading", "leading", "trailing")
 	flBody      = quantity("leading_body", units.Length, "gt=0", "diameter of a bluff body that holds the flag, in whose wake it lies", "none: a thin pole or edge")
-	flStrouhal  = pure("strouhal", "gt=0,lt=1", "Strouhal number of the leading body with the flag behind it", "by Reynolds number, a circular cylinder")
+	flStrouhal  = pure("strouhal", "gt=0,lt=1", "Strouhal number of the leading body on its diameter, with the flag behind it", "by Reynolds number, a circular cylinder")
 )
 
 // Flag is a plate clamped at one edge in a flow along it.
@@ -521,7 +521,7 @@ func (f *flapper) bodyGroups(s *scale.Set, g *group.Set) {
 		waitFor(s, g, []scale.ID{scale.Speed, scale.KinematicViscosity}, group.Strouhal, group.SheddingRatio, group.LockInPosition)
 		return
 	}
-	g.Put(group.Strouhal, f.wake.st)
+	g.Put(group.Strouhal, f.wake.st*f.l/f.body) // on the flow length, as every Strouhal number
 	if f.wake.st == 0 {
 		return
 	}

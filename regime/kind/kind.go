@@ -60,6 +60,7 @@ func Resolve(c *input.Case) (*Resolved, []Warning, []input.Violation) {
 	r.fluid()
 	r.environment()
 	physics := k.New(r)
+	r.active()
 	r.closeGroups()
 	r.compareGroups()
 	if r.violations.Any() {
@@ -75,6 +76,7 @@ func (r *Resolved) Groups() *group.Set {
 	formulas(r.Scales, g)
 	drop(g)
 	r.Physics.Groups(r.Scales, g)
+	activeGroups(r.Scales, g)
 	damping(r.Scales, g)
 	for _, given := range r.Given {
 		if !given.used && !g.Has(given.ID) {

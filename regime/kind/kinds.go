@@ -19,6 +19,9 @@ var All = []*Kind{
 	Vessel,
 	Tank,
 	Floater,
+	Piston,
+	Film,
+	Microbeam,
 }
 
 // Find returns the kind of that name, or nil.
@@ -68,7 +71,7 @@ func newSchema() *input.Schema {
 	for _, k := range All {
 		kinds = append(kinds, &input.Block{Name: k.Name, Title: k.Title, Doc: k.Doc, Fields: k.Fields})
 	}
-	return input.NewSchema(top, kinds, []*input.Block{fluidBlock, flowBlock, wavesBlock, motionBlock, surroundingsBlock, toleranceBlock, criteriaBlock, givenBlock})
+	return input.NewSchema(top, kinds, []*input.Block{fluidBlock, flowBlock, wavesBlock, motionBlock, surroundingsBlock, toleranceBlock, criteriaBlock, givenBlock, activeBlock})
 }
 
 // Schema is everything that a case may contain.

@@ -226,7 +226,7 @@ func damping(s *scale.Set, g *group.Set) {
 		return
 	}
 	total := g.Get(group.DampingRatio)
-	for _, id := range []group.ID{group.DampingViscous, group.DampingRadiation, group.DampingFlow, group.DampingTwoPhase} {
+	for _, id := range []group.ID{group.DampingViscous, group.DampingRadiation, group.DampingFlow, group.DampingTwoPhase, group.DampingElectric} {
 		if g.Has(id) {
 			total += g.Get(id)
 		}

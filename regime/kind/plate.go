@@ -95,6 +95,7 @@ func newPlate(r *Resolver) Physics {
 	p.frequencies(r)
 	r.interestOf()
 	p.deform(r)
+	r.shock(p.sides)
 	if r.Is(group.Grazing) {
 		p.limitCycle(r)
 	}
@@ -575,6 +576,7 @@ func (p *plate) Groups(s *scale.Set, g *group.Set) {
 	p.still(s, g)
 	p.pressures(s, g)
 	p.coupling(s, g)
+	shockGroups(s, g)
 	if s.Has(scale.WallGap) {
 		p.filmGroups(s, g)
 	}

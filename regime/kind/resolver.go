@@ -291,6 +291,9 @@ func (r *Resolver) environment() {
 		r.derive(scale.Pressure, r.X(scale.AmbientPressure)+depth, units.Pressure, "p₀ + ρgd")
 	}
 	r.waves()
+	if r.kind.Name != "plate" {
+		r.shock(0)
+	}
 	if !r.Is(group.Fluid) {
 		return
 	}

@@ -123,6 +123,8 @@ func (c *section) dimensions(r *Resolver) bool {
 	case equal && math.Abs(c.b/c.d-1) > 1e-3:
 		r.contradict(secBreadth, "A circle or a square is as broad as it is deep.")
 		return false
+	case equal || math.Abs(c.b/c.d-1) < 1e-9: // the same length in two units is the same
+		c.b = c.d
 	}
 	if !r.c.Has(secShape) {
 		r.warn(secShape, "assumed", "The section is taken as a bluff one of no particular shape.")

@@ -19,7 +19,7 @@ func axes(c *Class, kind string, g *group.Set, fs []finding.Finding) Axes {
 	set(&a.FluidInertia, inertia(c, at(assumption.FluidAbsent)))
 	set(&a.Phases, phases(g.Is(group.TwoPhase) || invalid(assumption.NoCavitation) || invalid(assumption.NoSurfaceTension)))
 	set(&a.Dimensions, dimensions(at(assumption.TwoDimensional), g.Is(group.Uniform)))
-	set(&a.Electromechanical, "none")
+	set(&a.Electromechanical, electromechanical(invalid(assumption.PassiveStructure)))
 	return a
 }
 
@@ -84,6 +84,13 @@ func inertia(c *Class, absent finding.Verdict) string {
 	default:
 		return "resolved"
 	}
+}
+
+func electromechanical(coupled bool) string {
+	if coupled {
+		return "coupled"
+	}
+	return "none"
 }
 
 func phases(two bool) string {

@@ -131,3 +131,16 @@ func beside(kind string, t group.Traits, fs []finding.Finding) *Class {
 	}
 	return nil
 }
+
+// Dearer reports whether a class stands above another on the ladder.
+func Dearer(a, b *Class) bool {
+	for i := range Classes {
+		switch &Classes[i] {
+		case a:
+			return false
+		case b:
+			return a != b
+		}
+	}
+	return false
+}

@@ -20,7 +20,7 @@ var (
 	small  = []*assumption.Entry{assumption.SmallDisplacement, assumption.SmallStroke, assumption.LinearStructure}
 	self   = []*assumption.Entry{assumption.NoLockIn, assumption.NoGalloping, assumption.NoFlutter, assumption.NoFluidelasticInstability, assumption.NoWakeInterference, assumption.NoOvalling}
 	static = []*assumption.Entry{assumption.NoDivergence, assumption.NoBucklingByFlow}
-	forced = []*assumption.Entry{assumption.NoWaveResonance, assumption.NoSloshingResonance, assumption.NoSlamming, assumption.NoAcousticResonance, assumption.NoPressureSurge}
+	forced = []*assumption.Entry{assumption.NoWaveResonance, assumption.NoSloshingResonance, assumption.NoSlamming, assumption.NoShock, assumption.NoAcousticResonance, assumption.NoPressureSurge}
 )
 
 func on(groups ...[]*assumption.Entry) []*assumption.Entry { return slices.Concat(groups...) }

@@ -121,6 +121,14 @@ const (
 	SpeedPeak
 	ExternalPressure
 	ColumnLength
+	ElectromechanicalCoupling
+	Capacitance
+	LoadResistance
+	CoilResistance
+	ForceFactor
+
+	ShockPressure
+	ShockDecay
 
 	Count
 )
@@ -326,4 +334,12 @@ var table = [Count]Def{
 	SpeedPeak:        {"speed_peak", "U_p", "peak speed of the pulse", "structure.peak_speed"},
 	ColumnLength:     {"column_length", "ℓ_c", "length of the column of fluid", "structure.column_length"},
 	ExternalPressure: {"external_pressure", "p_e", "absolute pressure around the vessel", "structure.external_pressure"},
+
+	ElectromechanicalCoupling: {"electromechanical_coupling", "K²", "generalised electromechanical coupling", "active.electromechanical_coupling"},
+	Capacitance:               {"capacitance", "C", "capacitance of the piezoelectric part, clamped", "active.capacitance"},
+	LoadResistance:            {"load_resistance", "R", "resistance of the load", "active.load_resistance"},
+	CoilResistance:            {"coil_resistance", "R_e", "resistance of the moving coil", "active.coil_resistance"},
+	ForceFactor:               {"force_factor", "Bl", "force factor of the moving coil", "active.force_factor"},
+	ShockPressure:             {"shock_pressure", "P", "peak pressure of the shock", "surroundings.shock_pressure"},
+	ShockDecay:                {"shock_decay_time", "θ", "decay time of the shock", "surroundings.shock_decay_time"},
 }

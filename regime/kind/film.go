@@ -1,0 +1,538 @@
+package kind
+
+import (
+	"fmt"
+	"math"
+
+	"regimed/regime/canon"
+	"regimed/regime/group"
+	"regimed/regime/input"
+	"regimed/regime/scale"
+	"regimed/units"
+)
+
+// squeeze is the fluid in a narrow gap between a face and a wall, or between
+// two faces that close on each other.
+type squeeze struct {
+	side    float64 // a side of the face, L
+	aspect  float64 // L over the other side; 0: a strip with L across it
+	area    float64 // of the face, in the reference of the dry mass
+	gap     float64
+	closing float64 // speed at which the gap closes over that of the face: 1, or 2 between two faces
+}
+
+// layer is the added mass of the gap without friction: the pressure of a thin
+// layer obeys the same equation as that of a viscous film, with ρ/g in place
+// of 12η/g³.
+//
+//	m_layer = ρ L² A T/(12 g), T = c/(ηL²A/g³) of the liquid film
+//
+// Symbols: ρ density (kg/m³), L side (m), A area (m²), g gap (m). Range: g ≪ L.
+// Accuracy: about g/L. Check: a strip of width b per length: ρb³/(12 g), from
+// ½ρ∫(vx/g)² g dx. Source: Batchelor 1967, from memory.
+func (q *squeeze) layer(rho float64) float64 {
+	t, err := canon.ThinFilmLiquid(q.aspect)
+	if err != nil {
+		return math.NaN()
+	}
+	return q.closing * rho * q.side * q.side * q.area * t / (12 * q.gap)
+}
+
+// viscosity is that of the fluid in the gap: of a rarefied gas the effective one.
+func (q *squeeze) viscosity(s *scale.Set, gas bool) float64 {
+	eta := s.X(scale.Viscosity)
+	if !gas {
+		return eta
+	}
+	ratio, err := canon.VeijolaViscosity(math.Min(meanFreePath(s)/q.gap, knudsenEnd))
+	if err != nil {
+		return math.NaN()
+	}
+	return eta * ratio
+}
+
+// Knudsen number at which the range of the effective viscosity ends.
+const knudsenEnd = 880
+
+// number is the squeeze number at a frequency.
+func (q *squeeze) number(s *scale.Set, f float64) float64 {
+	return 12 * q.viscosity(s, true) * 2 * math.Pi * f * q.side * q.side / (s.X(scale.Pressure) * q.gap * q.gap)
+}
+
+// force is the stiffness and the damping constant of the film at a frequency,
+// in the reference of the dry mass. A liquid has no time to be compressed.
+func (q *squeeze) force(s *scale.Set, gas bool, f float64) (spring, damper float64) {
+	if !gas {
+		t, err := canon.ThinFilmLiquid(q.aspect)
+		if err != nil {
+			return math.NaN(), math.NaN()
+		}
+		return 0, q.closing * s.X(scale.Viscosity) * q.side * q.side * q.area * t / (q.gap * q.gap * q.gap)
+	}
+	const end = 1e12 // of the solution: the gas is all spring long before
+	k, c, err := canon.ThinFilm(math.Min(q.number(s, f), end), q.aspect)
+	if err != nil {
+		return math.NaN(), math.NaN()
+	}
+	stiffest := q.stiffest(s)
+	return k * stiffest, c * stiffest / (2 * math.Pi * f)
+}
+
+// stiffest is the stiffness of gas that has no time to escape, p A/g.
+func (q *squeeze) stiffest(s *scale.Set) float64 {
+	return q.closing * s.X(scale.Pressure) * q.area / q.gap
+}
+
+// groups puts what a film that is all friction does: its spring and its damper,
+// beside the damping that the open side has of its own.
+func (q *squeeze) groups(s *scale.Set, g *group.Set) {
+	gas := g.Is(group.Gas)
+	motion, dry, wet := s.X(scale.FrequencyMotion), s.X(scale.FrequencyDry), s.X(scale.FrequencyWet)
+	spring, damper := q.force(s, gas, motion)
+	needs := []scale.ID{scale.Viscosity, scale.SoundSpeed, scale.HeatCapacityRatio, scale.FrequencyMotion, scale.DryMass, scale.FrequencyDry, scale.FrequencyWet, scale.Density}
+	if gas {
+		putOrWait(s, g, group.Squeeze, q.number(s, motion), needs...)
+	} else {
+		needs = []scale.ID{scale.Viscosity, scale.DryMass, scale.FrequencyDry, scale.FrequencyWet, scale.Density}
+	}
+	mass := s.X(scale.DryMass)
+	putOrWait(s, g, group.FluidStiffness, spring/(mass*math.Pow(2*math.Pi*dry, 2)), needs...)
+	added := s.X(scale.AddedMass) * known(g, group.ViscousInertia)
+	open := known(g, group.ViscousDamping) * s.X(scale.AddedMass) * 2 * math.Pi * wet
+	g.Drop(group.ViscousDamping) // counted here
+	putOrWait(s, g, group.DampingViscous, (damper+open)/(2*(mass+added)*2*math.Pi*wet), needs...)
+}
+
+// closingStroke puts the stroke over the gap where both faces move.
+func (q *squeeze) closingStroke(g *group.Set) {
+	if q.closing == 1 {
+		return
+	}
+	switch g.State(group.DisplacementGap) {
+	case group.Known, group.Adopted:
+		g.Put(group.DisplacementGap, q.closing*g.Get(group.DisplacementGap))
+	case group.Missing:
+		n := g.Need(group.DisplacementGap)
+		n.Coefficient /= math.Pow(q.closing, 1/n.Power)
+		if !math.IsNaN(n.Coefficient) && !math.IsInf(n.Coefficient, 0) {
+			g.Miss(group.DisplacementGap, n)
+		}
+	}
+}
+
+// isFilm says whether a gap is a film: below 15 % of the width, with inertia
+// that friction outweighs. A gas is a film to the bound from which on lubrication
+// does not count; the friction and the inertia of a liquid, which does not
+// compress, are solved together, so that it leaves the film where lubrication ends.
+func isFilm(gap, width, inertia float64, gas bool) bool {
+	end := float64(filmInertia)
+	if !gas {
+		end = liquidFilmInertia
+	}
+	return atMost(gap/width, thinFilm) && !(inertia > end)
+}
+
+// liquidFilmInertia is ωg²/ν at which lubrication is out of the question.
+const liquidFilmInertia = 1.5
+
+// betweenWalls is Γ of a layer in a gap, 1/(1 − tanh s/s), s = (g/2)√(iω/ν).
+func betweenWalls(gap, f, nu float64) (gr, gi float64) {
+	x := gap * math.Sqrt(math.Pi*f/(2*nu))
+	if !(x > 0) {
+		return math.NaN(), math.NaN()
+	}
+	gamma := gapFactor(x)
+	return real(gamma), -imag(gamma)
+}
+
+// sprung resolves the frequencies of a structure to which the fluid adds a
+// stiffness: f_w² (1 + μΓr) = f² + k_f/(4π²m), the last term by spring as a
+// function of f_w, never above most. gamma may be nil.
+func (r *Resolver) sprung(derived float64, how string, gamma, spring func(f float64) float64, most float64, needs ...scale.ID) {
+	mu := r.X(scale.AddedMass) / r.X(scale.DryMass)
+	if gamma == nil {
+		gamma = func(float64) float64 { return 1 }
+	}
+	load := func(f float64) float64 { return f * f * (1 + mu*gamma(f)) }
+	r.closeGroups()
+	dry := r.c.X(FrequencyDry)
+	if math.IsNaN(dry) {
+		dry = r.X(scale.FrequencyDry)
+	}
+	wet := r.c.X(FrequencyWet)
+	if math.IsNaN(dry) && !math.IsNaN(wet) {
+		square := load(wet) - spring(wet)
+		if square <= 0 {
+			r.contradict(FrequencyWet, fmt.Sprintf("The fluid alone is stiffer than a wet frequency of %s leaves room for.", units.Format(wet, units.Frequency)))
+			return
+		}
+		dry = math.Sqrt(square)
+		r.derive(scale.FrequencyDry, dry, units.Frequency, "from the wet one, less the mass and the stiffness of the fluid")
+	}
+	if math.IsNaN(dry) {
+		dry = derived
+	}
+	fw := sprungFrequency(dry, wetFrequency(dry, mu, gamma), load, spring, most)
+	effective := (dry*dry/(fw*fw) - 1) / mu
+	if math.IsInf(effective, 0) { // no mass to carry it
+		effective = 0
+	}
+	r.frequencies(derived, how, func(float64) float64 { return effective })
+	if v := r.Value(scale.FrequencyWet); most > 0 && v.Origin == scale.Derived {
+		v.Note = "√(f² + k_f/(4π²m))/√(1 + μΓr), the mass and the stiffness k_f of the fluid at the wet frequency"
+	}
+	if r.Has(scale.FrequencyWet) || !r.Has(scale.FrequencyDry) {
+		return
+	}
+	for _, id := range needs {
+		if n := r.Needs(id); n != "" && !r.Has(id) {
+			r.Need(scale.FrequencyWet, n)
+			r.Need(scale.FrequencyMotion, n)
+			return
+		}
+	}
+}
+
+// sprungFrequency solves load(f) − spring(f) = dry² by halving between the
+// frequency without the spring and that of the greatest spring without the mass.
+func sprungFrequency(dry, low float64, load, spring func(f float64) float64, most float64) float64 {
+	high := math.Sqrt(dry*dry + most)
+	if math.IsNaN(low) || !(high >= low) || math.IsInf(high, 1) || math.IsNaN(spring(low)) {
+		return math.NaN()
+	}
+	lo, hi := math.Log(low), math.Log(high)
+	for range 60 {
+		middle := (lo + hi) / 2
+		f := math.Exp(middle)
+		if load(f)-spring(f) < dry*dry {
+			lo = middle
+		} else {
+			hi = middle
+		}
+		if hi-lo < 1e-14 {
+			break
+		}
+	}
+	return math.Exp((lo + hi) / 2)
+}
+
+// sprungDamping puts the structural damping ratio of the wet oscillator, whose
+// stiffness is not that of the structure alone: ζ (f/f_w)/(1 + μΓr).
+func sprungDamping(s *scale.Set, g *group.Set) {
+	if !g.Has(group.DampingRatio) {
+		return
+	}
+	inertia := 1 + s.X(scale.AddedMass)*known(g, group.ViscousInertia)/s.X(scale.DryMass)
+	g.Put(group.DampingRatio, s.X(scale.Damping)*s.X(scale.FrequencyDry)/(s.X(scale.FrequencyWet)*inertia))
+}
+
+// The fields of a film.
+var (
+	fmLength    = quantity("length", units.Length, "gt=0", "side of a rectangular plate", "")
+	fmWidth     = quantity("width", units.Length, "gt=0", "other side of a rectangular plate", "")
+	fmRadius    = quantity("radius", units.Length, "gt=0", "radius of a round plate or rotor, in place of length and width", "")
+	fmGap       = quantity("gap", units.Length, "gt=0", "gap to the wall at rest; surroundings.wall_gap is the same", "")
+	fmMass      = quantity("moving_mass", units.Mass, "gt=0", "dry mass that moves", "density times area and thickness")
+	fmThickness = quantity("thickness", units.Length, "gt=0", "thickness of the plate", "")
+	fmStiffness = quantity("stiffness", units.Stiffness, "gt=0", "stiffness of the suspension, in place of a frequency", "")
+	fmStroke    = quantity("stroke", units.Length, "gte=0", "amplitude of the motion, in place of motion.amplitude", "")
+	fmOpen      = flag("open_back", "whether the other side faces open fluid", "true")
+)
+
+// Film is a rigid plate that moves towards a wall.
+var Film = &Kind{
+	Name:   "film",
+	Title:  "Plate over a film",
+	Doc:    "a rigid plate or rotor on a suspension that moves towards a wall, over a film of gas or liquid much thinner than it is wide",
+	Fields: modal(fmLength, fmWidth, fmRadius, fmGap, fmMass, fmThickness, fmStiffness, fmStroke, fmOpen, MaterialName, SolidDensity),
+	New:    newFilm,
+}
+
+// film holds the solved problem of a plate over a film.
+type film struct {
+	squeeze
+	a, b   float64 // sides
+	round  bool
+	isFilm bool
+	back   float64 // added mass of the open side
+	shell  float64 // of the gap, without friction
+}
+
+func newFilm(r *Resolver) Physics {
+	p := &film{}
+	if !p.shape(r) {
+		return p
+	}
+	r.stroke(fmStroke)
+	r.closeGroups()
+	r.damping()
+	p.masses(r)
+	p.loads(r)
+	derived := r.suspension(fmStiffness)
+	gas := r.Is(group.Gas)
+	spring, most := func(float64) float64 { return 0 }, 0.0
+	if p.isFilm && r.Is(group.Fluid) {
+		over := 4 * math.Pi * math.Pi * r.X(scale.DryMass)
+		spring = func(f float64) float64 { k, _ := p.force(r.Set, gas, f); return k / over }
+		most = p.stiffest(r.Set) / over
+	}
+	r.sprung(derived, "√(k/m)/2π", p.gamma(r), spring, most, scale.DryMass, scale.AddedMass, scale.Density, scale.Viscosity, scale.SoundSpeed, scale.HeatCapacityRatio)
+	r.interestOf()
+	return p
+}
+
+// suspension takes the stiffness of a suspension and returns the frequency that
+// follows, NaN without.
+func (r *Resolver) suspension(f *input.Field) float64 {
+	if !r.take(scale.Stiffness, f) {
+		return math.NaN()
+	}
+	return math.Sqrt(r.X(scale.Stiffness)/r.X(scale.DryMass)) / (2 * math.Pi)
+}
+
+// stroke takes the amplitude from a field of the kind.
+func (r *Resolver) stroke(f *input.Field) {
+	if !r.c.Has(f) {
+		return
+	}
+	x := r.c.X(f)
+	if r.c.Has(MotionAmplitude) && math.Abs(r.c.X(MotionAmplitude)-x) > 0.01*x {
+		r.contradict(f, fmt.Sprintf("%s and %s are the same and disagree.", f.Path(), MotionAmplitude.Path()))
+	}
+	r.take(scale.Amplitude, f)
+	r.trait(group.Amplitude)
+}
+
+func (p *film) shape(r *Resolver) bool {
+	p.a, p.b = r.c.X(fmLength), r.c.X(fmWidth)
+	radius := r.c.X(fmRadius)
+	switch {
+	case !math.IsNaN(radius) && (r.c.Has(fmLength) || r.c.Has(fmWidth)):
+		r.contradict(fmRadius, "A plate has a radius, or length and width.")
+		return false
+	case !math.IsNaN(radius):
+		// the film of a disc is that of the square of its area, within an eighth:
+		// 0.4217π² = 4.16 against 3π/2 = 4.71 in ηa⁴/g³ of a liquid
+		p.round, p.a = true, radius*math.Sqrt(math.Pi)
+		p.b = p.a
+		r.Put(scale.Length, radius, units.Length, scale.Given, "the radius")
+	case math.IsNaN(p.a) || math.IsNaN(p.b):
+		for _, f := range []*input.Field{fmLength, fmWidth} {
+			if !r.c.Has(f) {
+				r.violations.Add(f.Pointer(), input.MissingField, "A plate over a film needs length and width, or a radius.", nil)
+			}
+		}
+		return false
+	default:
+		r.derive(scale.Length, math.Min(p.a, p.b), units.Length, "the shorter side")
+	}
+	gap := r.c.X(fmGap)
+	switch wall := r.X(scale.WallGap); {
+	case math.IsNaN(gap) && math.IsNaN(wall):
+		r.violations.Add(fmGap.Pointer(), input.MissingField, "A film needs the gap to the wall.", nil)
+		return false
+	case math.IsNaN(gap):
+		gap = wall
+	case !math.IsNaN(wall) && math.Abs(wall/gap-1) > 1e-6:
+		r.contradict(fmGap, fmt.Sprintf("%s and %s are the same and disagree.", fmGap.Path(), WallGap.Path()))
+		return false
+	}
+	r.Put(scale.Gap, gap, units.Length, scale.Given, "to the wall")
+	p.squeeze = squeeze{side: p.a, aspect: p.a / p.b, area: p.a * p.b, gap: gap, closing: 1}
+	if !atMost(gap, math.Min(p.a, p.b)) {
+		r.contradict(fmGap, "The gap is wider than the plate: that is no film. Use another kind.")
+		return false
+	}
+	return true
+}
+
+func (p *film) masses(r *Resolver) {
+	r.takeOrNeed(scale.Thickness, fmThickness)
+	solidDensity(r)
+	h, area := r.X(scale.Thickness), p.area
+	r.Value(scale.DryMass).Kind = units.Mass
+	if !r.take(scale.DryMass, fmMass) {
+		r.derive(scale.DryMass, r.X(scale.SolidDensity)*area*h, units.Mass, "ρ_s times area and thickness")
+		r.Need(scale.DryMass, fmMass.Path())
+	}
+	r.derive(scale.DisplacedMass, r.X(scale.Density)*area*h, units.Mass, "ρ times area and thickness")
+	r.Value(scale.DisplacedMass).Kind = units.Mass
+	r.Need(scale.DisplacedMass, fmThickness.Path())
+	if !math.IsNaN(h) {
+		r.Need(scale.DisplacedMass, r.Needs(scale.Density))
+	}
+	r.closeGroups()
+}
+
+// solidDensity takes the density of the solid, or looks it up.
+func solidDensity(r *Resolver) {
+	if r.c.Has(MaterialName) {
+		r.material()
+		return
+	}
+	r.takeOrNeed(scale.SolidDensity, SolidDensity)
+	r.plausibleSolid()
+}
+
+// loads resolves the added masses: half of that of the plate in open fluid on
+// its back, and the layer in the gap where it is no film.
+func (p *film) loads(r *Resolver) {
+	rho := r.X(scale.Density)
+	whole := heavingPlate(p.a, p.b) * rho
+	if radius := r.X(scale.Length); p.round {
+		whole = 8. / 3 * rho * radius * radius * radius
+	}
+	if r.c.Flag(fmOpen, true) {
+		p.back = whole / 2
+	}
+	if !r.c.Has(fmOpen) && r.Is(group.Fluid) {
+		r.warn(fmOpen, "assumed", "The other side of the plate is taken to face open fluid.")
+	}
+	p.shell = p.layer(rho)
+	inertia := 2 * math.Pi * r.likelyFrequency(p.suspended(r)) * p.gap * p.gap / r.X(scale.KinematicViscosity)
+	p.isFilm = isFilm(p.gap, math.Min(p.a, p.b), inertia, !r.Is(group.Liquid))
+	added, how := p.back, "half of that in open fluid, on the back; a film whose friction outweighs its inertia adds a spring and a damper, no mass"
+	if r.Is(group.Fluid) {
+		r.trait(group.Confined)
+		if p.isFilm {
+			r.trait(group.Film)
+		} else {
+			added, how = p.back+p.shell, "the layer in the gap, and half of that in open fluid on the back"
+		}
+	}
+	r.derive(scale.AddedMassFree, whole, units.Mass, "a rigid plate in open fluid")
+	r.derive(scale.AddedMass, added, units.Mass, how)
+	for _, id := range []scale.ID{scale.AddedMass, scale.AddedMassFree} {
+		r.Need(id, r.Needs(scale.Density))
+		r.Value(id).Kind = units.Mass
+	}
+	r.derive(scale.ViscousLength, p.gap, units.Length, "the gap")
+	if d := r.X(scale.Depth); atMost(d, 10*r.X(scale.Length)) && r.Is(group.Fluid) {
+		r.trait(group.NearSurface)
+	}
+	r.closeGroups()
+}
+
+// suspended is the frequency on the suspension, NaN where it is not known.
+func (p *film) suspended(r *Resolver) float64 {
+	return math.Sqrt(r.c.X(fmStiffness)/r.X(scale.DryMass)) / (2 * math.Pi)
+}
+
+// likelyFrequency is the frequency of the motion, the dry or the wet one, the
+// first that is given, or another.
+func (r *Resolver) likelyFrequency(otherwise float64) float64 {
+	for _, f := range []*input.Field{MotionFrequency, FrequencyDry, FrequencyWet} {
+		if r.c.Has(f) {
+			return r.c.X(f)
+		}
+	}
+	return otherwise
+}
+
+// heavingPlate is the added mass over the density of a rectangular plate that
+// moves across its plane in open fluid.
+//
+//	m/ρ = (π/4) b² a K, K = λ/√(1 + λ²) (1 − 0.425 λ/(1 + λ²)), λ = a/b
+//
+// Symbols: a, b sides (m). Range: any ratio. Accuracy: 5 %. Check: a square:
+// K = 0.557, the exact solution 0.579; a strip: K = 1. Source: Pabst 1930, from
+// memory of its citation in Blevins 1990.
+func heavingPlate(a, b float64) float64 {
+	b, a = math.Min(a, b), math.Max(a, b)
+	l := a / b
+	k := l / math.Hypot(1, l) * (1 - 0.425/(1/l+l))
+	return math.Pi / 4 * b * b * a * k
+}
+
+// viscous is Γ of back and gap together, each with its share of the added mass.
+func (p *film) viscous(f, nu float64) (gr, gi float64, err error) {
+	br, bi, err := ribbon(2 * math.Pi * f * math.Pow(math.Min(p.a, p.b)/2, 2) / nu)
+	if err != nil || p.isFilm {
+		return br, bi, err
+	}
+	lr, li := betweenWalls(p.gap, f, nu)
+	share := p.shell / (p.shell + p.back)
+	return br + share*(lr-br), bi + share*(li-bi), nil
+}
+
+func (p *film) gamma(r *Resolver) func(f float64) float64 {
+	nu := r.X(scale.KinematicViscosity)
+	if math.IsNaN(nu) || !r.Is(group.Fluid) {
+		return nil
+	}
+	return func(f float64) float64 {
+		gr, _, err := p.viscous(f, nu)
+		if err != nil || math.IsNaN(gr) {
+			return 1
+		}
+		return gr
+	}
+}
+
+// Groups puts the groups of a film.
+func (p *film) Groups(s *scale.Set, g *group.Set) {
+	g.Factors = group.Factors{Inertia: 1.5, Viscous: 1.3, Acoustic: 2, Flow: 2, Buckling: 2, Flutter: 2}
+	if !g.Is(group.Fluid) || p.gap == 0 {
+		return
+	}
+	g.Traits |= group.ViscousSolved
+	nu, wet := s.X(scale.KinematicViscosity), s.X(scale.FrequencyWet)
+	if gr, gi, err := p.viscous(wet, nu); err == nil && !math.IsNaN(gr) {
+		g.Put(group.ViscousInertia, gr)
+		g.Put(group.ViscousDamping, gi)
+	} else {
+		waitFor(s, g, []scale.ID{scale.FrequencyWet, scale.KinematicViscosity}, group.ViscousInertia, group.ViscousDamping)
+	}
+	sprungDamping(s, g)
+	p.sound(s, g)
+	if g.Is(group.NearSurface) {
+		surfaceImage(g, math.Min(p.a, p.b)/2, s.X(scale.Depth))
+	}
+	if p.isFilm {
+		p.groups(s, g)
+	}
+	quality(s, g)
+}
+
+// sound puts Γ of sound: along the layer of the gap, which is a quarter of a
+// wave long at k₀L/2 = π/2, by (tan q/q − 1)·3/q²; it is no more than ten times
+// that of an incompressible fluid, where the gap resonates.
+func (p *film) sound(s *scale.Set, g *group.Set) {
+	q := math.Pi * s.X(scale.FrequencyWet) * math.Min(p.a, p.b) / s.X(scale.SoundSpeed)
+	if math.IsNaN(q) {
+		waitFor(s, g, []scale.ID{scale.FrequencyWet, scale.SoundSpeed}, group.AcousticInertia, group.AcousticDamping)
+		return
+	}
+	gr, gi, err := canon.SoundSphere(dipoleOfDisc * q)
+	if err != nil {
+		return
+	}
+	if !p.isFilm {
+		share := p.shell / (p.shell + p.back)
+		gr += share * (layerSound(q) - gr)
+		gi *= 1 - share
+	}
+	g.Put(group.AcousticInertia, gr)
+	g.Put(group.AcousticDamping, gi)
+}
+
+func layerSound(q float64) float64 {
+	const most = 10
+	if q < 1e-3 {
+		return 1 + 0.4*q*q
+	}
+	x := math.Tan(q)/q - 1
+	if q > 1.5 || 3*x/(q*q) > most {
+		return most
+	}
+	return 3 * x / (q * q)
+}
+
+// surfaceImage puts the factor of a surface at depth d on the added mass of a
+// plate of half width a that moves across the surface, by the image of its dipole:
+// that of a disc, (a/d)³/6π.
+func surfaceImage(g *group.Set, a, depth float64) {
+	x := math.Pow(a/depth, 3) / (6 * math.Pi)
+	g.Put(group.SurfaceInertiaLid, 1+x)
+	g.Put(group.SurfaceInertiaFree, math.Max(1-x, 0))
+}

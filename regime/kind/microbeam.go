@@ -1,0 +1,293 @@
+package kind
+
+import (
+	"fmt"
+	"math"
+
+	"regimed/regime/canon"
+	"regimed/regime/group"
+	"regimed/regime/input"
+	"regimed/regime/scale"
+	"regimed/units"
+)
+
+// The fields of a microbeam.
+var (
+	mbLength    = &input.Field{Name: "length", Type: input.Quantity, Kind: units.Length, Rule: "gt=0", Doc: "length of the beam, or of a prong", Needed: true}
+	mbWidth     = &input.Field{Name: "width", Type: input.Quantity, Kind: units.Length, Rule: "gt=0", Doc: "width across the motion", Needed: true}
+	mbThickness = quantity("thickness", units.Length, "gt=0", "thickness along the motion", "")
+	mbMass      = quantity("mass_per_length", units.MassPerLength, "gt=0", "dry mass per length", "density times width and thickness")
+	mbSupport   = choice("support", "how the beam is held", "clamped-free", "clamped-free", "clamped-clamped", "tuning-fork")
+	mbMode      = whole("mode", "gte=1,lte=10", "number of the bending mode", "1")
+	mbProngs    = quantity("prong_gap", units.Length, "gt=0", "gap between the prongs of a tuning fork, which close on each other", "wide")
+)
+
+// Microbeam is a small beam in gas or liquid.
+var Microbeam = &Kind{
+	Name:   "microbeam",
+	Title:  "Micro beam or tuning fork",
+	Doc:    "a thin cantilever, doubly clamped beam or tuning fork that bends in gas or liquid at rest, free or over a wall",
+	Fields: modal(elastic(mbLength, mbWidth, mbThickness, mbMass, mbSupport, mbMode, mbProngs)...),
+	New:    newMicrobeam,
+}
+
+// microbeam holds the solved problem of one beam.
+type microbeam struct {
+	squeeze
+	b, l, h  float64
+	mode     int
+	support  canon.BeamSupport
+	factors  canon.BeamFactors
+	lambda   float64 // β_n L
+	near     bool    // a wall or another prong nearer than a width
+	isFilm   bool
+	open     float64 // added mass per length of the side that faces open fluid
+	shell    float64 // of the gap, without friction
+	released float64 // dry frequency by geometry
+}
+
+func newMicrobeam(r *Resolver) Physics {
+	p := &microbeam{b: r.c.X(mbWidth), l: r.c.X(mbLength), mode: 1}
+	p.shape(r)
+	r.closeGroups()
+	r.damping()
+	r.material()
+	p.masses(r)
+	p.loads(r)
+	gas := r.Is(group.Gas)
+	spring, most := func(float64) float64 { return 0 }, 0.0
+	if p.isFilm {
+		over := 4 * math.Pi * math.Pi * r.X(scale.DryMass)
+		spring = func(f float64) float64 { k, _ := p.force(r.Set, gas, f); return k / over }
+		most = p.stiffest(r.Set) / over
+	}
+	r.sprung(p.released, fmt.Sprintf("λ²/(2πℓ²) √(EI/m), λ = %.5g", p.lambda), p.gamma(r), spring, most,
+		scale.DryMass, scale.AddedMass, scale.Density, scale.Viscosity, scale.SoundSpeed, scale.HeatCapacityRatio)
+	r.interestOf()
+	if p.factors.MaxCurvature > 0 && !math.IsNaN(p.h) {
+		r.derive(scale.CurvatureLength, p.l*p.l/(p.factors.MaxCurvature*p.h/2), units.Length, "ξ over the strain w″ h/2 of the mode")
+	}
+	r.Need(scale.CurvatureLength, mbThickness.Path())
+	r.Value(scale.CurvatureLength).Kind = units.Length
+	return p
+}
+
+func (p *microbeam) shape(r *Resolver) {
+	p.h = r.c.X(mbThickness)
+	r.take(scale.Length, mbWidth)
+	r.Put(scale.Span, p.l, units.Length, scale.Given, "")
+	r.takeOrNeed(scale.Thickness, mbThickness)
+	r.derive(scale.ViscousLength, p.b/2, units.Length, "half the width")
+	r.trait(group.Flexible)
+	support := r.c.Choice(mbSupport, "clamped-free")
+	if !r.c.Has(mbSupport) {
+		r.warn(mbSupport, "assumed", "The beam is taken as a cantilever.")
+	}
+	p.support = canon.ClampedFree
+	if support == "clamped-clamped" {
+		p.support = canon.ClampedClamped
+		r.trait(group.Restrained)
+	} else {
+		r.trait(group.Cantilever)
+	}
+	if v := r.c.Lookup(mbMode); v != nil {
+		p.mode = int(v.Q.Value)
+	}
+	p.lambda, _ = canon.BeamMode(p.support, p.mode, 0)
+	p.factors, _ = canon.BeamModeFactors(p.support, p.mode)
+	switch {
+	case p.mode > 3:
+		r.warn(mbMode, "approximate", fmt.Sprintf("Beyond mode 3 the fluid also flows along the beam: at β_n b = %.2g the solution of a strip overrates the added mass and the damping.", p.lambda*p.b/p.l))
+	case p.l < 3*p.b:
+		r.warn(mbLength, "approximate", "The beam is short for its width: the solution of a strip overrates the added mass and the damping.")
+	}
+	p.walls(r, support)
+}
+
+// walls reads the gap to a wall, or between the prongs of a fork.
+func (p *microbeam) walls(r *Resolver, support string) {
+	wall, prongs := r.X(scale.WallGap), r.c.X(mbProngs)
+	closing := 1.0
+	switch {
+	case !math.IsNaN(prongs) && support != "tuning-fork":
+		r.contradict(mbProngs, "Only a tuning fork has prongs that close on each other.")
+		return
+	case !math.IsNaN(prongs) && !math.IsNaN(wall):
+		r.contradict(WallGap, "The gap of a tuning fork is the one between its prongs.")
+		return
+	case !math.IsNaN(prongs):
+		wall, closing = prongs, 2
+	case math.IsNaN(wall):
+		return
+	}
+	if !r.Is(group.Fluid) {
+		return
+	}
+	p.near = atMost(wall, p.b)
+	r.derive(scale.Gap, wall, units.Length, "to the wall or the other prong")
+	r.trait(group.Confined)
+	// the mode hardly changes over a width, so that each section is a strip
+	p.squeeze = squeeze{side: p.b, aspect: 0, area: p.b, gap: wall, closing: closing}
+}
+
+func (p *microbeam) masses(r *Resolver) {
+	r.Value(scale.DryMass).Kind = units.MassPerLength
+	if !r.take(scale.DryMass, mbMass) {
+		r.derive(scale.DryMass, r.X(scale.SolidDensity)*p.b*p.h, units.MassPerLength, "ρ_s b h")
+		r.Need(scale.DryMass, mbMass.Path())
+		if !math.IsNaN(p.h) {
+			r.Need(scale.DryMass, SolidDensity.Path())
+		}
+	}
+	r.derive(scale.DisplacedMass, r.X(scale.Density)*p.b*p.h, units.MassPerLength, "ρ b h")
+	r.Value(scale.DisplacedMass).Kind = units.MassPerLength
+	r.Need(scale.DisplacedMass, mbThickness.Path())
+	if !math.IsNaN(p.h) {
+		r.Need(scale.DisplacedMass, r.Needs(scale.Density))
+	}
+	r.derive(scale.Bending, r.X(scale.Young)*p.b*p.h*p.h*p.h/12, units.BendingStiffnessBeam, "E b h³/12")
+	p.released = p.lambda * p.lambda / (2 * math.Pi * p.l * p.l) * math.Sqrt(r.X(scale.Bending)/r.X(scale.DryMass))
+}
+
+// loads resolves the added mass: of a strip in open fluid, and nearer to a wall
+// than a quarter of its width half of that and the layer in the gap.
+func (p *microbeam) loads(r *Resolver) {
+	rho := r.X(scale.Density)
+	free := rho * math.Pi / 4 * p.b * p.b
+	r.derive(scale.AddedMassFree, free, units.MassPerLength, "ρπb²/4 of a strip")
+	p.open = free
+	added, how := free, "ρπb²/4 of a strip"
+	if p.near {
+		p.shell = p.layer(rho)
+		inertia := 2 * math.Pi * r.likelyFrequency(p.released) * p.gap * p.gap / r.X(scale.KinematicViscosity)
+		p.isFilm = isFilm(p.gap, p.b, inertia, !r.Is(group.Liquid))
+		switch {
+		case p.isFilm:
+			r.trait(group.Film)
+			p.open = free / 2
+			added, how = free/2, "the open side; a film whose friction outweighs its inertia adds a spring and a damper, no mass"
+		case p.shell > free/2:
+			p.open = free / 2
+			added, how = free/2+p.shell, "half of a strip in open fluid, and the layer ρb³/12g in the gap"
+		default:
+			p.shell = free / 2
+			p.open = free / 2
+			how = "ρπb²/4 of a strip, half of it in the gap"
+		}
+	}
+	r.derive(scale.AddedMass, added, units.MassPerLength, how)
+	for _, id := range []scale.ID{scale.AddedMass, scale.AddedMassFree} {
+		r.Need(id, r.Needs(scale.Density))
+		r.Value(id).Kind = units.MassPerLength
+	}
+	if d := r.X(scale.Depth); atMost(d, 10*p.b) && r.Is(group.Fluid) {
+		r.trait(group.NearSurface)
+	}
+	r.closeGroups()
+}
+
+// viscous is Γ of the strip, and near a wall of strip and layer together, each
+// with its share of the added mass.
+func (p *microbeam) viscous(f, nu float64) (gr, gi float64, err error) {
+	gr, gi, err = ribbon(2 * math.Pi * f * p.b * p.b / 4 / nu)
+	if err != nil || !p.near || p.isFilm {
+		return gr, gi, err
+	}
+	lr, li := betweenWalls(p.gap, f, nu)
+	share := p.shell / (p.shell + p.open)
+	return gr + share*(lr-gr), gi + share*(li-gi), nil
+}
+
+func (p *microbeam) gamma(r *Resolver) func(f float64) float64 {
+	nu := r.X(scale.KinematicViscosity)
+	if math.IsNaN(nu) || !r.Is(group.Fluid) {
+		return nil
+	}
+	return func(f float64) float64 {
+		gr, _, err := p.viscous(f, nu)
+		if err != nil || math.IsNaN(gr) {
+			return 1
+		}
+		return gr
+	}
+}
+
+// Groups puts the groups of a microbeam.
+func (p *microbeam) Groups(s *scale.Set, g *group.Set) {
+	g.Factors = group.Factors{Inertia: 1.15, Viscous: 1.15, Acoustic: 1.5, Flow: 2, Buckling: 2, Flutter: 2, Stiffening: clampedStiffening()}
+	if p.mode > 3 || p.l < 5*p.b {
+		g.Inertia, g.Viscous = 1.5, 1.5
+	}
+	if p.near {
+		g.Inertia, g.Viscous = 1.5, 2
+	}
+	p.bend(s, g)
+	if !g.Is(group.Fluid) {
+		return
+	}
+	g.Traits |= group.ViscousSolved | group.Uniform
+	f, nu := s.X(scale.FrequencyWet), s.X(scale.KinematicViscosity)
+	if gr, gi, err := p.viscous(f, nu); err == nil && !math.IsNaN(gr) {
+		g.Put(group.ViscousInertia, gr)
+		g.Put(group.ViscousDamping, gi)
+	} else {
+		waitFor(s, g, []scale.ID{scale.FrequencyWet, scale.KinematicViscosity}, group.ViscousInertia, group.ViscousDamping)
+	}
+	sprungDamping(s, g)
+	p.sound(s, g)
+	if g.Is(group.NearSurface) {
+		ratio := p.b / s.X(scale.Depth)
+		g.Put(group.SurfaceInertiaLid, 1+ratio*ratio/32)
+		g.Put(group.SurfaceInertiaFree, math.Max(1-ratio*ratio/32, 0))
+	}
+	if g.Is(group.Gas) && !s.Has(scale.Gap) {
+		putOrWait(s, g, group.Knudsen, meanFreePath(s)/p.b, scale.HeatCapacityRatio, scale.KinematicViscosity, scale.SoundSpeed)
+	}
+	if s.Has(scale.Gap) {
+		p.closingStroke(g)
+	}
+	if p.isFilm {
+		p.groups(s, g)
+	}
+	quality(s, g)
+}
+
+// clampedStiffening is κ of √(1 + κ(ξ/r)²) of a beam whose ends can't move, r
+// the radius of gyration.
+func clampedStiffening() float64 {
+	ratio, err := canon.LargeAmplitude(canon.ImmovableClampedBeam, 1, 1, 0.3)
+	if err != nil {
+		return 0
+	}
+	return ratio*ratio - 1
+}
+
+// bend puts the groups of the bent shape.
+func (p *microbeam) bend(s *scale.Set, g *group.Set) {
+	put := func(id group.ID, over float64) {
+		x := s.X(scale.Amplitude)
+		switch {
+		case math.IsNaN(over):
+			waitFor(s, g, []scale.ID{scale.Thickness}, id)
+		case math.IsNaN(x):
+			g.Miss(id, group.Need{Input: s.Needs(scale.Amplitude), Unit: "m", Coefficient: over, Power: 1})
+		default:
+			g.Put(id, x/over)
+		}
+	}
+	put(group.DisplacementThickness, p.h/math.Sqrt(12)) // over the radius of gyration
+	put(group.Slope, p.l/p.factors.MaxSlope)
+}
+
+// sound puts Γ of sound, as of a cylinder as wide as the beam.
+func (p *microbeam) sound(s *scale.Set, g *group.Set) {
+	x := math.Pi * s.X(scale.FrequencyWet) * p.b / s.X(scale.SoundSpeed)
+	if math.IsNaN(x) {
+		waitFor(s, g, []scale.ID{scale.FrequencyWet, scale.SoundSpeed}, group.AcousticInertia, group.AcousticDamping)
+		return
+	}
+	if gr, gi, err := canon.SoundCylinder(x); err == nil {
+		g.Put(group.AcousticInertia, gr)
+		g.Put(group.AcousticDamping, gi)
+	}
+}
