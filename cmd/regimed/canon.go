@@ -1,9 +1,12 @@
 package main
 
 import (
+	"bytes"
+	"errors"
 	"fmt"
 	"io"
 	"math"
+	"os"
 	"slices"
 	"strconv"
 	"strings"
@@ -11,6 +14,7 @@ import (
 	"github.com/spf13/cobra"
 
 	"regimed/api"
+	"regimed/api/render/canonplot"
 	"regimed/regime/canon"
 )
 
@@ -23,11 +27,19 @@ are dimensionless numbers and choices by name; they come in the order of
 "regimed catalog canon", or as flags with their names. What is left out takes
 its default, where it has one. Negative numbers need no special care.
 
-Prints one line of JSON with all digits; null is a value that is unbounded.`,
+Prints one line of JSON with all digits; null is a value that is unbounded.
+
+With --plot FILE it also draws the solution over its range, or the readable part
+of it, into a .svg or .png: one curve for each value, known limits dashed. What it
+is drawn over need not be given, and is marked if it is; "regimed canon NAME
+--help" names it. What else is missing takes a usual value, which the picture
+names. Without all it needs for a line of JSON it prints the name of the file.`,
 		Example: `  regimed canon OscillatingCylinder 36
   regimed canon CylinderInShell 1000 1.1
   regimed canon ConveyingPipe --support cantilever --beta 0.2
-  regimed canon ConveyingPipe 0.2 -5`,
+  regimed canon ConveyingPipe 0.2 -5
+  regimed canon Theodorsen --plot lift.svg
+  regimed canon CylinderInShell --q 1.1 --plot gap.png`,
 		DisableFlagParsing: true, // a negative number is no flag
 		ValidArgsFunction:  completeCanon,
 		RunE: func(cmd *cobra.Command, args []string) error {
@@ -44,7 +56,14 @@ Prints one line of JSON with all digits; null is a value that is unbounded.`,
 			if slices.Contains(args[1:], "--help") || slices.Contains(args[1:], "-h") {
 				return describe(cmd.OutOrStdout(), entry)
 			}
-			line, err := evaluate(entry, args[1:])
+			words, file, err := plotFile(args[1:])
+			if err != nil {
+				return &usageError{err}
+			}
+			if file != "" {
+				return plotCanon(cmd.OutOrStdout(), entry, words, file)
+			}
+			line, err := evaluate(entry, words)
 			if err != nil {
 				return err
 			}
@@ -68,6 +87,9 @@ func describe(out io.Writer, entry *canon.Entry) error {
 		fmt.Fprintf(&b, "  %s  %s: %s\n", o.ID, o.Symbol, o.Doc)
 	}
 	fmt.Fprintf(&b, "\nRelative accuracy %g.\n", entry.Accuracy)
+	over := &entry.Args[entry.Sweep()]
+	from, to := over.Window()
+	fmt.Fprintf(&b, "Drawn over %s from %g to %g by --plot FILE.\n", over.Name, from, to)
 	if entry.Note != "" {
 		fmt.Fprintf(&b, "%s\n", entry.Note)
 	}
@@ -122,6 +144,65 @@ func evaluate(entry *canon.Entry, words []string) ([]byte, error) {
 	return appendRecord(nil, canonResult(entry, args, values))
 }
 
+// plotFile takes --plot FILE out of the words; it has to stand before a lone --.
+func plotFile(words []string) (rest []string, file string, err error) {
+	for i := 0; i < len(words); i++ {
+		value, whole := strings.CutPrefix(words[i], "--plot=")
+		switch {
+		case words[i] == "--":
+			return append(rest, words[i:]...), file, nil
+		case words[i] != "--plot" && !whole:
+			rest = append(rest, words[i])
+			continue
+		case file != "":
+			return nil, "", errors.New("--plot is given twice")
+		}
+		if !whole {
+			if i++; i == len(words) {
+				return nil, "", errors.New("--plot needs the name of a file")
+			}
+			value = words[i]
+		}
+		if _, err := canonplot.FormatOf(value); err != nil {
+			return nil, "", err
+		}
+		file = value
+	}
+	return rest, file, nil
+}
+
+// plotCanon draws a solution into a file, and prints its values if all that they
+// need is given, or else the name of the file.
+func plotCanon(out io.Writer, entry *canon.Entry, words []string, file string) error {
+	args, missing, err := someArguments(entry, words)
+	if err != nil {
+		return err
+	}
+	said := []byte(file + "\n")
+	if missing == nil {
+		values, err := entry.Evaluate(args)
+		if err != nil {
+			return err
+		}
+		if said, err = appendRecord(nil, canonResult(entry, args, values)); err != nil {
+			return err
+		}
+	}
+	format, err := canonplot.FormatOf(file)
+	if err != nil {
+		return err
+	}
+	var picture bytes.Buffer
+	if err := canonplot.Draw(&picture, format, entry, args); err != nil {
+		return err
+	}
+	if err := os.WriteFile(file, picture.Bytes(), 0o666); err != nil {
+		return err
+	}
+	_, err = out.Write(said)
+	return err
+}
+
 // canonResult makes the record of an evaluation: choices by name, and null for
 // a value that is not finite.
 func canonResult(entry *canon.Entry, args, values []float64) api.CanonResult {
@@ -159,11 +240,21 @@ func canonNames() []string {
 // arguments in their order. What is not given is NaN, for which Evaluate takes
 // the default.
 func canonArguments(entry *canon.Entry, words []string) ([]float64, error) {
+	args, missing, err := someArguments(entry, words)
+	if err == nil && missing != nil {
+		err = fmt.Errorf("%s: the argument %s is missing; it takes %s", entry.Name, missing.Name, signature(entry))
+	}
+	return args, err
+}
+
+// someArguments is canonArguments for a case in which some may be missing; it
+// returns the first that is, and has no default.
+func someArguments(entry *canon.Entry, words []string) (args []float64, missing *canon.Arg, err error) {
 	named, positional, err := splitWords(entry, words)
 	if err != nil {
-		return nil, err
+		return nil, nil, err
 	}
-	args := make([]float64, len(entry.Args))
+	args = make([]float64, len(entry.Args))
 	for i := range entry.Args {
 		a := &entry.Args[i]
 		word, given := named[a.Name]
@@ -173,18 +264,18 @@ func canonArguments(entry *canon.Entry, words []string) ([]float64, error) {
 		switch {
 		case given:
 			if args[i], err = canonValue(entry, a, word); err != nil {
-				return nil, err
+				return nil, nil, err
 			}
-		case a.Optional:
-			args[i] = math.NaN()
-		default:
-			return nil, fmt.Errorf("%s: the argument %s is missing; it takes %s", entry.Name, a.Name, signature(entry))
+			continue
+		case !a.Optional && missing == nil:
+			missing = a
 		}
+		args[i] = math.NaN()
 	}
 	if len(positional) > 0 {
-		return nil, fmt.Errorf("%s: %q is one argument too many; it takes %s", entry.Name, positional[0], signature(entry))
+		return nil, nil, fmt.Errorf("%s: %q is one argument too many; it takes %s", entry.Name, positional[0], signature(entry))
 	}
-	return args, nil
+	return args, missing, nil
 }
 
 // splitWords tells flags from positional arguments. Everything that does not
@@ -263,10 +354,13 @@ func completeCanon(_ *cobra.Command, args []string, start string) ([]cobra.Compl
 	if entry == nil {
 		return nil, none
 	}
+	if args[len(args)-1] == "--plot" {
+		return []cobra.Completion{"svg", "png"}, cobra.ShellCompDirectiveFilterFileExt
+	}
 	if a := awaited(entry, args[1:]); a != nil {
 		return a.Choices, none
 	}
-	var words []string
+	words := []string{"--plot"}
 	for i := range entry.Args {
 		words = append(words, "--"+entry.Args[i].Name)
 		words = append(words, entry.Args[i].Choices...)

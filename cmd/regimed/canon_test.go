@@ -3,6 +3,8 @@ package main
 import (
 	"math"
 	"net/http"
+	"os"
+	"path/filepath"
 	"strings"
 	"testing"
 
@@ -24,6 +26,8 @@ func TestCanonValues(t *testing.T) {
 		{[]string{"ConveyingPipe", "--support=cantilever", "0.2"}, []float64{5.59140437783, 13.7146998005}},
 		{[]string{"ConveyingPipe", "0.2", "10"}, []float64{6.33979801811}},
 		{[]string{"ConveyingPipe", "0.2", "0", "0", "pinned-pinned"}, []float64{math.Pi, 0}},
+		{[]string{"Theodorsen", "0.1"}, []float64{0.831924104965, -0.172302228734}},
+		{[]string{"CylinderInShell", "1000", "1.1"}, []float64{12.8384807773, 14.0765516577}},
 	}
 	ran := 0
 	for _, row := range rows {
@@ -40,7 +44,7 @@ func TestCanonValues(t *testing.T) {
 		}
 		ran++
 	}
-	if ran != 7 {
+	if ran != 9 {
 		t.Errorf("ran %d rows", ran)
 	}
 }
@@ -96,6 +100,11 @@ func TestCanonRefuses(t *testing.T) {
 		{"ConveyingPipe --beta 0.2 --beta 0.3", "given twice"},
 		{"ConveyingPipe 0.2 --support glued", "one of cantilever"},
 		{"ConveyingPipe 0.2 -60", "own weight"},
+		{"Theodorsen --plot", "needs the name of a file"},
+		{"Theodorsen --plot out.pdf", "ends in .svg or .png"},
+		{"Theodorsen --plot a.svg --plot=b.svg", "given twice"},
+		{"Theodorsen -1 --plot a.svg", "outside"},
+		{"Theodorsen --plot no/such/folder/a.svg", "no such file"},
 	}
 	ran := 0
 	for _, row := range rows {
@@ -105,8 +114,46 @@ func TestCanonRefuses(t *testing.T) {
 		}
 		ran++
 	}
-	if ran != 10 {
+	if ran != 15 {
 		t.Errorf("ran %d rows", ran)
+	}
+}
+
+// A picture is written beside the values, or alone where not all is given; what
+// the picture is drawn over need not be.
+func TestCanonPlots(t *testing.T) {
+	folder := t.TempDir()
+	path := func(name string) string { return filepath.Join(folder, name) }
+	rows := []struct {
+		args         []string
+		file, prints string
+		holds        string
+	}{
+		{[]string{"Theodorsen", "--plot", path("a.svg")}, "a.svg", path("a.svg"), "Lift deficiency of a thin aerofoil"},
+		{[]string{"Theodorsen", "0.1", "--plot=" + path("b.svg")}, "b.svg", `"value":0.8319241049`, "k = 0.1: F = 0.831924, G = −0.172302"},
+		{[]string{"CylinderInShell", "--plot", path("c.svg"), "--q", "1.1"}, "c.svg", path("c.svg"), "CylinderInShell at q = 1.1"},
+		{[]string{"ConveyingPipe", "--gamma", "-5", "--plot", path("d.svg")}, "d.svg", path("d.svg"), "ConveyingPipe at γ = −5"},
+		{[]string{"StringMode", "--plot", path("e.png")}, "e.png", path("e.png"), "PNG"},
+	}
+	ran := 0
+	for _, row := range rows {
+		got := regimed("", append([]string{"canon"}, row.args...)...)
+		if got.status != statusMet || !strings.Contains(got.out, row.prints) {
+			t.Errorf("%v: %+v, want %q", row.args, got, row.prints)
+		}
+		picture, err := os.ReadFile(path(row.file))
+		if err != nil || !strings.Contains(string(picture), row.holds) {
+			t.Errorf("%v: %q is not in the picture, %v", row.args, row.holds, err)
+		}
+		ran++
+	}
+	if ran != 5 {
+		t.Errorf("ran %d rows", ran)
+	}
+	// A word after a lone -- is no flag.
+	got := regimed("", "canon", "Theodorsen", "--", "--plot")
+	if got.status != statusRefuse || !strings.Contains(got.errOut, `not "--plot"`) {
+		t.Errorf("got %+v", got)
 	}
 }
 
@@ -115,7 +162,7 @@ func TestCanonDescribes(t *testing.T) {
 	ran := 0
 	for _, e := range canon.All() {
 		got := regimed("", "canon", e.Name, "--help")
-		for _, want := range []string{e.Problem, e.Equation, "Relative accuracy", e.Outputs[0].ID, e.Sources[0].Full, e.Args[0].Doc} {
+		for _, want := range []string{e.Problem, e.Equation, "Relative accuracy", "Drawn over " + e.Args[e.Sweep()].Name, e.Outputs[0].ID, e.Sources[0].Full, e.Args[0].Doc} {
 			if got.status != statusMet || !strings.Contains(got.out, want) {
 				t.Errorf("%s: %q is not in\n%s%s", e.Name, want, got.out, got.errOut)
 			}

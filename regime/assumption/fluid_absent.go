@@ -24,6 +24,7 @@ var (
 	absentLiquid    = finding.Say("The load of a tank is that of its liquid: without it there is none.")
 	absentSoftest   = finding.Say("Leaving the fluid out shifts the natural frequency of the softest motion by {e:%}: its added mass is {added_mass_ratio_softest} of the dry mass.")
 	absentStiffness = finding.Say("Leaving the fluid out shifts the natural frequency by {e:%}: the fluid's stiffness is {fluid_stiffness} of the structure's.")
+	absentFilm      = finding.Say("Without the film the free vibration, damped with ζ = {damping_viscous}, is off by {e:%} in frequency; from ζ = 1 on there is none.")
 	absentDamping   = finding.Say("The fluid makes {e:%} of the total damping.")
 )
 
@@ -56,8 +57,21 @@ func estimateFluidAbsent(x *finding.Context) {
 	}
 	x.AddOrWait(finding.Part{Measure: finding.Frequency, Basis: finding.Canonical, Factor: x.Factors.Viscous,
 		Say: absentStiffness, Source: cite.Batchelor1967}, group.FluidStiffness, func(v float64) float64 { return v / 2 })
+	if x.Is(group.Film) {
+		x.AddOrWait(finding.Part{Measure: finding.Frequency, Basis: finding.Canonical, Factor: x.Factors.Viscous,
+			Say: absentFilm, Source: cite.Langlois1962}, group.DampingViscous, overdamped)
+	}
 	if x.Has(group.DampingViscous) || x.Has(group.DampingRadiation) {
 		addShare(x, finding.Part{Measure: finding.Response, Basis: finding.Canonical, Factor: x.Factors.Viscous,
 			Say: absentDamping, Source: cite.Batchelor1967}, orZero(x, group.DampingViscous)+orZero(x, group.DampingRadiation))
 	}
+}
+
+// overdamped is the error of the frequency of free vibration without a damping
+// ratio ζ, 1/√(1 − ζ²) − 1; from ζ = 1 on there is no vibration.
+func overdamped(zeta float64) float64 {
+	if zeta >= 1 {
+		return math.Inf(1)
+	}
+	return 1/math.Sqrt(1-zeta*zeta) - 1
 }

@@ -104,12 +104,13 @@ func knownOfGroups() []knownGroup {
 	wind, beside := group.Fluid|group.Gas|group.Cross, water|group.Cross|group.Neighboured
 	resonant := math.Sqrt(0.5 + math.Pi/4*0.02/0.01) // √(B² + R²)
 	return []knownGroup{
-		{of(assumption.PassiveStructure, "K² ¼ in open circuit", finding.Frequency, math.Sqrt(1.25) - 1, 0.05, finding.Invalid), group.Active, of1{group.Electromechanical: 0.25}},
-		{of(assumption.PassiveStructure, "K² of a thin patch", finding.Frequency, math.Sqrt(1.01) - 1, 0.05, finding.Valid), group.Active, of1{group.Electromechanical: 0.01}},
+		{of(assumption.PassiveStructure, "K² ¼ in open circuit", finding.Frequency, math.Sqrt(1.25)-1, 0.05, finding.Invalid), group.Active, of1{group.Electromechanical: 0.25}},
+		{of(assumption.PassiveStructure, "K² of a thin patch", finding.Frequency, math.Sqrt(1.01)-1, 0.05, finding.Valid), group.Active, of1{group.Electromechanical: 0.01}},
 		{of(assumption.NoWaveResonance, "half way to the band", finding.Stability, 0.5, 1, finding.Valid), waves, of1{group.WaveRatio: 0.4}},
 		{of(assumption.NoWaveResonance, "resonance", finding.Stability, 1.25, 1, finding.Invalid), waves, of1{group.WaveRatio: 1}},
 		{of(assumption.NoSloshingResonance, "twice the band", finding.Stability, 0.5, 1, finding.Valid), tank, of1{group.SloshingRatio: 2.5}},
 		{of(assumption.NoSlamming, "crest at nine tenths of the gap", finding.Stability, 0.9, 1, finding.Marginal), waves, of1{group.CrestClearance: 0.9}},
+		{of(assumption.NoShock, "half of what parts the liquid", finding.Stability, 0.5, 1, finding.Valid), water | group.Shock, of1{group.ShockTension: 0.5}},
 		{of(assumption.LongWave, "D/λ 0.05 against 0.2", finding.Scale, 0.05, 0.2, finding.Valid), waves, of1{group.Diffraction: 0.05}},
 		{of(assumption.RigidWalls, "½(f_s/f_b)²", finding.Frequency, 0.02, 0.05, finding.Valid), tank, of1{group.BulgingRatio: 0.2}},
 		{of(assumption.NoPressureSurge, "half of a tenth of the pressure", finding.Stability, 0.05, 0.1, finding.Valid), column, of1{group.SurgePressure: 0.05}},
@@ -336,7 +337,7 @@ func TestKnownAnswers(t *testing.T) {
 			t.Errorf("%s has no known answer", e.ID)
 		}
 	}
-	if rows != 73 {
+	if rows != 74 {
 		t.Errorf("%d known answers", rows)
 	}
 }

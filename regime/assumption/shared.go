@@ -40,13 +40,14 @@ func orZero(x *finding.Context, id group.ID) float64 {
 
 // fluidDamping is the sum of the damping ratios that the fluid adds.
 func fluidDamping(x *finding.Context) float64 {
-	return orZero(x, group.DampingViscous) + orZero(x, group.DampingRadiation) + orZero(x, group.DampingFlow) + orZero(x, group.DampingTwoPhase)
+	return orZero(x, group.DampingViscous) + orZero(x, group.DampingRadiation) + math.Abs(orZero(x, group.DampingFlow)) + orZero(x, group.DampingTwoPhase)
 }
 
 // addShare adds the share of the total damping that is left out with the
 // damping ratio left. It waits for the structural damping where that is not
 // known.
 func addShare(x *finding.Context, p finding.Part, left float64) {
+	left = math.Abs(left) // a flow may feed the motion instead of damping it
 	others := fluidDamping(x) + orZero(x, group.DampingElectric)
 	x.AddOrWait(p, group.DampingRatio, func(structural float64) float64 {
 		total := structural + math.Max(others, left)

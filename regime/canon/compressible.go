@@ -80,7 +80,7 @@ var isentropicDensityChangeEntry = &Entry{
 	Problem:  "relative rise of the density of a gas that is brought to rest",
 	Equation: "(1 + (γ − 1)M²/2)^{1/(γ−1)} − 1",
 	Args: []Arg{
-		{Name: "mach", Symbol: "M", Doc: "Mach number", Min: 0, Max: 5},
+		{Name: "mach", Symbol: "M", Doc: "Mach number", Min: 0, Max: 5, From: 0, To: 2},
 		{Name: "gamma", Symbol: "γ", Doc: "ratio of specific heats", Min: 1, Max: 1.7, Optional: true, Default: 1.4},
 	},
 	Outputs:  []Output{{ID: "change", Symbol: "Δρ/ρ", Doc: "relative density change"}},

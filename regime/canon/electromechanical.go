@@ -68,7 +68,7 @@ var generalisedCouplingEntry = &Entry{
 	Name:     "GeneralisedCoupling",
 	Problem:  "generalised coupling from the coupling factor",
 	Equation: "K² = k²/(1 − k²)",
-	Args:     []Arg{{Name: "k2", Symbol: "k²", Doc: "share of the energy converted in a cycle", Min: 0, Max: 0.99}},
+	Args:     []Arg{{Name: "k2", Symbol: "k²", Doc: "share of the energy converted in a cycle", Min: 0, Max: 0.99, From: 0, To: 0.9}},
 	Outputs:  []Output{{ID: "coupling", Symbol: "K²", Doc: "generalised coupling"}},
 	Accuracy: 1e-12,
 	Factor:   1,

@@ -201,8 +201,23 @@ func (x *Context) AddOrWait(p Part, id group.ID, estimate func(v float64) float6
 		x.Add(p)
 	case group.Missing:
 		x.Wait(p, id, estimate)
+	case group.OffRange:
+		x.beyond(p)
 	}
 }
+
+// beyond adds a part whose solved problem does not reach as far as the case:
+// marginal, since nothing prices it.
+func (x *Context) beyond(p Part) {
+	p.Basis, p.Say = Threshold, beyondRange
+	if p.Limit == 0 {
+		p.Limit = x.Tolerance.Limit(p.Measure)
+	}
+	p.Estimate, p.Factor, p.Inner = p.Limit, 3, 3
+	x.Add(p)
+}
+
+var beyondRange = Say("The solved problem behind this estimate does not reach as far as this case: taken at the limit {limit}.")
 
 // Conclude is the judge: it gives the finding its verdict from its parts.
 //

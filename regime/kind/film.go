@@ -8,6 +8,7 @@ import (
 	"regimed/regime/group"
 	"regimed/regime/input"
 	"regimed/regime/scale"
+	"regimed/regime/solid"
 	"regimed/units"
 )
 
@@ -38,17 +39,17 @@ func (q *squeeze) layer(rho float64) float64 {
 	return q.closing * rho * q.side * q.side * q.area * t / (12 * q.gap)
 }
 
-// viscosity is that of the fluid in the gap: of a rarefied gas the effective one.
-func (q *squeeze) viscosity(s *scale.Set, gas bool) float64 {
-	eta := s.X(scale.Viscosity)
-	if !gas {
-		return eta
-	}
+// trapped is the added mass of gas that is compressed in the gap: a third of its
+// mass, as of any spring that one end drives.
+func (q *squeeze) trapped(rho float64) float64 { return q.closing * rho * q.area * q.gap / 3 }
+
+// viscosity is that of the gas in the gap, the effective one where it is rarefied.
+func (q *squeeze) viscosity(s *scale.Set) float64 {
 	ratio, err := canon.VeijolaViscosity(math.Min(meanFreePath(s)/q.gap, knudsenEnd))
 	if err != nil {
 		return math.NaN()
 	}
-	return eta * ratio
+	return s.X(scale.Viscosity) * ratio
 }
 
 // Knudsen number at which the range of the effective viscosity ends.
@@ -56,19 +57,12 @@ const knudsenEnd = 880
 
 // number is the squeeze number at a frequency.
 func (q *squeeze) number(s *scale.Set, f float64) float64 {
-	return 12 * q.viscosity(s, true) * 2 * math.Pi * f * q.side * q.side / (s.X(scale.Pressure) * q.gap * q.gap)
+	return 12 * q.viscosity(s) * 2 * math.Pi * f * q.side * q.side / (s.X(scale.Pressure) * q.gap * q.gap)
 }
 
-// force is the stiffness and the damping constant of the film at a frequency,
-// in the reference of the dry mass. A liquid has no time to be compressed.
-func (q *squeeze) force(s *scale.Set, gas bool, f float64) (spring, damper float64) {
-	if !gas {
-		t, err := canon.ThinFilmLiquid(q.aspect)
-		if err != nil {
-			return math.NaN(), math.NaN()
-		}
-		return 0, q.closing * s.X(scale.Viscosity) * q.side * q.side * q.area * t / (q.gap * q.gap * q.gap)
-	}
+// force is the stiffness and the damping constant of a film of gas at a
+// frequency, in the reference of the dry mass.
+func (q *squeeze) force(s *scale.Set, f float64) (spring, damper float64) {
 	const end = 1e12 // of the solution: the gas is all spring long before
 	k, c, err := canon.ThinFilm(math.Min(q.number(s, f), end), q.aspect)
 	if err != nil {
@@ -83,18 +77,19 @@ func (q *squeeze) stiffest(s *scale.Set) float64 {
 	return q.closing * s.X(scale.Pressure) * q.area / q.gap
 }
 
-// groups puts what a film that is all friction does: its spring and its damper,
-// beside the damping that the open side has of its own.
+// springOver is the stiffness over 4π²m as a function of the frequency, and its bound.
+func (q *squeeze) springOver(r *Resolver) (spring func(f float64) float64, most float64) {
+	over := 4 * math.Pi * math.Pi * r.X(scale.DryMass)
+	return func(f float64) float64 { k, _ := q.force(r.Set, f); return k / over }, q.stiffest(r.Set) / over
+}
+
+// groups puts what a film of gas does: its spring and its damper, beside the
+// damping that the open side has of its own.
 func (q *squeeze) groups(s *scale.Set, g *group.Set) {
-	gas := g.Is(group.Gas)
 	motion, dry, wet := s.X(scale.FrequencyMotion), s.X(scale.FrequencyDry), s.X(scale.FrequencyWet)
-	spring, damper := q.force(s, gas, motion)
+	spring, damper := q.force(s, motion)
 	needs := []scale.ID{scale.Viscosity, scale.SoundSpeed, scale.HeatCapacityRatio, scale.FrequencyMotion, scale.DryMass, scale.FrequencyDry, scale.FrequencyWet, scale.Density}
-	if gas {
-		putOrWait(s, g, group.Squeeze, q.number(s, motion), needs...)
-	} else {
-		needs = []scale.ID{scale.Viscosity, scale.DryMass, scale.FrequencyDry, scale.FrequencyWet, scale.Density}
-	}
+	putOrWait(s, g, group.Squeeze, q.number(s, motion), needs...)
 	mass := s.X(scale.DryMass)
 	putOrWait(s, g, group.FluidStiffness, spring/(mass*math.Pow(2*math.Pi*dry, 2)), needs...)
 	added := s.X(scale.AddedMass) * known(g, group.ViscousInertia)
@@ -102,6 +97,31 @@ func (q *squeeze) groups(s *scale.Set, g *group.Set) {
 	g.Drop(group.ViscousDamping) // counted here
 	putOrWait(s, g, group.DampingViscous, (damper+open)/(2*(mass+added)*2*math.Pi*wet), needs...)
 }
+
+// suction puts the pressure of the oscillation in a gap of liquid: the force of
+// the layer over its area, times the peak over the mean, in place of ρω²ξL.
+func (q *squeeze) suction(s *scale.Set, g *group.Set, layer, length float64) {
+	gr, gi := betweenWalls(q.gap, s.X(scale.FrequencyMotion), s.X(scale.KinematicViscosity))
+	peak := squarePeak
+	if q.aspect == 0 {
+		peak = stripPeak
+	}
+	factor := peak * layer * math.Hypot(gr, gi) / (q.area * s.X(scale.Density) * length)
+	switch g.State(group.OscillationPressure) {
+	case group.Known, group.Adopted:
+		putOrWait(s, g, group.OscillationPressure, factor*g.Get(group.OscillationPressure), scale.KinematicViscosity, scale.FrequencyMotion)
+	case group.Missing:
+		n := g.Need(group.OscillationPressure)
+		n.Coefficient /= math.Pow(factor, 1/n.Power)
+		if n.Coefficient > 0 && !math.IsInf(n.Coefficient, 0) {
+			g.Miss(group.OscillationPressure, n)
+		}
+	}
+}
+
+// Peak over mean pressure under a strip, of a parabola, and under a square, of
+// the flow in a square duct (White 1991, from memory).
+const stripPeak, squarePeak = 1.5, 2.096
 
 // closingStroke puts the stroke over the gap where both faces move.
 func (q *squeeze) closingStroke(g *group.Set) {
@@ -137,7 +157,7 @@ const liquidFilmInertia = 1.5
 
 // betweenWalls is Γ of a layer in a gap, 1/(1 − tanh s/s), s = (g/2)√(iω/ν).
 func betweenWalls(gap, f, nu float64) (gr, gi float64) {
-	x := gap * math.Sqrt(math.Pi*f/(2*nu))
+	x := gap * math.Sqrt(math.Pi*f/(4*nu))
 	if !(x > 0) {
 		return math.NaN(), math.NaN()
 	}
@@ -254,6 +274,7 @@ type film struct {
 	a, b   float64 // sides
 	round  bool
 	isFilm bool
+	gas    bool    // a film of gas, which is compressed
 	back   float64 // added mass of the open side
 	shell  float64 // of the gap, without friction
 }
@@ -269,12 +290,9 @@ func newFilm(r *Resolver) Physics {
 	p.masses(r)
 	p.loads(r)
 	derived := r.suspension(fmStiffness)
-	gas := r.Is(group.Gas)
 	spring, most := func(float64) float64 { return 0 }, 0.0
-	if p.isFilm && r.Is(group.Fluid) {
-		over := 4 * math.Pi * math.Pi * r.X(scale.DryMass)
-		spring = func(f float64) float64 { k, _ := p.force(r.Set, gas, f); return k / over }
-		most = p.stiffest(r.Set) / over
+	if p.gas {
+		spring, most = p.springOver(r)
 	}
 	r.sprung(derived, "√(k/m)/2π", p.gamma(r), spring, most, scale.DryMass, scale.AddedMass, scale.Density, scale.Viscosity, scale.SoundSpeed, scale.HeatCapacityRatio)
 	r.interestOf()
@@ -364,11 +382,11 @@ func (p *film) masses(r *Resolver) {
 	r.closeGroups()
 }
 
-// solidDensity takes the density of the solid, or looks it up.
+// solidDensity takes the density of a rigid solid, or looks it up.
 func solidDensity(r *Resolver) {
-	if r.c.Has(MaterialName) {
-		r.material()
-		return
+	m := solid.Find(r.c.Choice(MaterialName, ""))
+	if !r.take(scale.SolidDensity, SolidDensity) && m != nil {
+		r.Put(scale.SolidDensity, m.Density, units.Density, scale.LookedUp, "typical of "+m.Title)
 	}
 	r.takeOrNeed(scale.SolidDensity, SolidDensity)
 	r.plausibleSolid()
@@ -391,13 +409,15 @@ func (p *film) loads(r *Resolver) {
 	p.shell = p.layer(rho)
 	inertia := 2 * math.Pi * r.likelyFrequency(p.suspended(r)) * p.gap * p.gap / r.X(scale.KinematicViscosity)
 	p.isFilm = isFilm(p.gap, math.Min(p.a, p.b), inertia, !r.Is(group.Liquid))
-	added, how := p.back, "half of that in open fluid, on the back; a film whose friction outweighs its inertia adds a spring and a damper, no mass"
+	p.gas = p.isFilm && r.Is(group.Fluid) && !r.Is(group.Liquid)
+	added, how := p.back+p.shell, "the layer in the gap, and half of that in open fluid on an open back"
+	if p.gas {
+		added, how = p.back+p.trapped(rho), "a third of the gas in the film, and half of that in open fluid on an open back"
+	}
 	if r.Is(group.Fluid) {
 		r.trait(group.Confined)
 		if p.isFilm {
 			r.trait(group.Film)
-		} else {
-			added, how = p.back+p.shell, "the layer in the gap, and half of that in open fluid on the back"
 		}
 	}
 	r.derive(scale.AddedMassFree, whole, units.Mass, "a rigid plate in open fluid")
@@ -447,7 +467,7 @@ func heavingPlate(a, b float64) float64 {
 // viscous is Γ of back and gap together, each with its share of the added mass.
 func (p *film) viscous(f, nu float64) (gr, gi float64, err error) {
 	br, bi, err := ribbon(2 * math.Pi * f * math.Pow(math.Min(p.a, p.b)/2, 2) / nu)
-	if err != nil || p.isFilm {
+	if err != nil || p.gas {
 		return br, bi, err
 	}
 	lr, li := betweenWalls(p.gap, f, nu)
@@ -488,8 +508,14 @@ func (p *film) Groups(s *scale.Set, g *group.Set) {
 	if g.Is(group.NearSurface) {
 		surfaceImage(g, math.Min(p.a, p.b)/2, s.X(scale.Depth))
 	}
-	if p.isFilm {
+	if g.Is(group.Liquid) {
+		p.suction(s, g, p.shell, s.X(scale.Length))
+	}
+	switch {
+	case p.gas:
 		p.groups(s, g)
+	case p.isFilm: // a liquid has no spring
+		g.Put(group.FluidStiffness, 0)
 	}
 	quality(s, g)
 }
@@ -507,7 +533,7 @@ func (p *film) sound(s *scale.Set, g *group.Set) {
 	if err != nil {
 		return
 	}
-	if !p.isFilm {
+	if !p.gas {
 		share := p.shell / (p.shell + p.back)
 		gr += share * (layerSound(q) - gr)
 		gi *= 1 - share

@@ -77,6 +77,7 @@ func newFloater(r *Resolver) Physics {
 	if r.Is(group.Fluid) {
 		r.trait(group.Piercing)
 	}
+	r.liquid()
 	r.unused(WallGap, ShellDiameter, DepthBelowSurface, BackingDepth)
 	if b.round() {
 		r.trait(group.Circular)

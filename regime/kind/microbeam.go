@@ -41,6 +41,8 @@ type microbeam struct {
 	lambda   float64 // β_n L
 	near     bool    // a wall or another prong nearer than a width
 	isFilm   bool
+	gas      bool    // a film of gas, which is compressed
+	fork     bool    // two prongs that move against each other
 	open     float64 // added mass per length of the side that faces open fluid
 	shell    float64 // of the gap, without friction
 	released float64 // dry frequency by geometry
@@ -54,12 +56,9 @@ func newMicrobeam(r *Resolver) Physics {
 	r.material()
 	p.masses(r)
 	p.loads(r)
-	gas := r.Is(group.Gas)
 	spring, most := func(float64) float64 { return 0 }, 0.0
-	if p.isFilm {
-		over := 4 * math.Pi * math.Pi * r.X(scale.DryMass)
-		spring = func(f float64) float64 { k, _ := p.force(r.Set, gas, f); return k / over }
-		most = p.stiffest(r.Set) / over
+	if p.gas {
+		spring, most = p.springOver(r)
 	}
 	r.sprung(p.released, fmt.Sprintf("λ²/(2πℓ²) √(EI/m), λ = %.5g", p.lambda), p.gamma(r), spring, most,
 		scale.DryMass, scale.AddedMass, scale.Density, scale.Viscosity, scale.SoundSpeed, scale.HeatCapacityRatio)
@@ -93,6 +92,7 @@ func (p *microbeam) shape(r *Resolver) {
 	if v := r.c.Lookup(mbMode); v != nil {
 		p.mode = int(v.Q.Value)
 	}
+	p.fork = support == "tuning-fork"
 	p.lambda, _ = canon.BeamMode(p.support, p.mode, 0)
 	p.factors, _ = canon.BeamModeFactors(p.support, p.mode)
 	switch {
@@ -161,17 +161,18 @@ func (p *microbeam) loads(r *Resolver) {
 		p.shell = p.layer(rho)
 		inertia := 2 * math.Pi * r.likelyFrequency(p.released) * p.gap * p.gap / r.X(scale.KinematicViscosity)
 		p.isFilm = isFilm(p.gap, p.b, inertia, !r.Is(group.Liquid))
-		switch {
-		case p.isFilm:
+		p.gas = p.isFilm && !r.Is(group.Liquid)
+		p.open = free / 2
+		if p.isFilm {
 			r.trait(group.Film)
-			p.open = free / 2
-			added, how = free/2, "the open side; a film whose friction outweighs its inertia adds a spring and a damper, no mass"
+		}
+		switch {
+		case p.gas:
+			added, how = free/2+p.trapped(rho), "half of a strip in open fluid, and a third of the gas in the film"
 		case p.shell > free/2:
-			p.open = free / 2
 			added, how = free/2+p.shell, "half of a strip in open fluid, and the layer ρb³/12g in the gap"
 		default:
 			p.shell = free / 2
-			p.open = free / 2
 			how = "ρπb²/4 of a strip, half of it in the gap"
 		}
 	}
@@ -190,7 +191,7 @@ func (p *microbeam) loads(r *Resolver) {
 // with its share of the added mass.
 func (p *microbeam) viscous(f, nu float64) (gr, gi float64, err error) {
 	gr, gi, err = ribbon(2 * math.Pi * f * p.b * p.b / 4 / nu)
-	if err != nil || !p.near || p.isFilm {
+	if err != nil || !p.near || p.gas {
 		return gr, gi, err
 	}
 	lr, li := betweenWalls(p.gap, f, nu)
@@ -218,7 +219,7 @@ func (p *microbeam) Groups(s *scale.Set, g *group.Set) {
 	if p.mode > 3 || p.l < 5*p.b {
 		g.Inertia, g.Viscous = 1.5, 1.5
 	}
-	if p.near {
+	if p.near || p.h > thinStrip*p.b { // its sides rub too
 		g.Inertia, g.Viscous = 1.5, 2
 	}
 	p.bend(s, g)
@@ -240,14 +241,20 @@ func (p *microbeam) Groups(s *scale.Set, g *group.Set) {
 		g.Put(group.SurfaceInertiaLid, 1+ratio*ratio/32)
 		g.Put(group.SurfaceInertiaFree, math.Max(1-ratio*ratio/32, 0))
 	}
-	if g.Is(group.Gas) && !s.Has(scale.Gap) {
+	if !g.Is(group.Liquid) && !s.Has(scale.Gap) {
 		putOrWait(s, g, group.Knudsen, meanFreePath(s)/p.b, scale.HeatCapacityRatio, scale.KinematicViscosity, scale.SoundSpeed)
 	}
 	if s.Has(scale.Gap) {
 		p.closingStroke(g)
 	}
-	if p.isFilm {
+	if g.Is(group.Liquid) && p.near {
+		p.suction(s, g, p.shell, p.b)
+	}
+	switch {
+	case p.gas:
 		p.groups(s, g)
+	case p.isFilm: // a liquid has no spring
+		g.Put(group.FluidStiffness, 0)
 	}
 	quality(s, g)
 }
@@ -279,7 +286,13 @@ func (p *microbeam) bend(s *scale.Set, g *group.Set) {
 	put(group.Slope, p.l/p.factors.MaxSlope)
 }
 
-// sound puts Γ of sound, as of a cylinder as wide as the beam.
+// thinStrip is thickness over width up to which a beam is a thin strip: sides of
+// a fifth of the width add a few per cent to the friction at S of some ten.
+const thinStrip = 0.2
+
+// sound puts Γ of sound, as of a cylinder as wide as the beam. Two prongs at a
+// distance s are opposite dipoles in line: of what each would radiate (3/8)(k₀s)²
+// is left, the mean of 2 sin²(½k₀s cos φ) cos²φ over that of cos²φ.
 func (p *microbeam) sound(s *scale.Set, g *group.Set) {
 	x := math.Pi * s.X(scale.FrequencyWet) * p.b / s.X(scale.SoundSpeed)
 	if math.IsNaN(x) {
@@ -288,6 +301,9 @@ func (p *microbeam) sound(s *scale.Set, g *group.Set) {
 	}
 	if gr, gi, err := canon.SoundCylinder(x); err == nil {
 		g.Put(group.AcousticInertia, gr)
+		if distance := (p.gap + p.h) * 2 * x / p.b; p.fork && distance > 0 && p.gap > 0 {
+			gi *= math.Min(0.375*distance*distance, 1)
+		}
 		g.Put(group.AcousticDamping, gi)
 	}
 }

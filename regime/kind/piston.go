@@ -207,7 +207,7 @@ func (p *piston) Groups(s *scale.Set, g *group.Set) {
 	if p.sealed() {
 		p.enclosure(s, g)
 	}
-	if g.Is(group.Gas) {
+	if !g.Is(group.Liquid) {
 		putOrWait(s, g, group.Knudsen, meanFreePath(s)/p.a, scale.HeatCapacityRatio, scale.KinematicViscosity, scale.SoundSpeed)
 	}
 	quality(s, g)

@@ -66,6 +66,7 @@ func newTank(r *Resolver) Physics {
 		r.trait(group.Sloshing | group.Contained | group.NearSurface)
 		r.Traits &^= group.Still // what it holds moves
 	}
+	r.liquid()
 	r.unused(WallGap, ShellDiameter, DepthBelowSurface, BackingDepth)
 	if t.upright {
 		r.trait(group.Circular)

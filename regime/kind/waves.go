@@ -42,6 +42,7 @@ func (r *Resolver) waves() {
 		return
 	}
 	r.trait(group.Waves)
+	r.liquid()
 	r.takeOrNeed(scale.WaveHeight, WavesHeight)
 	r.derive(scale.FrequencyWave, 1/r.c.X(WavesPeriod), units.Frequency, "one over the period")
 	r.Need(scale.FrequencyWave, WavesPeriod.Path())
@@ -54,6 +55,14 @@ func (r *Resolver) waves() {
 	r.derive(scale.WaveLength, 2*math.Pi/w.k, units.Length, "ω² = gk tanh kd")
 	if w.breaking() > 1 {
 		r.warn(WavesHeight, "implausible", "The wave is higher than 0.142 λ tanh kd, where waves break; was a significant height of another period meant?")
+	}
+}
+
+// liquid takes a fluid whose phase the case does not tell as a liquid: it has a
+// surface.
+func (r *Resolver) liquid() {
+	if r.Is(group.Fluid) && !r.Is(group.Gas) {
+		r.trait(group.Liquid)
 	}
 }
 

@@ -111,3 +111,8 @@ func iterated(c *Case) bool {
 
 // compressible reports whether the class carries sound.
 func compressible(c *Case) bool { return c.Axes.Compressible == "yes" }
+
+// freeSurface reports whether the class carries a free surface.
+func freeSurface(c *Case) bool {
+	return c.Axes.FreeSurface != "none" && c.Axes.FreeSurface != "" || c.Axes.Fluid == "resolved" && c.Groups.Any(group.Waves|group.Contained)
+}

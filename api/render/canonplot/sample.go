@@ -78,11 +78,11 @@ func sample(e *canon.Entry, given []float64) (*picture, error) {
 		if err := p.evaluate(); err != nil {
 			return nil, err
 		}
-		if answered := p.answered(); answered.from == from && answered.to == to {
+		answered := p.answered()
+		if answered.from == from && answered.to == to {
 			break
-		} else {
-			from, to = answered.from, answered.to
 		}
+		from, to = answered.from, answered.to
 	}
 	p.ordinate()
 	p.asymptotes()
@@ -136,7 +136,7 @@ func (p *picture) evaluate() error {
 			return err
 		}
 		if err != nil {
-			refusal = err
+			refusal, values = err, nil
 		} else {
 			answered++
 		}

@@ -41,7 +41,7 @@ func (d decades) Ticks(low, high float64) []plot.Tick {
 // power writes 10ⁿ: in digits where all of them are short, else with an exponent
 // on the line, since not every font has the raised ones.
 func power(n int, plain bool) string {
-	if plain {
+	if plain || n == 0 || n == 1 {
 		return strconv.FormatFloat(math.Pow(10, float64(n)), 'f', -1, 64)
 	}
 	return shortExponent("1e" + strconv.Itoa(n))
