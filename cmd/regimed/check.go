@@ -1,10 +1,14 @@
 package main
 
 import (
+	"cmp"
 	"errors"
 	"fmt"
 	"io"
+	"maps"
 	"math"
+	"slices"
+	"strings"
 
 	"github.com/spf13/cobra"
 
@@ -88,6 +92,7 @@ type checker struct {
 	quiet              bool
 	common             []expectation
 	met, unmet, broken int
+	kinds, questions   tally // files by kind, expectations by what they ask
 	failed             error // of writing
 }
 
@@ -102,9 +107,31 @@ func (c *checker) check(file string, stdin io.Reader) {
 		c.refuse(err)
 		return
 	}
+	c.kinds.add(a.Kind.Name)
 	for _, e := range list {
+		c.questions.add(e.question())
 		c.compare(d.name, a, e)
 	}
+}
+
+// tally counts by name.
+type tally map[string]int
+
+func (t *tally) add(name string) {
+	if *t == nil {
+		*t = tally{}
+	}
+	(*t)[name]++
+}
+
+// String lists the names by falling count: "class 12, reynolds 3".
+func (t tally) String() string {
+	names := slices.SortedFunc(maps.Keys(t), func(a, b string) int { return cmp.Or(cmp.Compare(t[b], t[a]), strings.Compare(a, b)) })
+	parts := make([]string, len(names))
+	for i, n := range names {
+		parts[i] = fmt.Sprintf("%s %d", n, t[n])
+	}
+	return strings.Join(parts, ", ")
 }
 
 // prepare classifies the case of a document and reads its expectations.
@@ -171,6 +198,9 @@ func (c *checker) finish(files int) error {
 			c.print(c.out, "; %s refused", count(c.broken, "file"))
 		}
 		c.print(c.out, "\n")
+		if files > 1 {
+			c.print(c.out, "files by kind: %s\nexpectations by question: %s\n", c.kinds, c.questions)
+		}
 	}
 	switch {
 	case c.failed != nil:

@@ -116,14 +116,14 @@ func TestCheckPrints(t *testing.T) {
 			"ok   " + situation + "  class=" + other + "|" + class + "\nFAIL " + situation + "  class=" + other + "  got " + class + "\n2 expectations of 1 file: 1 met, 1 not met\n", ""},
 		{"two files", []string{plain, situation, "-e", "class!=" + other}, 1,
 			"ok   " + plain + "  class!=" + other + "\nok   " + situation + "  class!=" + other + "\nok   " + situation + "  class=" + other + "|" + class +
-				"\nFAIL " + situation + "  class=" + other + "  got " + class + "\n4 expectations of 2 files: 3 met, 1 not met\n", ""},
+				"\nFAIL " + situation + "  class=" + other + "  got " + class + "\n4 expectations of 2 files: 3 met, 1 not met\nfiles by kind: cylinder 2\nexpectations by question: class 4\n", ""},
 		{"quiet", []string{"--quiet", situation}, 1,
 			"FAIL " + situation + "  class=" + other + "  got " + class + "\n", ""},
 		{"quiet and met", []string{"-q", plain, "-e", "class=" + class}, 0, "", ""},
 		{"nothing expected", []string{plain}, 2,
 			"0 expectations of 1 file: 0 met, 0 not met; 1 file refused\n", plain + ": Nothing is expected of it: give --expect, or expectations beside the case.\n"},
 		{"a bad file among good ones", []string{bad, plain, "-e", "class=" + class}, 2,
-			"ok   " + plain + "  class=" + class + "\n1 expectation of 2 files: 1 met, 0 not met; 1 file refused\n", bad + ":1: /structure/diameter: wrong-dimension: "},
+			"ok   " + plain + "  class=" + class + "\n1 expectation of 2 files: 1 met, 0 not met; 1 file refused\nfiles by kind: cylinder 1\nexpectations by question: class 1\n", bad + ":1: /structure/diameter: wrong-dimension: "},
 		{"own ones that are wrong", []string{badOwn}, 2,
 			"0 expectations of 1 file: 0 met, 0 not met; 1 file refused\n", badOwn + ":15: /expect/0: expectation: "},
 	}

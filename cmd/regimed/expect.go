@@ -31,6 +31,21 @@ type expectation struct {
 	met  func(a *regime.Answer) (bool, string) // whether it is met, and what there is
 }
 
+// question is what an expectation asks of an answer: the class, an axis, an
+// assumption or a group.
+func (e *expectation) question() string {
+	name := e.text
+	for _, op := range operators {
+		name, _, _ = strings.Cut(name, op)
+	}
+	name = strings.TrimSpace(name)
+	if axis, ok := strings.CutPrefix(name, "axis."); ok {
+		return axis
+	}
+	name, _, _ = strings.Cut(name, ".")
+	return name
+}
+
 // Tolerances of the comparisons of numbers.
 const (
 	within = 0.02 // of ~

@@ -323,3 +323,13 @@ func TestFilmCavitates(t *testing.T) {
 		t.Errorf("ran %d", ran)
 	}
 }
+
+// Slow flow in a gap is Poiseuille's: Γ → 6/5 − i 12ν/(ωg²), for a plate too.
+func TestSlowGap(t *testing.T) {
+	a := answerOf(t, `{"structure":{"kind":"plate","length":"1 mm","width":"1 mm","thickness":"50 um","material":"steel","edges":"CCCC","frequency_dry":"100 Hz","wetted_sides":2,"baffled":true},
+		"fluid":{"density":"900 kg/m3","viscosity":"50 Pa s","sound_speed":"1400 m/s","phase":"liquid","vapour_pressure":"1 Pa"},"surroundings":{"wall_gap":"0.3 mm"}}`)
+	omega := 2 * math.Pi * a.Scales.X(scale.FrequencyWet)
+	slow := omega * 9e-8 * 900 / 50
+	closeTo(t, "Γr", a.Groups.Get(group.ViscousInertia), 1.2, 1e-3)
+	closeTo(t, "Γi", a.Groups.Get(group.ViscousDamping), 12/slow, 1e-3)
+}

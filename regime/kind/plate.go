@@ -484,8 +484,8 @@ func (p *plate) gamma(r *Resolver) func(f float64) float64 {
 func (p *plate) viscous(f, nu float64) (gr, gi float64, err error) {
 	switch {
 	case p.gap > 0 && f > 0:
-		gamma := gapFactor(p.gap * math.Sqrt(math.Pi*f/(2*nu)))
-		return real(gamma), -imag(gamma), nil
+		gr, gi = betweenWalls(p.gap, f, nu)
+		return gr, gi, nil
 	case p.strip && !p.baffled:
 		return ribbon(2 * math.Pi * f * p.b * p.b / 4 / nu)
 	}
