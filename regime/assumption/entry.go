@@ -8,7 +8,6 @@ package assumption
 
 import (
 	"regimed/regime/cite"
-	"regimed/regime/criterion"
 	"regimed/regime/finding"
 	"regimed/regime/group"
 )
@@ -80,6 +79,3 @@ func Judge(g *group.Set, s finding.Study) *finding.Context {
 	}
 	return x
 }
-
-// Criteria lists the criteria of standards.
-func Criteria() []*finding.Criterion { return criterion.All }

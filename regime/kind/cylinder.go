@@ -50,7 +50,6 @@ var Cylinder = &Kind{
 type cylinder struct {
 	d           float64
 	support     canon.BeamSupport
-	beam        bool // bends: a length or a mode shape is known
 	spring      bool // rigid on springs
 	n           int
 	factors     canon.BeamFactors

@@ -356,7 +356,8 @@ func (p *film) shape(r *Resolver) bool {
 		return false
 	}
 	r.Put(scale.Gap, gap, units.Length, scale.Given, "to the wall")
-	p.squeeze = squeeze{side: p.a, aspect: p.a / p.b, area: p.a * p.b, gap: gap, closing: 1}
+	short, long := math.Min(p.a, p.b), math.Max(p.a, p.b)
+	p.squeeze = squeeze{side: short, aspect: short / long, area: p.a * p.b, gap: gap, closing: 1}
 	if !atMost(gap, math.Min(p.a, p.b)) {
 		r.contradict(fmGap, "The gap is wider than the plate: that is no film. Use another kind.")
 		return false

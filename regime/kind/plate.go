@@ -77,7 +77,6 @@ type plate struct {
 	curve    float64 // largest curvature times the length squared
 	lambda2  float64
 	mass     float64 // added mass over ρ a, incompressible, all wetted sides
-	pressure float64 // static deflection under unit pressure, over that under unit modal load
 	film     bool
 	gap      float64 // to a wall, 0 without
 }
@@ -662,7 +661,7 @@ func (p *plate) still(s *scale.Set, g *group.Set) {
 // sound puts Γ of the acoustic solution: the mode's radiation in a baffle, per
 // ideal added mass.
 func (p *plate) sound(k0 float64, g *group.Set) {
-	mass, resistance := math.NaN(), math.NaN()
+	var mass, resistance float64
 	var err error
 	switch {
 	case p.strip && !p.baffled:

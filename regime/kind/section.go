@@ -341,7 +341,7 @@ func (c *section) dragCoefficient(r *Resolver) float64 {
 	if v := r.c.Lookup(secDrag); v != nil {
 		return v.Q.Value
 	}
-	drag := math.NaN()
+	var drag float64
 	switch {
 	case c.shape == string(canon.SectionCircle):
 		w := wake{shape: canon.SectionCircle, drag: math.NaN()}

@@ -39,7 +39,6 @@ type vessel struct {
 	perimeter    float64
 	collapse     float64 // pressure under which it buckles into lobes
 	lobes        int
-	pulse        bool
 	pressure     bool // the pressure inside is given
 }
 
