@@ -13,7 +13,7 @@ var IncompressibleOscillation = &Entry{
 	ID:        "incompressible-oscillation",
 	Title:     "Incompressible oscillation",
 	LeavesOut: "sound: compressibility of the oscillating fluid and radiation",
-	Estimated: "frequency: |√((1 + μΓr)/(1 + μ)) − 1| with Γ of the acoustic solution; response: ζ_rad/ζ; sound: 1",
+	Estimated: "frequency: |√((1 + μΓr)/(1 + μ)) − 1| with Γ of the acoustic solution, and 1 − 1/√(1 + κ) without the spring of a closed cavity; response: ζ_rad/ζ; sound: 1",
 	Measures:  []finding.Measure{finding.Frequency, finding.Response, finding.Sound, finding.Load},
 	Sources:   []*cite.Source{cite.JungerFeit1986},
 	Estimate:  estimateIncompressibleOscillation,
@@ -21,6 +21,7 @@ var IncompressibleOscillation = &Entry{
 
 var (
 	soundInertia = finding.Say("Without sound the wet frequency is off by {e:%}: at He = {compressibility} the added mass is {acoustic_inertia} times the incompressible one.")
+	soundCavity  = finding.Say("An incompressible fluid has no spring in a closed cavity: without it, {fluid_stiffness} of the structure's stiffness, the frequency is off by {e:%}.")
 	soundDamping = finding.Say("Radiation makes {e:%} of the total damping: ζ_rad = {damping_radiation}.")
 	soundItself  = finding.Say("The radiated sound is asked for, and an incompressible fluid has none.")
 )
@@ -41,6 +42,10 @@ func estimateIncompressibleOscillation(x *finding.Context) {
 			x.Add(p)
 		} else {
 			waitOn(x, p, group.AcousticInertia, group.AddedMassRatio)
+		}
+		if x.Is(group.Cavity) && !x.Is(group.Film) && x.Has(group.FluidStiffness) {
+			p.Say, p.Estimate = soundCavity, softened(x.Get(group.FluidStiffness))
+			x.Add(p)
 		}
 		if x.Has(group.DampingRadiation) {
 			addShare(x, finding.Part{Measure: finding.Response, Basis: finding.Canonical, Factor: x.Factors.Acoustic,

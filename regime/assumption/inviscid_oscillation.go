@@ -54,7 +54,7 @@ func estimateInviscidOscillation(x *finding.Context) {
 		waitOn(x, p, group.ViscousInertia, group.AddedMassRatio)
 	}
 	if x.Is(group.Film) && x.Has(group.FluidStiffness) {
-		p.Say, p.Estimate = inviscidFilm, x.Get(group.FluidStiffness)/2
+		p.Say, p.Estimate = inviscidFilm, softened(x.Get(group.FluidStiffness))
 		x.Add(p)
 	}
 	if x.Has(group.DampingViscous) {

@@ -47,6 +47,12 @@ const (
 	beam  = `"structure":{"kind":"cylinder","diameter":"20 mm","length":"1 m","density":"7850 kg/m3","young_modulus":"210 GPa","linear_strain":0.002,"support":`
 )
 
+// A diaphragm of 0.1 m on 1000 N/m in gas before a box of 20 L, and the stiffness
+// of the box over that of the suspension.
+const box = `{"structure":{"kind":"piston","radius":"0.1 m","moving_mass":"1 kg","stiffness":"1 kN/m","enclosure_volume":"20 L"},` + gas + `}`
+
+var boxStiffness = 1.2 * 300 * 300 * math.Pow(math.Pi*0.01, 2) / 0.02 / 1000
+
 // Bending stiffness and speed of divergence of the panel above.
 var (
 	panelStiffness = 210e9 * 1e-6 / (12 * (1 - 0.09))
@@ -170,6 +176,10 @@ func knownAnswers() []known {
 			finding.Frequency, math.Sqrt(1+panelAddedMass) - 1, 2e-3, 0.05, finding.Invalid}, // 1.49
 		{assumption.FluidAbsent, "the panel in air", `{` + panel + `,` + gas + `}`,
 			finding.Frequency, 0.5 * 0.40950 * 1.2 / 78.5, 2e-2, 0.05, finding.Valid},
+		{assumption.FluidAbsent, "a box stiffer than the suspension", box, // ρc²A²/V over the stiffness
+			finding.Frequency, 1 - 1/math.Sqrt(1+boxStiffness), 1e-9, 0.05, finding.Invalid},
+		{assumption.IncompressibleOscillation, "no spring in a box of incompressible fluid", box,
+			finding.Frequency, 1 - 1/math.Sqrt(1+boxStiffness), 1e-9, 0.05, finding.Invalid},
 		{assumption.StillFluid, "reduced velocity without a flow stiffness",
 			`{"structure":{"kind":"generic","length":"0.1 m","volume":"1 L","mass":"10 kg","frequency_dry":"10 Hz"},` + gas + `,"flow":{"speed":"0.3 m/s"}}`,
 			finding.Frequency, 0.3, 1e-9, 1, finding.Valid},
@@ -337,7 +347,7 @@ func TestKnownAnswers(t *testing.T) {
 			t.Errorf("%s has no known answer", e.ID)
 		}
 	}
-	if rows != 74 {
+	if rows != 76 {
 		t.Errorf("%d known answers", rows)
 	}
 }

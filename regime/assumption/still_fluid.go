@@ -13,7 +13,7 @@ var StillFluid = &Entry{
 	ID:        "still-fluid",
 	Title:     "Fluid at rest",
 	LeavesOut: "the mean flow's effect on the motion, and its load",
-	Estimated: "frequency: ½ k_flow/k, or U_R against 1 where the kind has no flow stiffness of its own; response: ζ_flow/ζ; load: static deflection over the displacement of interest; in waves 1, or their deflection over the amplitude of interest",
+	Estimated: "frequency: ½ k_flow/k, or U_R against 1 where the kind has no flow stiffness of its own, and 1 − √(1 − ζ_flow²); response: ζ_flow/ζ; load: static deflection over the displacement of interest; in waves 1, or their deflection over the amplitude of interest",
 	Measures:  []finding.Measure{finding.Frequency, finding.Response, finding.Load, finding.Stability},
 	Sources:   []*cite.Source{cite.Blevins1990, cite.ThisMethod},
 	Estimate:  estimateStillFluid,
@@ -22,6 +22,7 @@ var StillFluid = &Entry{
 var (
 	stillStiffness = finding.Say("The mean flow shifts the natural frequency by {e:%}: its stiffness is {flow_stiffness} of the structure's.")
 	stillSpeed     = finding.Say("The flow passes {reduced_velocity} lengths in a period of the mode; below about 1 it hardly changes the motion.")
+	stillDamped    = finding.Say("The mean flow damps the mode with ζ = {damping_flow}, which lowers the frequency of free vibration by {e:%}.")
 	stillDamping   = finding.Say("The mean flow makes {e:%} of the total damping.")
 	stillLoad      = finding.Say("The mean flow deflects the structure by {e:%} of the amplitude of interest.")
 	stillFeedback  = finding.Say("The flow's stiffness, {flow_stiffness} of the structure's, changes a load by {e:%}.")
@@ -57,6 +58,10 @@ func estimateStillFluid(x *finding.Context) {
 	} else {
 		stillFrequency(x)
 		if x.Has(group.DampingFlow) {
+			x.Add(finding.Part{Measure: finding.Frequency, Basis: finding.Canonical, Factor: x.Factors.Flow,
+				Say: stillDamped, Source: cite.Blevins1990, Estimate: slowed(x.Get(group.DampingFlow))})
+		}
+		if x.Has(group.DampingFlow) {
 			addShare(x, finding.Part{Measure: finding.Response, Basis: finding.Canonical, Factor: x.Factors.Flow,
 				Say: stillDamping, Source: cite.Blevins1990}, x.Get(group.DampingFlow))
 		}
@@ -80,6 +85,12 @@ func stillWater(x *finding.Context) {
 	}
 	x.Add(finding.Part{Measure: finding.Load, Basis: finding.Canonical, Factor: 1.5, Say: stillWaves, Source: cite.Morison1950,
 		Estimate: x.Get(group.WaveDeflection)})
+}
+
+// slowed is by how much a damping ratio ζ lowers the frequency of free
+// vibration, 1 − √(1 − ζ²); from ζ = 1 on there is none.
+func slowed(zeta float64) float64 {
+	return 1 - math.Sqrt(math.Max(0, 1-zeta*zeta))
 }
 
 func stillFrequency(x *finding.Context) {

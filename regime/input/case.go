@@ -27,7 +27,7 @@ type Case struct {
 
 // NewCase returns an empty case of a kind.
 func NewCase(schema *Schema, kind string) *Case {
-	return &Case{Kind: kind, Schema: schema, given: make([]Value, 0, 24)}
+	return &Case{Kind: kind, Schema: schema, given: make([]Value, 0, 16)}
 }
 
 // Given returns what was given, in the order in which it came.

@@ -192,6 +192,9 @@ func formulas(s *scale.Set, g *group.Set) {
 		}
 		g.Miss(f.Group, inputNeed(trial, f, missing, need))
 	}
+	if trial != nil {
+		trial.Release()
+	}
 }
 
 // drop takes away the common groups that do not arise by the traits of a case.

@@ -453,6 +453,12 @@ func (p *plate) frequencies(r *Resolver) {
 		derived = math.Sqrt(derived*derived + membrane)
 		how += ", with the tension"
 	}
+	if depth := r.c.X(BackingDepth); depth > 0 && r.Is(group.Fluid) {
+		c := r.X(scale.SoundSpeed)
+		spring := r.X(scale.Density) * c * c * p.volumeShare() / (4 * math.Pi * math.Pi * m * depth)
+		r.sprung(derived, how, p.gamma(r), func(float64) float64 { return spring }, spring, scale.DryMass, scale.AddedMass, scale.Density, scale.SoundSpeed)
+		return
+	}
 	r.frequencies(derived, how, p.gamma(r))
 }
 
@@ -791,6 +797,7 @@ func (p *plate) cavity(s *scale.Set, g *group.Set) {
 	omega := 2 * math.Pi * f
 	stiffness := s.X(scale.Density) * c * c / (s.X(scale.DryMass) * d * omega * omega) * p.volumeShare()
 	putOrWait(s, g, group.FluidStiffness, stiffness+known(g, group.FluidStiffness), scale.SoundSpeed, scale.DryMass, scale.FrequencyDry, scale.Density)
+	sprungDamping(s, g)
 }
 
 func known(g *group.Set, id group.ID) float64 {

@@ -212,3 +212,19 @@ func TestTankContradictions(t *testing.T) {
 		t.Errorf("ran %d rows", ran)
 	}
 }
+
+// A wave that slams against a roof is no linear surface, whatever linear theory
+// makes of its height.
+func TestSlammingSurface(t *testing.T) {
+	a := answerOf(t, `{"structure":{"kind":"tank","diameter":"36.6 m","height":"14.6 m","liquid_depth":"13.4 m","wall_thickness":"15 mm","material":"steel","spectral_acceleration":"0.12 gn"},
+		"fluid":{"density":"870 kg/m3","viscosity":"10 mPa s","sound_speed":"1350 m/s","phase":"liquid"}}`)
+	if v := a.Findings[assumption.NoSlamming.Index()].Verdict; v != finding.Invalid {
+		t.Fatalf("no-slamming %s", v)
+	}
+	if v := a.Findings[assumption.LinearFreeSurface.Index()].Verdict; v == finding.Invalid {
+		t.Fatalf("linear-free-surface %s: the case decides nothing", v)
+	}
+	if s := a.Recommendation.Axes.FreeSurface; s != "nonlinear" {
+		t.Errorf("free surface %s", s)
+	}
+}

@@ -42,7 +42,7 @@ func freeSurface(at func(*assumption.Entry) finding.Verdict) string {
 	switch {
 	case held(free) && held(lid):
 		return "none"
-	case linear == finding.Invalid || lid == finding.Invalid:
+	case linear == finding.Invalid || lid == finding.Invalid || at(assumption.NoSlamming) == finding.Invalid:
 		return "nonlinear"
 	default:
 		return "linear"

@@ -218,9 +218,10 @@ func (s *Set) Needs(id ID) string {
 
 // With returns a copy of the set in which one scale has another number.
 func (s *Set) With(id ID, x float64) *Set {
-	c := *s
+	c := sets.Get().(*Set)
+	*c = *s
 	c.v[id].X = x
-	return &c
+	return c
 }
 
 // Of returns the definition of a scale.

@@ -31,14 +31,24 @@ const (
 // Rows lists the figures, in the order of a set-up.
 var Rows = slices.Concat(timeRows, spaceRows)
 
+// fastest is the larger of the wet frequency and that of the motion; where only
+// one is known, that one.
+func fastest(c *Case) float64 {
+	motion, wet := c.X(scale.FrequencyMotion), c.X(scale.FrequencyWet)
+	if wet > motion || math.IsNaN(motion) {
+		return wet
+	}
+	return motion
+}
+
 // timeRows are time steps and durations.
 var timeRows = []Row{
 	{ID: "time_step_structure", Title: "Time step for the structural mode", Kind: units.Time, Purpose: TimeStep, Source: cite.ThisMethod,
-		Rule: "wet period / 20; / 50 where the amplitude has to be accurate", For: func(c *Case) bool { return dynamic(c) && c.Axes.Coupling != "one-way" || marching(c) },
-		Value: func(c *Case) float64 { return 1 / (stepsPerPeriod * c.X(scale.FrequencyMotion)) }},
+		Rule: "wet period, or that of a faster motion, / 20; / 50 where the amplitude has to be accurate", For: func(c *Case) bool { return dynamic(c) && c.Axes.Coupling != "one-way" || marching(c) },
+		Value: func(c *Case) float64 { return 1 / (stepsPerPeriod * fastest(c)) }},
 	{ID: "time_step_structure_fine", Title: "Time step for an accurate amplitude", Kind: units.Time, Source: cite.ThisMethod,
-		Rule: "wet period / 50", For: func(c *Case) bool { return marching(c) && dynamic(c) },
-		Value: func(c *Case) float64 { return 1 / (fineStepsPerMode * c.X(scale.FrequencyMotion)) }},
+		Rule: "wet period, or that of a faster motion, / 50", For: func(c *Case) bool { return marching(c) && dynamic(c) },
+		Value: func(c *Case) float64 { return 1 / (fineStepsPerMode * fastest(c)) }},
 	{ID: "time_step_shedding", Title: "Time step for the shedding", Kind: units.Time, Purpose: TimeStep, Source: cite.ThisMethod,
 		Rule: "shedding period / 100", For: marching,
 		Value: func(c *Case) float64 {

@@ -1,12 +1,14 @@
 package setup_test
 
 import (
+	"fmt"
 	"math"
 	"testing"
 
 	"regimed/regime"
 	"regimed/regime/input"
 	"regimed/regime/kind"
+	"regimed/regime/scale"
 	"regimed/regime/setup"
 )
 
@@ -86,6 +88,25 @@ func TestFiguresOfAnImplicitScheme(t *testing.T) {
 	want := math.Ceil(math.Log(1e-3) / math.Log(mu/(2+mu)))
 	if got := m["coupling_iterations"].Value; got != want {
 		t.Errorf("%g iterations at μ = %g, want %g", got, mu, want)
+	}
+}
+
+// The time step of the structure follows the faster of the wet mode and of the
+// motion that is forced on it.
+func TestTimeStepOfAForcedMotion(t *testing.T) {
+	const rows = 2
+	ran := 0
+	for _, forced := range []float64{0.5, 400} {
+		a, m := figures(t, fmt.Sprintf(`{"structure":{"kind":"generic","length":"0.1 m","mass":"8 kg","volume":"1 L","frequency_dry":"30 Hz"},
+			"fluid":{"density":"1000 kg/m3","viscosity":"1 mPa s","sound_speed":"1500 m/s","vapour_pressure":"2 kPa"},"motion":{"amplitude":"0.1 mm","frequency":"%g Hz"}}`, forced))
+		want := 1 / (20 * math.Max(forced, a.Scales.X(scale.FrequencyWet)))
+		if got := m["time_step_structure"].Value; math.Abs(got/want-1) > 1e-12 {
+			t.Errorf("forced at %g Hz: %g s, want %g", forced, got, want)
+		}
+		ran++
+	}
+	if ran != rows {
+		t.Errorf("ran %d rows, want %d", ran, rows)
 	}
 }
 
