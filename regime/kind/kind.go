@@ -57,6 +57,7 @@ type GivenGroup struct {
 func Resolve(c *input.Case) (*Resolved, []Warning, []input.Violation) {
 	k := Find(c.Kind)
 	r := newResolver(c, k)
+	r.uncertain()
 	r.fluid()
 	r.environment()
 	physics := k.New(r)

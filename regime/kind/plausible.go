@@ -14,6 +14,21 @@ import (
 // same length in two units must lie on the same side of a rule.
 func atMost(x, limit float64) bool { return x <= limit*(1+1e-9) }
 
+// uncertain says which inputs are uncertain, and where they are taken.
+func (r *Resolver) uncertain() {
+	for i := range r.c.Given() {
+		v := &r.c.Given()[i]
+		if v.Q.Form == units.Certain || v.Field.Type != input.Quantity && v.Field.Type != input.Number {
+			continue
+		}
+		k := v.Field.Kind
+		if v.Field.Type == input.Number {
+			k = units.Dimensionless
+		}
+		r.warn(v.Field, "uncertain", fmt.Sprintf("%s is uncertain and taken at its middle, %s; the answer does not carry its spread.", v.Field.Path(), units.Format(v.Q.Value, k)))
+	}
+}
+
 // band warns, and never refuses, where a value lies outside what is usual.
 func (r *Resolver) band(f *input.Field, id scale.ID, lo, hi float64, mistake string) {
 	if !r.c.Has(f) {

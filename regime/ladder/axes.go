@@ -14,6 +14,9 @@ func axes(c *Class, kind string, g *group.Set, fs []finding.Finding) Axes {
 	set(&a.Compressible, yesNo(c.Axes.Fluid == "film" && g.Has(group.Squeeze) && g.Get(group.Squeeze) > 1 || invalid(assumption.IncompressibleFlow) || invalid(assumption.IncompressibleOscillation) || invalid(assumption.NoAcousticResonance)))
 	set(&a.Viscous, yesNo(invalid(assumption.InviscidFlow) || invalid(assumption.InviscidOscillation)))
 	set(&a.FreeSurface, freeSurface(at))
+	if a.Viscous == "no" {
+		set(&a.Turbulence, "none") // without viscosity there is no boundary layer to become turbulent
+	}
 	set(&a.Turbulence, turbulence(at(assumption.LaminarFlow)))
 	set(&a.Structure, structure(c, invalid(assumption.SmallDisplacement) || invalid(assumption.LinearStructure), !invalid(assumption.RigidStructure) && g.Is(group.StaticOnly)))
 	set(&a.FluidInertia, inertia(c, at(assumption.FluidAbsent)))
