@@ -40,10 +40,13 @@ func Decide(r *kind.Resolved, s finding.Study) *Answer {
 	return a
 }
 
-// Release gives the memory of an answer that Classify made back to the next
-// case; nothing may use the answer afterwards. Whoever does not call it leaves it to the collector.
+// Release gives the memory of an answer back to the next case; nothing may use
+// the answer afterwards. The scales of a resolved case that was decided on
+// directly stay with it. Whoever does not call it leaves it to the collector.
 func (a *Answer) Release() {
-	a.Scales.Release()
+	if a.Case != nil {
+		a.Scales.Release()
+	}
 	a.Groups.Release()
 	if a.judged != nil {
 		a.judged.Release()
