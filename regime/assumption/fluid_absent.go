@@ -31,11 +31,7 @@ var (
 
 func estimateFluidAbsent(x *finding.Context) {
 	switch {
-	case !x.Is(group.Fluid):
-		x.NotApplicable(noFluid)
-		return
-	case x.Is(group.StaticOnly):
-		x.NotApplicable(noFrequency)
+	case !oscillates(x):
 		return
 	case x.Is(group.Pulsatile):
 		x.Add(finding.Part{Measure: finding.Frequency, Basis: finding.Definition, Estimate: 1, Factor: 1, Say: pulseIsFluid, Source: cite.WomersleyWave1957})

@@ -24,10 +24,7 @@ var compressibleFlow = finding.Say("At M = {mach} compressibility raises the loa
 
 func estimateIncompressibleFlow(x *finding.Context) {
 	switch {
-	case !x.Is(group.Fluid):
-		x.NotApplicable(noFluid)
-	case !x.Any(group.Flow):
-		x.NotApplicable(noFlow)
+	case !flows(x, group.Flow): // said why
 	case x.Is(group.Internal):
 		x.AddOrWait(finding.Part{Measure: finding.Load, Basis: finding.Canonical, Factor: 1.5, Say: compressibleBore, Source: cite.Liepmann1957},
 			group.Mach, func(m float64) float64 { return m * m / 2 })

@@ -27,10 +27,7 @@ var (
 
 func estimateInviscidFlow(x *finding.Context) {
 	switch {
-	case !x.Is(group.Fluid):
-		x.NotApplicable(noFluid)
-	case !x.Any(group.Flow | group.Waves):
-		x.NotApplicable(noFlow)
+	case !flows(x, group.Flow|group.Waves): // said why
 	case !x.Any(group.Flow):
 		x.AddOrWait(finding.Part{Measure: finding.Load, Basis: finding.Canonical, Factor: 1.5, Say: dragInWaves, Source: cite.Morison1950},
 			group.DragInertia, dragExcess)

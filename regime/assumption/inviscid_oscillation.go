@@ -29,11 +29,7 @@ var (
 
 func estimateInviscidOscillation(x *finding.Context) {
 	switch {
-	case !x.Is(group.Fluid):
-		x.NotApplicable(noFluid)
-		return
-	case x.Is(group.StaticOnly):
-		x.NotApplicable(noFrequency)
+	case !oscillates(x):
 		return
 	case x.Is(group.Sloshing):
 		x.AddOrWait(finding.Part{Measure: finding.Frequency, Basis: finding.Canonical, Factor: 1.5, Say: inviscidSloshing, Source: cite.Keulegan1959},

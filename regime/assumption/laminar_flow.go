@@ -30,12 +30,7 @@ var (
 )
 
 func estimateLaminar(x *finding.Context) {
-	switch {
-	case !x.Is(group.Fluid):
-		x.NotApplicable(noFluid)
-		return
-	case !x.Any(group.Flow | group.Waves):
-		x.NotApplicable(noFlow)
+	if !flows(x, group.Flow|group.Waves) {
 		return
 	}
 	b := x.Set.Band

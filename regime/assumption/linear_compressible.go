@@ -27,12 +27,7 @@ var (
 const transonicLow, transonicHigh = 0.75, 1.25
 
 func estimateLinearCompressible(x *finding.Context) {
-	switch {
-	case !x.Is(group.Fluid):
-		x.NotApplicable(noFluid)
-		return
-	case !x.Any(group.Flow):
-		x.NotApplicable(noFlow)
+	if !flows(x, group.Flow) {
 		return
 	}
 	p := finding.Part{Measure: finding.Scale, Basis: finding.Threshold, Factor: 1.1, Say: transonic, Source: cite.BisplinghoffAshleyHalfman1955}

@@ -38,10 +38,7 @@ var (
 // operation to a critical speed.
 func hazardOfSpeed(x *finding.Context, id group.ID, say *finding.Sentence, source *cite.Source, factor float64, never *finding.Sentence) {
 	switch {
-	case !x.Is(group.Fluid):
-		x.NotApplicable(noFluid)
-	case !x.Any(group.Flow):
-		x.NotApplicable(noFlow)
+	case !flows(x, group.Flow): // said why
 	case x.State(id) == group.Absent || x.State(id) == group.OffRange:
 		x.NotApplicable(never)
 	case x.Is(group.StaticOnly) && !x.Has(id):

@@ -28,11 +28,7 @@ var (
 
 func estimateFluidelastic(x *finding.Context) {
 	switch {
-	case !x.Is(group.Fluid):
-		x.NotApplicable(noFluid)
-		return
-	case !x.Any(group.Flow):
-		x.NotApplicable(noFlow)
+	case !flows(x, group.Flow):
 		return
 	case !x.Is(group.Array | group.Cross):
 		x.NotApplicable(noArray)

@@ -31,10 +31,7 @@ var (
 
 func estimateGalloping(x *finding.Context) {
 	switch {
-	case !x.Is(group.Fluid):
-		x.NotApplicable(noFluid)
-	case !x.Any(group.Flow):
-		x.NotApplicable(noFlow)
+	case !flows(x, group.Flow): // said why
 	case !x.Is(group.Cross | group.Bluff):
 		x.NotApplicable(noGallopShape)
 	case x.Is(group.Circular):

@@ -45,11 +45,7 @@ const forcedAmplitude = 0.02
 
 func estimateLockIn(x *finding.Context) {
 	switch {
-	case !x.Is(group.Fluid):
-		x.NotApplicable(noFluid)
-		return
-	case !x.Any(group.Flow):
-		x.NotApplicable(noFlow)
+	case !flows(x, group.Flow):
 		return
 	case x.Is(group.WakeOfBody):
 	case !x.Is(group.Cross):

@@ -26,11 +26,7 @@ var (
 
 func estimateStall(x *finding.Context) {
 	switch {
-	case !x.Is(group.Fluid):
-		x.NotApplicable(noFluid)
-		return
-	case !x.Any(group.Flow):
-		x.NotApplicable(noFlow)
+	case !flows(x, group.Flow):
 		return
 	case !x.Is(group.Streamlined) || x.Is(group.PanelLike):
 		x.NotApplicable(neverStalls)

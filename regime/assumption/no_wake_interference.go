@@ -40,11 +40,7 @@ const (
 
 func estimateWakeInterference(x *finding.Context) {
 	switch {
-	case !x.Is(group.Fluid):
-		x.NotApplicable(noFluid)
-		return
-	case !x.Any(group.Flow):
-		x.NotApplicable(noFlow)
+	case !flows(x, group.Flow):
 		return
 	case x.Is(group.Array):
 		x.NotApplicable(neighbourArray)

@@ -32,11 +32,7 @@ const laminarMomentum, turbulentMomentum = 4.0 / 3, 1.02
 
 func estimatePlugFlow(x *finding.Context) {
 	switch {
-	case !x.Is(group.Fluid):
-		x.NotApplicable(noFluid)
-		return
-	case !x.Any(group.Flow):
-		x.NotApplicable(noFlow)
+	case !flows(x, group.Flow):
 		return
 	case x.Is(group.Pulsatile):
 		x.NotApplicable(plugPulse)

@@ -29,11 +29,7 @@ var (
 
 func estimateGusts(x *finding.Context) {
 	switch {
-	case !x.Is(group.Fluid):
-		x.NotApplicable(noFluid)
-		return
-	case !x.Any(group.Flow):
-		x.NotApplicable(noFlow)
+	case !flows(x, group.Flow):
 		return
 	case !x.Is(group.Gas):
 		x.NotApplicable(noWind)

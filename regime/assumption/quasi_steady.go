@@ -34,10 +34,7 @@ var (
 
 func estimateQuasiSteady(x *finding.Context) {
 	switch {
-	case !x.Is(group.Fluid):
-		x.NotApplicable(noFluid)
-	case !x.Any(group.Flow):
-		x.NotApplicable(noFlow)
+	case !flows(x, group.Flow): // said why
 	case x.Is(group.StaticOnly):
 		x.NotApplicable(noFrequency)
 	case x.Is(group.Axial):

@@ -22,10 +22,7 @@ var surfaceRise = finding.Say("The mean flow lifts the surface by {e:%} of the d
 
 func estimateRigidLid(x *finding.Context) {
 	switch {
-	case !x.Is(group.Fluid):
-		x.NotApplicable(noFluid)
-	case !x.Any(group.Flow):
-		x.NotApplicable(noFlow)
+	case !flows(x, group.Flow): // said why
 	case !x.Is(group.NearSurface):
 		x.NotApplicable(noSurface)
 	default:

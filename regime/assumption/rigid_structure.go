@@ -93,7 +93,7 @@ func addChangeOfPlace(x *finding.Context) {
 // addDeformation adds an estimate at the larger of the amplitude and the
 // static deflection; where only one of them is known, that one counts.
 func addDeformation(x *finding.Context, p finding.Part, moving, static group.ID, estimate func(float64) float64) {
-	a, _ := amplitudeOf(x, moving)
+	a := orZero(x, moving)
 	if x.Has(static) {
 		p.Estimate = estimate(math.Max(a, x.Get(static)))
 		x.Add(p)

@@ -21,6 +21,34 @@ var (
 	rigidKind     = finding.Say("The kind has no shape of its own from which slopes and strains follow.")
 )
 
+// flows says whether a fluid moves in one of the ways given, and else records
+// why the effect cannot occur.
+func flows(x *finding.Context, ways group.Traits) bool {
+	switch {
+	case !x.Is(group.Fluid):
+		x.NotApplicable(noFluid)
+	case !x.Any(ways):
+		x.NotApplicable(noFlow)
+	default:
+		return true
+	}
+	return false
+}
+
+// oscillates says whether a fluid is shaken, and else records why the effect
+// cannot occur.
+func oscillates(x *finding.Context) bool {
+	switch {
+	case !x.Is(group.Fluid):
+		x.NotApplicable(noFluid)
+	case x.Is(group.StaticOnly):
+		x.NotApplicable(noFrequency)
+	default:
+		return true
+	}
+	return false
+}
+
 // identity is the estimate that is the group itself.
 func identity(v float64) float64 { return v }
 
@@ -56,15 +84,6 @@ func addShare(x *finding.Context, p finding.Part, left float64) {
 		}
 		return left / total
 	})
-}
-
-// amplitudeOf returns the amplitude over a length of the kind: the given one,
-// or that of the limit cycle where a self-excited hazard is active.
-func amplitudeOf(x *finding.Context, id group.ID) (float64, bool) {
-	if x.Has(id) {
-		return x.Get(id), true
-	}
-	return 0, false
 }
 
 // selfExcitedHazards are the hazards that feed on the motion.

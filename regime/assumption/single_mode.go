@@ -28,12 +28,7 @@ var (
 )
 
 func estimateSingleMode(x *finding.Context) {
-	switch {
-	case !x.Is(group.Fluid):
-		x.NotApplicable(noFluid)
-		return
-	case x.Is(group.StaticOnly):
-		x.NotApplicable(noFrequency)
+	if !oscillates(x) {
 		return
 	}
 	p := finding.Part{Measure: finding.Frequency, Basis: finding.Canonical, Factor: 1.5, Say: modesCouple, Source: cite.Blevins1990}

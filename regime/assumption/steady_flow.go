@@ -31,12 +31,7 @@ var (
 )
 
 func estimateSteadyFlow(x *finding.Context) {
-	switch {
-	case !x.Is(group.Fluid):
-		x.NotApplicable(noFluid)
-		return
-	case !x.Any(group.Flow | group.Waves):
-		x.NotApplicable(noFlow)
+	if !flows(x, group.Flow|group.Waves) {
 		return
 	}
 	if x.Is(group.Waves) {

@@ -29,11 +29,7 @@ var (
 
 func estimateTwoDimensional(x *finding.Context) {
 	switch {
-	case !x.Is(group.Fluid):
-		x.NotApplicable(noFluid)
-		return
-	case !x.Any(group.Flow | group.Waves):
-		x.NotApplicable(noFlow)
+	case !flows(x, group.Flow|group.Waves):
 		return
 	case x.Is(group.Waves):
 		x.Add(finding.Part{Measure: finding.Load, Basis: finding.Definition, Estimate: 1, Factor: 1, Say: wavesDecay, Source: cite.Newman1977})

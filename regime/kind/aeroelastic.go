@@ -259,21 +259,8 @@ type strip struct {
 	round bool    // viscous layer of a circle rather than of a thin strip
 }
 
-func (p strip) gamma(r *Resolver) func(f float64) float64 {
-	nu := r.X(scale.KinematicViscosity)
-	if math.IsNaN(nu) {
-		return nil
-	}
-	return func(f float64) float64 {
-		gr, _, err := p.viscous(math.Pi * f * p.width * p.width / 2 / nu)
-		if err != nil {
-			return 1
-		}
-		return gr
-	}
-}
-
-func (p strip) viscous(stokes float64) (gr, gi float64, err error) {
+func (p strip) viscous(f, nu float64) (gr, gi float64, err error) {
+	stokes := math.Pi * f * p.width * p.width / 2 / nu
 	if p.round {
 		return canon.OscillatingCylinder(stokes)
 	}
@@ -286,34 +273,15 @@ func (p strip) groups(s *scale.Set, g *group.Set) {
 		return
 	}
 	g.Traits |= group.ViscousSolved
-	fw, nu, c := s.X(scale.FrequencyWet), s.X(scale.KinematicViscosity), s.X(scale.SoundSpeed)
-	if gr, gi, err := p.viscous(math.Pi * fw * p.width * p.width / 2 / nu); err == nil && !math.IsNaN(gr) {
-		g.Put(group.ViscousInertia, gr)
-		g.Put(group.ViscousDamping, gi)
-	} else {
-		waitFor(s, g, []scale.ID{scale.FrequencyWet, scale.KinematicViscosity}, group.ViscousInertia, group.ViscousDamping)
-	}
-	if gr, gi, err := canon.SoundCylinder(math.Pi * fw * p.width / c); err == nil && !math.IsNaN(gr) {
-		g.Put(group.AcousticInertia, gr)
-		g.Put(group.AcousticDamping, gi)
-	} else {
-		waitFor(s, g, []scale.ID{scale.FrequencyWet, scale.SoundSpeed}, group.AcousticInertia, group.AcousticDamping)
-	}
+	fw, c := s.X(scale.FrequencyWet), s.X(scale.SoundSpeed)
+	viscousGroups(s, g, p.viscous)
+	soundGroups(s, g, math.Pi*fw*p.width/c, canon.SoundCylinder)
 	if g.Is(group.NearSurface) {
 		// a dipole of the strength of a circle of this width, and its image
 		x := p.width / s.X(scale.Depth)
-		g.Put(group.SurfaceInertiaLid, 1+x*x/8)
-		g.Put(group.SurfaceInertiaFree, math.Max(1-x*x/8, 0))
+		image(g, x*x/8)
 	}
-	if g.Is(group.Liquid) {
-		g.Drop(group.Knudsen)
-	} else {
-		length := p.width
-		if s.Has(scale.Gap) {
-			length = math.Min(length, s.X(scale.Gap))
-		}
-		putOrWait(s, g, group.Knudsen, meanFreePath(s)/length, scale.HeatCapacityRatio, scale.KinematicViscosity, scale.SoundSpeed)
-	}
+	rarefaction(s, g, p.width)
 	// both faces push the fluid for a twentieth of a period
 	g.Put(group.AcousticStep, 2*s.X(scale.Density)*c*p.width/(20*fw*s.X(scale.DryMass)))
 }
@@ -333,9 +301,7 @@ func (r *Resolver) bendingFrequency(f *input.Field) {
 
 // nearSurface marks a body that a free surface lies within ten lengths of.
 func (r *Resolver) nearSurface(length float64) {
-	if d := r.X(scale.Depth); atMost(d, 10*length) && r.Is(group.Fluid) {
-		r.trait(group.NearSurface)
-	}
+	r.nearSurface(length)
 }
 
 // tilt puts the largest slope of the mode over the span; absent without a span.

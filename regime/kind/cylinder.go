@@ -255,10 +255,7 @@ func (c *cylinder) addedMass(r *Resolver, displaced, contents float64, dry bool)
 		how = fmt.Sprintf("%.4g ρπD²/4 between the walls, and contents", c.confined*c.wet)
 	}
 	r.derive(scale.AddedMass, c.confined*displaced+contents, units.MassPerLength, how)
-	for _, id := range []scale.ID{scale.AddedMass, scale.AddedMassFree} {
-		r.Need(id, r.Needs(scale.Density))
-		r.Value(id).Kind = units.MassPerLength
-	}
+	r.addedNeeds(units.MassPerLength)
 	c.surface(r)
 }
 

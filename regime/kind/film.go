@@ -20,6 +20,10 @@ type squeeze struct {
 	area    float64 // of the face, in the reference of the dry mass
 	gap     float64
 	closing float64 // speed at which the gap closes over that of the face: 1, or 2 between two faces
+	isFilm  bool
+	gas     bool    // a film of gas, which is compressed
+	open    float64 // added mass of the side that faces open fluid
+	shell   float64 // of the gap, without friction; 0 where it is wide
 }
 
 // layer is the added mass of the gap without friction: the pressure of a thin
@@ -77,15 +81,55 @@ func (q *squeeze) stiffest(s *scale.Set) float64 {
 	return q.closing * s.X(scale.Pressure) * q.area / q.gap
 }
 
-// springOver is the stiffness over 4π²m as a function of the frequency, and its bound.
+// settle decides whether the gap is a film, at a likely frequency or another.
+func (q *squeeze) settle(r *Resolver, otherwise float64) {
+	q.shell = q.layer(r.X(scale.Density))
+	inertia := 2 * math.Pi * r.likelyFrequency(otherwise) * q.gap * q.gap / r.X(scale.KinematicViscosity)
+	q.isFilm = isFilm(q.gap, q.side, inertia, !r.Is(group.Liquid))
+	q.gas = q.isFilm && r.Is(group.Fluid) && !r.Is(group.Liquid)
+	if q.isFilm && r.Is(group.Fluid) {
+		r.trait(group.Film)
+	}
+}
+
+// viscous is Γ of the open side, and with a gap of both together, each with its
+// share of the added mass.
+func (q *squeeze) viscous(f, nu float64) (gr, gi float64, err error) {
+	gr, gi, err = ribbon(2 * math.Pi * f * q.side * q.side / 4 / nu)
+	if err != nil || q.gas || q.shell == 0 {
+		return gr, gi, err
+	}
+	lr, li := betweenWalls(q.gap, f, nu)
+	share := q.shell / (q.shell + q.open)
+	return gr + share*(lr-gr), gi + share*(li-gi), nil
+}
+
+// springOver is the stiffness over 4π²m as a function of the frequency, and its
+// bound: none but of gas.
 func (q *squeeze) springOver(r *Resolver) (spring func(f float64) float64, most float64) {
+	if !q.gas {
+		return func(float64) float64 { return 0 }, 0
+	}
 	over := 4 * math.Pi * math.Pi * r.X(scale.DryMass)
 	return func(f float64) float64 { k, _ := q.force(r.Set, f); return k / over }, q.stiffest(r.Set) / over
 }
 
-// groups puts what a film of gas does: its spring and its damper, beside the
+// groups puts what the gap does in place of a pressure ρω²ξL.
+func (q *squeeze) groups(s *scale.Set, g *group.Set, length float64) {
+	if g.Is(group.Liquid) && q.shell != 0 {
+		q.suction(s, g, length)
+	}
+	switch {
+	case q.gas:
+		q.cushion(s, g)
+	case q.isFilm: // a liquid has no spring
+		g.Put(group.FluidStiffness, 0)
+	}
+}
+
+// cushion puts what a film of gas does: its spring and its damper, beside the
 // damping that the open side has of its own.
-func (q *squeeze) groups(s *scale.Set, g *group.Set) {
+func (q *squeeze) cushion(s *scale.Set, g *group.Set) {
 	motion, dry, wet := s.X(scale.FrequencyMotion), s.X(scale.FrequencyDry), s.X(scale.FrequencyWet)
 	spring, damper := q.force(s, motion)
 	needs := []scale.ID{scale.Viscosity, scale.SoundSpeed, scale.HeatCapacityRatio, scale.FrequencyMotion, scale.DryMass, scale.FrequencyDry, scale.FrequencyWet, scale.Density}
@@ -100,13 +144,13 @@ func (q *squeeze) groups(s *scale.Set, g *group.Set) {
 
 // suction puts the pressure of the oscillation in a gap of liquid: the force of
 // the layer over its area, times the peak over the mean, in place of ρω²ξL.
-func (q *squeeze) suction(s *scale.Set, g *group.Set, layer, length float64) {
+func (q *squeeze) suction(s *scale.Set, g *group.Set, length float64) {
 	gr, gi := betweenWalls(q.gap, s.X(scale.FrequencyMotion), s.X(scale.KinematicViscosity))
 	peak := squarePeak
 	if q.aspect == 0 {
 		peak = stripPeak
 	}
-	factor := peak * layer * math.Hypot(gr, gi) / (q.area * s.X(scale.Density) * length)
+	factor := peak * q.shell * math.Hypot(gr, gi) / (q.area * s.X(scale.Density) * length)
 	switch g.State(group.OscillationPressure) {
 	case group.Known, group.Adopted:
 		putOrWait(s, g, group.OscillationPressure, factor*g.Get(group.OscillationPressure), scale.KinematicViscosity, scale.FrequencyMotion)
@@ -199,6 +243,11 @@ func (r *Resolver) sprung(derived float64, how string, gamma, spring func(f floa
 	}
 	r.frequencies(derived, how, func(float64) float64 { return effective })
 	if v := r.Value(scale.FrequencyWet); most > 0 && v.Origin == scale.Derived {
+		// not from the factor, which has lost the digits of a spring far stiffer than the structure
+		v.X = fw
+		if m := r.Value(scale.FrequencyMotion); m.Origin == scale.Derived {
+			m.X = fw
+		}
 		v.Note = "√(f² + k_f/(4π²m))/√(1 + μΓr), the mass and the stiffness k_f of the fluid at the wet frequency"
 	}
 	if r.Has(scale.FrequencyWet) || !r.Has(scale.FrequencyDry) {
@@ -273,10 +322,6 @@ type film struct {
 	squeeze
 	a, b   float64 // sides
 	round  bool
-	isFilm bool
-	gas    bool    // a film of gas, which is compressed
-	back   float64 // added mass of the open side
-	shell  float64 // of the gap, without friction
 }
 
 func newFilm(r *Resolver) Physics {
@@ -290,11 +335,8 @@ func newFilm(r *Resolver) Physics {
 	p.masses(r)
 	p.loads(r)
 	derived := r.suspension(fmStiffness)
-	spring, most := func(float64) float64 { return 0 }, 0.0
-	if p.gas {
-		spring, most = p.springOver(r)
-	}
-	r.sprung(derived, "√(k/m)/2π", p.gamma(r), spring, most, scale.DryMass, scale.AddedMass, scale.Density, scale.Viscosity, scale.SoundSpeed, scale.HeatCapacityRatio)
+	spring, most := p.springOver(r)
+	r.sprung(derived, "√(k/m)/2π", r.gamma(p.viscous), spring, most, scale.DryMass, scale.AddedMass, scale.Density, scale.Viscosity, scale.SoundSpeed, scale.HeatCapacityRatio)
 	r.interestOf()
 	return p
 }
@@ -374,12 +416,7 @@ func (p *film) masses(r *Resolver) {
 		r.derive(scale.DryMass, r.X(scale.SolidDensity)*area*h, units.Mass, "ρ_s times area and thickness")
 		r.Need(scale.DryMass, fmMass.Path())
 	}
-	r.derive(scale.DisplacedMass, r.X(scale.Density)*area*h, units.Mass, "ρ times area and thickness")
-	r.Value(scale.DisplacedMass).Kind = units.Mass
-	r.Need(scale.DisplacedMass, fmThickness.Path())
-	if !math.IsNaN(h) {
-		r.Need(scale.DisplacedMass, r.Needs(scale.Density))
-	}
+	r.displace(r.X(scale.Density)*area*h, units.Mass, "ρ times area and thickness", h, fmThickness)
 	r.closeGroups()
 }
 
@@ -402,35 +439,24 @@ func (p *film) loads(r *Resolver) {
 		whole = 8. / 3 * rho * radius * radius * radius
 	}
 	if r.c.Flag(fmOpen, true) {
-		p.back = whole / 2
+		p.open = whole / 2
 	}
 	if !r.c.Has(fmOpen) && r.Is(group.Fluid) {
 		r.warn(fmOpen, "assumed", "The other side of the plate is taken to face open fluid.")
 	}
-	p.shell = p.layer(rho)
-	inertia := 2 * math.Pi * r.likelyFrequency(p.suspended(r)) * p.gap * p.gap / r.X(scale.KinematicViscosity)
-	p.isFilm = isFilm(p.gap, math.Min(p.a, p.b), inertia, !r.Is(group.Liquid))
-	p.gas = p.isFilm && r.Is(group.Fluid) && !r.Is(group.Liquid)
-	added, how := p.back+p.shell, "the layer in the gap, and half of that in open fluid on an open back"
+	p.settle(r, p.suspended(r))
+	added, how := p.open+p.shell, "the layer in the gap, and half of that in open fluid on an open back"
 	if p.gas {
-		added, how = p.back+p.trapped(rho), "a third of the gas in the film, and half of that in open fluid on an open back"
+		added, how = p.open+p.trapped(rho), "a third of the gas in the film, and half of that in open fluid on an open back"
 	}
 	if r.Is(group.Fluid) {
 		r.trait(group.Confined)
-		if p.isFilm {
-			r.trait(group.Film)
-		}
 	}
 	r.derive(scale.AddedMassFree, whole, units.Mass, "a rigid plate in open fluid")
 	r.derive(scale.AddedMass, added, units.Mass, how)
-	for _, id := range []scale.ID{scale.AddedMass, scale.AddedMassFree} {
-		r.Need(id, r.Needs(scale.Density))
-		r.Value(id).Kind = units.Mass
-	}
+	r.addedNeeds(units.Mass)
 	r.derive(scale.ViscousLength, p.gap, units.Length, "the gap")
-	if d := r.X(scale.Depth); atMost(d, 10*r.X(scale.Length)) && r.Is(group.Fluid) {
-		r.trait(group.NearSurface)
-	}
+	r.nearSurface(r.X(scale.Length))
 	r.closeGroups()
 }
 
@@ -465,31 +491,6 @@ func heavingPlate(a, b float64) float64 {
 	return math.Pi / 4 * b * b * a * k
 }
 
-// viscous is Γ of back and gap together, each with its share of the added mass.
-func (p *film) viscous(f, nu float64) (gr, gi float64, err error) {
-	br, bi, err := ribbon(2 * math.Pi * f * math.Pow(math.Min(p.a, p.b)/2, 2) / nu)
-	if err != nil || p.gas {
-		return br, bi, err
-	}
-	lr, li := betweenWalls(p.gap, f, nu)
-	share := p.shell / (p.shell + p.back)
-	return br + share*(lr-br), bi + share*(li-bi), nil
-}
-
-func (p *film) gamma(r *Resolver) func(f float64) float64 {
-	nu := r.X(scale.KinematicViscosity)
-	if math.IsNaN(nu) || !r.Is(group.Fluid) {
-		return nil
-	}
-	return func(f float64) float64 {
-		gr, _, err := p.viscous(f, nu)
-		if err != nil || math.IsNaN(gr) {
-			return 1
-		}
-		return gr
-	}
-}
-
 // Groups puts the groups of a film.
 func (p *film) Groups(s *scale.Set, g *group.Set) {
 	g.Factors = group.Factors{Inertia: 1.5, Viscous: 1.3, Acoustic: 2, Flow: 2, Buckling: 2, Flutter: 2}
@@ -497,27 +498,14 @@ func (p *film) Groups(s *scale.Set, g *group.Set) {
 		return
 	}
 	g.Traits |= group.ViscousSolved
-	nu, wet := s.X(scale.KinematicViscosity), s.X(scale.FrequencyWet)
-	if gr, gi, err := p.viscous(wet, nu); err == nil && !math.IsNaN(gr) {
-		g.Put(group.ViscousInertia, gr)
-		g.Put(group.ViscousDamping, gi)
-	} else {
-		waitFor(s, g, []scale.ID{scale.FrequencyWet, scale.KinematicViscosity}, group.ViscousInertia, group.ViscousDamping)
-	}
+	viscousGroups(s, g, p.viscous)
 	sprungDamping(s, g)
 	p.sound(s, g)
 	if g.Is(group.NearSurface) {
-		surfaceImage(g, math.Min(p.a, p.b)/2, s.X(scale.Depth))
+		// the image of the dipole of a disc, (a/d)³/6π
+		image(g, math.Pow(p.side/2/s.X(scale.Depth), 3)/(6*math.Pi))
 	}
-	if g.Is(group.Liquid) {
-		p.suction(s, g, p.shell, s.X(scale.Length))
-	}
-	switch {
-	case p.gas:
-		p.groups(s, g)
-	case p.isFilm: // a liquid has no spring
-		g.Put(group.FluidStiffness, 0)
-	}
+	p.groups(s, g, s.X(scale.Length))
 	quality(s, g)
 }
 
@@ -526,21 +514,14 @@ func (p *film) Groups(s *scale.Set, g *group.Set) {
 // that of an incompressible fluid, where the gap resonates.
 func (p *film) sound(s *scale.Set, g *group.Set) {
 	q := math.Pi * s.X(scale.FrequencyWet) * math.Min(p.a, p.b) / s.X(scale.SoundSpeed)
-	if math.IsNaN(q) {
-		waitFor(s, g, []scale.ID{scale.FrequencyWet, scale.SoundSpeed}, group.AcousticInertia, group.AcousticDamping)
-		return
-	}
-	gr, gi, err := canon.SoundSphere(dipoleOfDisc * q)
-	if err != nil {
-		return
-	}
-	if !p.gas {
-		share := p.shell / (p.shell + p.back)
-		gr += share * (layerSound(q) - gr)
-		gi *= 1 - share
-	}
-	g.Put(group.AcousticInertia, gr)
-	g.Put(group.AcousticDamping, gi)
+	soundGroups(s, g, q, func(q float64) (gr, gi float64, err error) {
+		gr, gi, err = canon.SoundSphere(dipoleOfDisc * q)
+		if p.gas {
+			return gr, gi, err
+		}
+		share := p.shell / (p.shell + p.open)
+		return gr + share*(layerSound(q)-gr), gi * (1 - share), err
+	})
 }
 
 func layerSound(q float64) float64 {
@@ -553,13 +534,4 @@ func layerSound(q float64) float64 {
 		return most
 	}
 	return 3 * x / (q * q)
-}
-
-// surfaceImage puts the factor of a surface at depth d on the added mass of a
-// plate of half width a that moves across the surface, by the image of its dipole:
-// that of a disc, (a/d)³/6π.
-func surfaceImage(g *group.Set, a, depth float64) {
-	x := math.Pow(a/depth, 3) / (6 * math.Pi)
-	g.Put(group.SurfaceInertiaLid, 1+x)
-	g.Put(group.SurfaceInertiaFree, math.Max(1-x, 0))
 }

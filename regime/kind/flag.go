@@ -136,22 +136,13 @@ func (f *flapper) masses(r *Resolver) {
 		}
 	}
 	rho := r.X(scale.Density)
-	r.derive(scale.DisplacedMass, rho*f.h, units.MassPerArea, "ρh")
-	if math.IsNaN(f.h) {
-		r.Need(scale.DisplacedMass, flThickness.Path())
-	} else {
-		r.Need(scale.DisplacedMass, r.Needs(scale.Density))
-	}
-	r.Value(scale.DisplacedMass).Kind = units.MassPerArea
+	r.displace(rho*f.h, units.MassPerArea, "ρh", f.h, flThickness)
 	k := f.wave(1)
 	r.derive(scale.WaveNumber, k, units.Dimensionless, "1.8751/L of the first mode")
 	added := rho * sheetMass(k, f.width)
 	r.derive(scale.AddedMassFree, added, units.MassPerArea, "2ρ/k, less what escapes round the sides")
 	r.derive(scale.AddedMass, added, units.MassPerArea, "2ρ/k, less what escapes round the sides")
-	for _, id := range []scale.ID{scale.AddedMass, scale.AddedMassFree} {
-		r.Need(id, r.Needs(scale.Density))
-		r.Value(id).Kind = units.MassPerArea
-	}
+	r.addedNeeds(units.MassPerArea)
 	viscous := 1 / k
 	if atMost(f.width, f.l) {
 		viscous = f.width / 2
@@ -192,21 +183,7 @@ func (f *flapper) frequencies(r *Resolver) {
 	}
 	k := f.wave(1)
 	derived := k * k / (2 * math.Pi) * math.Sqrt(r.X(scale.Bending)/r.X(scale.DryMass))
-	r.frequencies(derived, "1.8751²/(2πL²) √(B/m″)", f.gamma(r))
-}
-
-func (f *flapper) gamma(r *Resolver) func(float64) float64 {
-	nu := r.X(scale.KinematicViscosity)
-	if math.IsNaN(nu) {
-		return nil
-	}
-	return func(freq float64) float64 {
-		gr, _, err := f.viscous(freq, nu)
-		if err != nil {
-			return 1
-		}
-		return gr
-	}
+	r.frequencies(derived, "1.8751²/(2πL²) √(B/m″)", r.gamma(f.viscous))
 }
 
 // viscous is Γ of the viscous solution: the ribbon for a flag no wider than
@@ -377,11 +354,7 @@ func (f *flapper) deform(r *Resolver) {
 	if f.factors.MaxSlope == 0 {
 		f.factors, _ = canon.BeamModeFactors(canon.ClampedFree, 1)
 	}
-	if !math.IsNaN(f.h) {
-		r.derive(scale.CurvatureLength, f.l*f.l/(f.factors.MaxCurvature*f.h/2), units.Length, "ξ over the strain w″ h/2 of the mode")
-	}
-	r.Need(scale.CurvatureLength, flThickness.Path())
-	r.Value(scale.CurvatureLength).Kind = units.Length
+	r.strains(f.l, f.factors.MaxCurvature, f.h, flThickness)
 }
 
 // Groups puts the groups that are the flag's own.
@@ -402,19 +375,8 @@ func (f *flapper) Groups(s *scale.Set, g *group.Set) {
 }
 
 func (f *flapper) deformation(s *scale.Set, g *group.Set) {
-	put := func(id group.ID, over float64) {
-		x := s.X(scale.Amplitude)
-		switch {
-		case math.IsNaN(over):
-			waitFor(s, g, []scale.ID{scale.Thickness}, id)
-		case math.IsNaN(x):
-			g.Miss(id, group.Need{Input: s.Needs(scale.Amplitude), Unit: "m", Coefficient: over, Power: 1})
-		default:
-			g.Put(id, x/over)
-		}
-	}
-	put(group.DisplacementThickness, f.h)
-	put(group.Slope, f.l/f.factors.MaxSlope)
+	amplitudeOver(s, g, group.DisplacementThickness, f.h)
+	amplitudeOver(s, g, group.Slope, f.l/f.factors.MaxSlope)
 	g.Drop(group.DisplacementSpan)
 	g.Put(group.Slenderness, f.width/f.l)
 	if !f.strip {
@@ -428,52 +390,21 @@ func (f *flapper) deformation(s *scale.Set, g *group.Set) {
 // still puts the factors of oscillation in fluid at rest. Sound is that of a
 // dipole of the smaller of width and length.
 func (f *flapper) still(s *scale.Set, g *group.Set) {
-	fw, nu, c := s.X(scale.FrequencyWet), s.X(scale.KinematicViscosity), s.X(scale.SoundSpeed)
-	if gr, gi, err := f.viscous(fw, nu); err == nil && !math.IsNaN(gr) {
-		g.Put(group.ViscousInertia, gr)
-		g.Put(group.ViscousDamping, gi)
-	} else {
-		waitFor(s, g, []scale.ID{scale.FrequencyWet, scale.KinematicViscosity}, group.ViscousInertia, group.ViscousDamping)
-	}
-	if ka := math.Pi * fw / c * math.Min(f.width, f.l); !math.IsNaN(ka) {
-		if gr, gi, err := canon.SoundCylinder(ka); err == nil {
-			g.Put(group.AcousticInertia, gr)
-			g.Put(group.AcousticDamping, gi)
-		}
-	} else {
-		waitFor(s, g, []scale.ID{scale.FrequencyWet, scale.SoundSpeed}, group.AcousticInertia, group.AcousticDamping)
-	}
+	fw, c := s.X(scale.FrequencyWet), s.X(scale.SoundSpeed)
+	viscousGroups(s, g, f.viscous)
+	soundGroups(s, g, math.Pi*fw/c*math.Min(f.width, f.l), canon.SoundCylinder)
 	if step := 2 * s.X(scale.Density) * c / (20 * fw * s.X(scale.DryMass)); !math.IsNaN(step) {
 		g.Put(group.AcousticStep, step)
 	}
-	f.pressures(g)
-	if g.Is(group.Liquid) {
-		g.Drop(group.Knudsen)
-	} else {
-		putOrWait(s, g, group.Knudsen, meanFreePath(s)/math.Min(f.width, f.l), scale.HeatCapacityRatio, scale.KinematicViscosity, scale.SoundSpeed)
-	}
-}
-
-// pressures puts the pressure of the oscillation, ρω²ξ/k under a bent sheet.
-func (f *flapper) pressures(g *group.Set) {
-	over := f.wave(1) * f.l
-	switch g.State(group.OscillationPressure) {
-	case group.Known:
-		g.Put(group.OscillationPressure, g.Get(group.OscillationPressure)/over)
-	case group.Missing:
-		n := g.Need(group.OscillationPressure)
-		n.Coefficient *= math.Pow(over, 1/n.Power)
-		if !math.IsNaN(n.Coefficient) && !math.IsInf(n.Coefficient, 0) {
-			g.Miss(group.OscillationPressure, n)
-		}
-	}
+	wavePressure(g, f.wave(1)*f.l)
+	rarefaction(s, g, math.Min(f.width, f.l))
 }
 
 // flowGroups puts what the flow along the flag makes. A flag that is flat has
 // no load; its stiffness in the flow falls as (U/U_c)².
 func (f *flapper) flowGroups(s *scale.Set, g *group.Set) {
 	g.Put(group.SuctionPeak, 0.1) // a thin sheet along the flow: the ripple of a bent one
-	f.layer(s, g)
+	waveLayer(g, f.l, f.wave(1))
 	f.bodyGroups(s, g)
 	g.Put(group.AspectRatio, f.width/f.l)
 	if f.strip {
@@ -496,17 +427,6 @@ func (f *flapper) flowGroups(s *scale.Set, g *group.Set) {
 	ratio := s.X(scale.Speed) / f.onset
 	g.Put(group.FlowStiffness, math.Min(ratio*ratio, 1e300))
 	putOrWait(s, g, group.PseudoStatic, 2*2*math.Pi*s.X(scale.FrequencyWet)/(s.X(scale.Speed)*f.wave(1)), scale.FrequencyWet, scale.FrequencyDry, scale.Speed)
-}
-
-// layer puts the displacement thickness of the boundary layer at the trailing
-// edge times the wave number: the length that shapes the flow is the wave's.
-func (f *flapper) layer(s *scale.Set, g *group.Set) {
-	re := g.Get(group.LengthReynolds)
-	if math.IsNaN(re) {
-		g.Miss(group.BoundaryLayer, g.Need(group.LengthReynolds))
-		return
-	}
-	g.Put(group.BoundaryLayer, displacementThickness(re)*f.l*f.wave(1))
 }
 
 // bodyGroups puts the wake of the leading body against the wet modes.

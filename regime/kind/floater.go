@@ -303,10 +303,7 @@ func (b *floater) masses(r *Resolver) {
 	}
 	r.derive(scale.AddedMass, b.heave*rho*b.volume, units.Mass, how)
 	r.derive(scale.AddedMassFree, b.heave*rho*b.volume, units.Mass, how)
-	for _, id := range []scale.ID{scale.AddedMass, scale.AddedMassFree} {
-		r.Need(id, r.Needs(scale.Density))
-		r.Value(id).Kind = units.Mass
-	}
+	r.addedNeeds(units.Mass)
 }
 
 // frequencies resolves the frequency of heave, or of the structure that holds a

@@ -68,7 +68,7 @@ func newGeneric(r *Resolver) Physics {
 	r.closeGroups()
 	r.damping()
 	b.masses(r)
-	r.frequencies(math.NaN(), "", b.gamma(r))
+	r.frequencies(math.NaN(), "", r.gamma(b.viscous))
 	r.interestOf()
 	b.aero(r)
 	return b
@@ -96,9 +96,7 @@ func (b *generic) body(r *Resolver) {
 	if !r.c.Has(genShape) {
 		r.warn(genShape, "assumed", "The body is taken as bluff.")
 	}
-	if d := r.X(scale.Depth); atMost(d, 10*b.l) && r.Is(group.Fluid) {
-		r.trait(group.NearSurface)
-	}
+	r.nearSurface(b.l)
 	gap := r.X(scale.WallGap)
 	if shell := r.X(scale.ShellDiameter); !math.IsNaN(shell) {
 		if shell <= b.l {
@@ -182,20 +180,6 @@ func (b *generic) confinement(r *Resolver) (float64, string) {
 		return (shell*shell + 1) / (shell*shell - 1), ", in a shell as a circular cylinder"
 	}
 	return 1, ""
-}
-
-func (b *generic) gamma(r *Resolver) func(f float64) float64 {
-	nu := r.X(scale.KinematicViscosity)
-	if math.IsNaN(nu) {
-		return nil
-	}
-	return func(f float64) float64 {
-		gr, _, err := b.viscous(2 * math.Pi * f * b.l * b.l / 4 / nu)
-		if err != nil {
-			return 1
-		}
-		return gr
-	}
 }
 
 // viscous is Γ by shape: exact for a sphere, a cousin for the others.
@@ -334,39 +318,18 @@ func (b *generic) motion(s *scale.Set, g *group.Set) {
 }
 
 func (b *generic) still(s *scale.Set, g *group.Set) {
-	fw, nu, c := s.X(scale.FrequencyWet), s.X(scale.KinematicViscosity), s.X(scale.SoundSpeed)
-	if gr, gi, err := b.viscous(2 * math.Pi * fw * b.l * b.l / 4 / nu); err == nil && !math.IsNaN(gr) {
-		g.Put(group.ViscousInertia, gr)
-		g.Put(group.ViscousDamping, gi)
-	} else {
-		waitFor(s, g, []scale.ID{scale.FrequencyWet, scale.KinematicViscosity}, group.ViscousInertia, group.ViscousDamping)
-	}
-	ka := math.Pi * fw * b.l / c
+	fw, c := s.X(scale.FrequencyWet), s.X(scale.SoundSpeed)
+	viscousGroups(s, g, b.viscous)
 	solve := canon.SoundCylinder
 	if b.shape == "sphere" {
 		solve = canon.SoundSphere
 	}
-	if gr, gi, err := solve(ka); err == nil && !math.IsNaN(gr) {
-		g.Put(group.AcousticInertia, gr)
-		g.Put(group.AcousticDamping, gi)
-	} else {
-		waitFor(s, g, []scale.ID{scale.FrequencyWet, scale.SoundSpeed}, group.AcousticInertia, group.AcousticDamping)
-	}
+	soundGroups(s, g, math.Pi*fw*b.l/c, solve)
 	if g.Is(group.NearSurface) {
 		// dipole and image: exact for a sphere to the third power of a/d
-		x := math.Pow(b.l/2/s.X(scale.Depth), 3) * 3 / 8
-		g.Put(group.SurfaceInertiaLid, 1+x)
-		g.Put(group.SurfaceInertiaFree, math.Max(1-x, 0))
+		image(g, math.Pow(b.l/2/s.X(scale.Depth), 3)*3/8)
 	}
-	if g.Is(group.Liquid) {
-		g.Drop(group.Knudsen)
-	} else {
-		length := b.l
-		if s.Has(scale.Gap) {
-			length = math.Min(length, s.X(scale.Gap))
-		}
-		putOrWait(s, g, group.Knudsen, meanFreePath(s)/length, scale.HeatCapacityRatio, scale.KinematicViscosity, scale.SoundSpeed)
-	}
+	rarefaction(s, g, b.l)
 }
 
 func (b *generic) flowGroups(s *scale.Set, g *group.Set) {

@@ -40,34 +40,23 @@ type microbeam struct {
 	factors  canon.BeamFactors
 	lambda   float64 // β_n L
 	near     bool    // a wall or another prong nearer than a width
-	isFilm   bool
-	gas      bool    // a film of gas, which is compressed
 	fork     bool    // two prongs that move against each other
-	open     float64 // added mass per length of the side that faces open fluid
-	shell    float64 // of the gap, without friction
 	released float64 // dry frequency by geometry
 }
 
 func newMicrobeam(r *Resolver) Physics {
-	p := &microbeam{b: r.c.X(mbWidth), l: r.c.X(mbLength), mode: 1}
+	p := &microbeam{squeeze: squeeze{side: r.c.X(mbWidth)}, b: r.c.X(mbWidth), l: r.c.X(mbLength), mode: 1}
 	p.shape(r)
 	r.closeGroups()
 	r.damping()
 	r.material()
 	p.masses(r)
 	p.loads(r)
-	spring, most := func(float64) float64 { return 0 }, 0.0
-	if p.gas {
-		spring, most = p.springOver(r)
-	}
-	r.sprung(p.released, fmt.Sprintf("λ²/(2πℓ²) √(EI/m), λ = %.5g", p.lambda), p.gamma(r), spring, most,
+	spring, most := p.springOver(r)
+	r.sprung(p.released, fmt.Sprintf("λ²/(2πℓ²) √(EI/m), λ = %.5g", p.lambda), r.gamma(p.viscous), spring, most,
 		scale.DryMass, scale.AddedMass, scale.Density, scale.Viscosity, scale.SoundSpeed, scale.HeatCapacityRatio)
 	r.interestOf()
-	if p.factors.MaxCurvature > 0 && !math.IsNaN(p.h) {
-		r.derive(scale.CurvatureLength, p.l*p.l/(p.factors.MaxCurvature*p.h/2), units.Length, "ξ over the strain w″ h/2 of the mode")
-	}
-	r.Need(scale.CurvatureLength, mbThickness.Path())
-	r.Value(scale.CurvatureLength).Kind = units.Length
+	r.strains(p.l, p.factors.MaxCurvature, p.h, mbThickness)
 	return p
 }
 
@@ -139,12 +128,7 @@ func (p *microbeam) masses(r *Resolver) {
 			r.Need(scale.DryMass, SolidDensity.Path())
 		}
 	}
-	r.derive(scale.DisplacedMass, r.X(scale.Density)*p.b*p.h, units.MassPerLength, "ρ b h")
-	r.Value(scale.DisplacedMass).Kind = units.MassPerLength
-	r.Need(scale.DisplacedMass, mbThickness.Path())
-	if !math.IsNaN(p.h) {
-		r.Need(scale.DisplacedMass, r.Needs(scale.Density))
-	}
+	r.displace(r.X(scale.Density)*p.b*p.h, units.MassPerLength, "ρ b h", p.h, mbThickness)
 	r.derive(scale.Bending, r.X(scale.Young)*p.b*p.h*p.h*p.h/12, units.BendingStiffnessBeam, "E b h³/12")
 	p.released = p.lambda * p.lambda / (2 * math.Pi * p.l * p.l) * math.Sqrt(r.X(scale.Bending)/r.X(scale.DryMass))
 }
@@ -158,14 +142,8 @@ func (p *microbeam) loads(r *Resolver) {
 	p.open = free
 	added, how := free, "ρπb²/4 of a strip"
 	if p.near {
-		p.shell = p.layer(rho)
-		inertia := 2 * math.Pi * r.likelyFrequency(p.released) * p.gap * p.gap / r.X(scale.KinematicViscosity)
-		p.isFilm = isFilm(p.gap, p.b, inertia, !r.Is(group.Liquid))
-		p.gas = p.isFilm && !r.Is(group.Liquid)
+		p.settle(r, p.released)
 		p.open = free / 2
-		if p.isFilm {
-			r.trait(group.Film)
-		}
 		switch {
 		case p.gas:
 			added, how = free/2+p.trapped(rho), "half of a strip in open fluid, and a third of the gas in the film"
@@ -177,40 +155,9 @@ func (p *microbeam) loads(r *Resolver) {
 		}
 	}
 	r.derive(scale.AddedMass, added, units.MassPerLength, how)
-	for _, id := range []scale.ID{scale.AddedMass, scale.AddedMassFree} {
-		r.Need(id, r.Needs(scale.Density))
-		r.Value(id).Kind = units.MassPerLength
-	}
-	if d := r.X(scale.Depth); atMost(d, 10*p.b) && r.Is(group.Fluid) {
-		r.trait(group.NearSurface)
-	}
+	r.addedNeeds(units.MassPerLength)
+	r.nearSurface(p.b)
 	r.closeGroups()
-}
-
-// viscous is Γ of the strip, and near a wall of strip and layer together, each
-// with its share of the added mass.
-func (p *microbeam) viscous(f, nu float64) (gr, gi float64, err error) {
-	gr, gi, err = ribbon(2 * math.Pi * f * p.b * p.b / 4 / nu)
-	if err != nil || !p.near || p.gas {
-		return gr, gi, err
-	}
-	lr, li := betweenWalls(p.gap, f, nu)
-	share := p.shell / (p.shell + p.open)
-	return gr + share*(lr-gr), gi + share*(li-gi), nil
-}
-
-func (p *microbeam) gamma(r *Resolver) func(f float64) float64 {
-	nu := r.X(scale.KinematicViscosity)
-	if math.IsNaN(nu) || !r.Is(group.Fluid) {
-		return nil
-	}
-	return func(f float64) float64 {
-		gr, _, err := p.viscous(f, nu)
-		if err != nil || math.IsNaN(gr) {
-			return 1
-		}
-		return gr
-	}
 }
 
 // Groups puts the groups of a microbeam.
@@ -227,19 +174,12 @@ func (p *microbeam) Groups(s *scale.Set, g *group.Set) {
 		return
 	}
 	g.Traits |= group.ViscousSolved | group.Uniform
-	f, nu := s.X(scale.FrequencyWet), s.X(scale.KinematicViscosity)
-	if gr, gi, err := p.viscous(f, nu); err == nil && !math.IsNaN(gr) {
-		g.Put(group.ViscousInertia, gr)
-		g.Put(group.ViscousDamping, gi)
-	} else {
-		waitFor(s, g, []scale.ID{scale.FrequencyWet, scale.KinematicViscosity}, group.ViscousInertia, group.ViscousDamping)
-	}
+	viscousGroups(s, g, p.viscous)
 	sprungDamping(s, g)
 	p.sound(s, g)
 	if g.Is(group.NearSurface) {
 		ratio := p.b / s.X(scale.Depth)
-		g.Put(group.SurfaceInertiaLid, 1+ratio*ratio/32)
-		g.Put(group.SurfaceInertiaFree, math.Max(1-ratio*ratio/32, 0))
+		image(g, ratio*ratio/32)
 	}
 	if !g.Is(group.Liquid) && !s.Has(scale.Gap) {
 		putOrWait(s, g, group.Knudsen, meanFreePath(s)/p.b, scale.HeatCapacityRatio, scale.KinematicViscosity, scale.SoundSpeed)
@@ -247,15 +187,7 @@ func (p *microbeam) Groups(s *scale.Set, g *group.Set) {
 	if s.Has(scale.Gap) {
 		p.closingStroke(g)
 	}
-	if g.Is(group.Liquid) && p.near {
-		p.suction(s, g, p.shell, p.b)
-	}
-	switch {
-	case p.gas:
-		p.groups(s, g)
-	case p.isFilm: // a liquid has no spring
-		g.Put(group.FluidStiffness, 0)
-	}
+	p.groups(s, g, p.b)
 	quality(s, g)
 }
 
@@ -271,19 +203,8 @@ func clampedStiffening() float64 {
 
 // bend puts the groups of the bent shape.
 func (p *microbeam) bend(s *scale.Set, g *group.Set) {
-	put := func(id group.ID, over float64) {
-		x := s.X(scale.Amplitude)
-		switch {
-		case math.IsNaN(over):
-			waitFor(s, g, []scale.ID{scale.Thickness}, id)
-		case math.IsNaN(x):
-			g.Miss(id, group.Need{Input: s.Needs(scale.Amplitude), Unit: "m", Coefficient: over, Power: 1})
-		default:
-			g.Put(id, x/over)
-		}
-	}
-	put(group.DisplacementThickness, p.h/math.Sqrt(12)) // over the radius of gyration
-	put(group.Slope, p.l/p.factors.MaxSlope)
+	amplitudeOver(s, g, group.DisplacementThickness, p.h/math.Sqrt(12)) // over the radius of gyration
+	amplitudeOver(s, g, group.Slope, p.l/p.factors.MaxSlope)
 }
 
 // thinStrip is thickness over width up to which a beam is a thin strip: sides of
@@ -295,15 +216,11 @@ const thinStrip = 0.2
 // is left, the mean of 2 sin²(½k₀s cos φ) cos²φ over that of cos²φ.
 func (p *microbeam) sound(s *scale.Set, g *group.Set) {
 	x := math.Pi * s.X(scale.FrequencyWet) * p.b / s.X(scale.SoundSpeed)
-	if math.IsNaN(x) {
-		waitFor(s, g, []scale.ID{scale.FrequencyWet, scale.SoundSpeed}, group.AcousticInertia, group.AcousticDamping)
-		return
-	}
-	if gr, gi, err := canon.SoundCylinder(x); err == nil {
-		g.Put(group.AcousticInertia, gr)
+	soundGroups(s, g, x, func(x float64) (gr, gi float64, err error) {
+		gr, gi, err = canon.SoundCylinder(x)
 		if distance := (p.gap + p.h) * 2 * x / p.b; p.fork && distance > 0 && p.gap > 0 {
 			gi *= math.Min(0.375*distance*distance, 1)
 		}
-		g.Put(group.AcousticDamping, gi)
-	}
+		return gr, gi, err
+	})
 }

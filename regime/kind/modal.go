@@ -212,6 +212,145 @@ func wetFrequency(f, mu float64, gamma func(float64) float64) float64 {
 	return math.Exp(y1)
 }
 
+// oscillation is Γ of a viscous solution at a frequency in a fluid of a
+// kinematic viscosity.
+type oscillation func(f, nu float64) (gr, gi float64, err error)
+
+// gamma is Γr of a viscous solution as a function of the frequency, nil where
+// the viscosity is not known.
+func (r *Resolver) gamma(solve oscillation) func(f float64) float64 {
+	nu := r.X(scale.KinematicViscosity)
+	if math.IsNaN(nu) || !r.Is(group.Fluid) {
+		return nil
+	}
+	return func(f float64) float64 {
+		gr, _, err := solve(f, nu)
+		if err != nil || math.IsNaN(gr) {
+			return 1
+		}
+		return gr
+	}
+}
+
+// viscousGroups puts Γ of a viscous solution at the wet frequency.
+func viscousGroups(s *scale.Set, g *group.Set, solve oscillation) {
+	gr, gi, err := solve(s.X(scale.FrequencyWet), s.X(scale.KinematicViscosity))
+	if err != nil || math.IsNaN(gr) {
+		waitFor(s, g, []scale.ID{scale.FrequencyWet, scale.KinematicViscosity}, group.ViscousInertia, group.ViscousDamping)
+		return
+	}
+	g.Put(group.ViscousInertia, gr)
+	g.Put(group.ViscousDamping, gi)
+}
+
+// soundGroups puts Γ of an acoustic solution at k₀ times a length.
+func soundGroups(s *scale.Set, g *group.Set, ka float64, solve func(ka float64) (gr, gi float64, err error)) {
+	if math.IsNaN(ka) {
+		waitFor(s, g, []scale.ID{scale.FrequencyWet, scale.SoundSpeed}, group.AcousticInertia, group.AcousticDamping)
+		return
+	}
+	if gr, gi, err := solve(ka); err == nil {
+		g.Put(group.AcousticInertia, gr)
+		g.Put(group.AcousticDamping, gi)
+	}
+}
+
+// image puts the factors of a surface on the added mass, x more under a lid and
+// x less under a surface that gives way.
+func image(g *group.Set, x float64) {
+	g.Put(group.SurfaceInertiaLid, 1+x)
+	g.Put(group.SurfaceInertiaFree, math.Max(1-x, 0))
+}
+
+// rarefaction puts the Knudsen number of a gas on a length, or on a narrower gap.
+func rarefaction(s *scale.Set, g *group.Set, length float64) {
+	if g.Is(group.Liquid) {
+		g.Drop(group.Knudsen)
+		return
+	}
+	if s.Has(scale.Gap) {
+		length = math.Min(length, s.X(scale.Gap))
+	}
+	putOrWait(s, g, group.Knudsen, meanFreePath(s)/length, scale.HeatCapacityRatio, scale.KinematicViscosity, scale.SoundSpeed)
+}
+
+// amplitudeOver puts the amplitude over a length of the shape that follows from
+// the thickness.
+func amplitudeOver(s *scale.Set, g *group.Set, id group.ID, over float64) {
+	x := s.X(scale.Amplitude)
+	switch {
+	case math.IsNaN(over):
+		waitFor(s, g, []scale.ID{scale.Thickness}, id)
+	case math.IsNaN(x):
+		g.Miss(id, group.Need{Input: s.Needs(scale.Amplitude), Unit: "m", Coefficient: over, Power: 1})
+	default:
+		g.Put(id, x/over)
+	}
+}
+
+// strains puts the length over which an amplitude strains a mode of the largest
+// curvature curve/l² in a structure of thickness h.
+func (r *Resolver) strains(l, curve, h float64, thickness *input.Field) {
+	if curve > 0 && !math.IsNaN(h) {
+		r.derive(scale.CurvatureLength, l*l/(curve*h/2), units.Length, "ξ over the strain w″ h/2 of the mode")
+	}
+	r.Need(scale.CurvatureLength, thickness.Path())
+	r.Value(scale.CurvatureLength).Kind = units.Length
+}
+
+// addedNeeds says what the added masses wait for, and of which kind they are.
+func (r *Resolver) addedNeeds(k units.Kind) {
+	for _, id := range []scale.ID{scale.AddedMass, scale.AddedMassFree} {
+		r.Need(id, r.Needs(scale.Density))
+		r.Value(id).Kind = k
+	}
+}
+
+// displace resolves the displaced mass of a structure of thickness h.
+func (r *Resolver) displace(mass float64, k units.Kind, how string, h float64, thickness *input.Field) {
+	r.derive(scale.DisplacedMass, mass, k, how)
+	r.Value(scale.DisplacedMass).Kind = k
+	need := thickness.Path()
+	if !math.IsNaN(h) {
+		need = r.Needs(scale.Density)
+	}
+	r.Need(scale.DisplacedMass, need)
+}
+
+// nearSurface says whether a surface is within ten lengths.
+func (r *Resolver) nearSurface(length float64) {
+	if d := r.X(scale.Depth); atMost(d, 10*length) && r.Is(group.Fluid) {
+		r.trait(group.NearSurface)
+	}
+}
+
+// wavePressure puts the pressure of the oscillation under a bending wave,
+// ρω²ξ/k in place of ρω²ξL; over is kL.
+func wavePressure(g *group.Set, over float64) {
+	switch g.State(group.OscillationPressure) {
+	case group.Known:
+		g.Put(group.OscillationPressure, g.Get(group.OscillationPressure)/over)
+	case group.Missing:
+		n := g.Need(group.OscillationPressure)
+		n.Coefficient *= math.Pow(over, 1/n.Power)
+		if !math.IsNaN(n.Coefficient) && !math.IsInf(n.Coefficient, 0) {
+			g.Miss(group.OscillationPressure, n)
+		}
+	}
+}
+
+// waveLayer puts the displacement thickness of the boundary layer at the end of
+// a length times the wave number along the flow: the length that shapes the
+// flow is the wave's.
+func waveLayer(g *group.Set, length, wave float64) {
+	re := g.Get(group.LengthReynolds)
+	if math.IsNaN(re) {
+		g.Miss(group.BoundaryLayer, g.Need(group.LengthReynolds))
+		return
+	}
+	g.Put(group.BoundaryLayer, displacementThickness(re)*length*wave)
+}
+
 // damping puts the damping ratios that the fluid adds, and the total.
 func damping(s *scale.Set, g *group.Set) {
 	share := func(target, inertia, factor group.ID) {

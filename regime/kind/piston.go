@@ -54,7 +54,7 @@ func newPiston(r *Resolver) Physics {
 		most = p.backlash / over
 		spring = func(float64) float64 { return most }
 	}
-	r.sprung(r.suspension(piStiffness), "√(k/m)/2π", p.gamma(r), spring, most, scale.DryMass, scale.AddedMass, scale.Density, scale.SoundSpeed)
+	r.sprung(r.suspension(piStiffness), "√(k/m)/2π", r.gamma(p.viscous), spring, most, scale.DryMass, scale.AddedMass, scale.Density, scale.SoundSpeed)
 	r.interestOf()
 	return p
 }
@@ -89,9 +89,7 @@ func (p *piston) around(r *Resolver) {
 		}
 		r.warn(WallGap, "left-out", "The wall is further away than the radius and is left out.")
 	}
-	if d := r.X(scale.Depth); atMost(d, 10*p.a) && r.Is(group.Fluid) {
-		r.trait(group.NearSurface)
-	}
+	r.nearSurface(p.a)
 }
 
 // masses resolves dry, displaced and added mass.
@@ -104,19 +102,11 @@ func (p *piston) masses(r *Resolver) {
 		r.derive(scale.DryMass, r.X(scale.SolidDensity)*area*h, units.Mass, "ρ_s times area and thickness")
 		r.Need(scale.DryMass, piMass.Path())
 	}
-	r.derive(scale.DisplacedMass, rho*area*h, units.Mass, "ρ times area and thickness")
-	r.Value(scale.DisplacedMass).Kind = units.Mass
-	r.Need(scale.DisplacedMass, piThickness.Path())
-	if !math.IsNaN(h) {
-		r.Need(scale.DisplacedMass, r.Needs(scale.Density))
-	}
+	r.displace(rho*area*h, units.Mass, "ρ times area and thickness", h, piThickness)
 	load, how := p.load()
 	r.derive(scale.AddedMass, load*rho, units.Mass, how)
 	r.derive(scale.AddedMassFree, load*rho, units.Mass, how)
-	for _, id := range []scale.ID{scale.AddedMass, scale.AddedMassFree} {
-		r.Need(id, r.Needs(scale.Density))
-		r.Value(id).Kind = units.Mass
-	}
+	r.addedNeeds(units.Mass)
 	r.derive(scale.ViscousLength, p.a, units.Length, "the radius")
 	r.closeGroups()
 }
@@ -161,20 +151,6 @@ func (p *piston) viscous(f, nu float64) (gr, gi float64, err error) {
 	return ribbon(2 * math.Pi * f * p.a * p.a / 4 / nu)
 }
 
-func (p *piston) gamma(r *Resolver) func(f float64) float64 {
-	nu := r.X(scale.KinematicViscosity)
-	if math.IsNaN(nu) || !r.Is(group.Fluid) {
-		return nil
-	}
-	return func(f float64) float64 {
-		gr, _, err := p.viscous(f, nu)
-		if err != nil || math.IsNaN(gr) {
-			return 1
-		}
-		return gr
-	}
-}
-
 // Groups puts the groups of a piston.
 func (p *piston) Groups(s *scale.Set, g *group.Set) {
 	g.Factors = group.Factors{Inertia: 1.15, Viscous: 2, Acoustic: 1.15, Flow: 2, Buckling: 2, Flutter: 2}
@@ -185,13 +161,8 @@ func (p *piston) Groups(s *scale.Set, g *group.Set) {
 		return
 	}
 	g.Traits |= group.ViscousSolved
-	f, nu, c := s.X(scale.FrequencyWet), s.X(scale.KinematicViscosity), s.X(scale.SoundSpeed)
-	if gr, gi, err := p.viscous(f, nu); err == nil && !math.IsNaN(gr) {
-		g.Put(group.ViscousInertia, gr)
-		g.Put(group.ViscousDamping, gi)
-	} else {
-		waitFor(s, g, []scale.ID{scale.FrequencyWet, scale.KinematicViscosity}, group.ViscousInertia, group.ViscousDamping)
-	}
+	f, c := s.X(scale.FrequencyWet), s.X(scale.SoundSpeed)
+	viscousGroups(s, g, p.viscous)
 	sprungDamping(s, g)
 	if x := 2 * math.Pi * f * p.a / c; !math.IsNaN(x) {
 		p.sound(x, g)
@@ -253,8 +224,7 @@ func (p *piston) surface(s *scale.Set, g *group.Set) {
 	default:
 		x = ratio * ratio * ratio / (6 * math.Pi)
 	}
-	g.Put(group.SurfaceInertiaLid, 1+x)
-	g.Put(group.SurfaceInertiaFree, math.Max(1-x, 0))
+	image(g, x)
 }
 
 // enclosure puts the stiffness and the first resonance of what is sealed in,

@@ -278,6 +278,21 @@ func (p *plate) discMode(nu float64) {
 		p.slope = math.Max(p.slope, math.Abs(after-before)/(2*step)/peak)
 		p.curve = math.Max(p.curve, math.Abs(after-2*here+before)/(step*step)/peak)
 	}
+	if p.n > 1 { // nodal diameters: as much up as down
+		return
+	}
+	var volume, square float64 // ∫W r dr, ∫W² r dr, by Simpson's rule
+	for i := 0; i <= points; i++ {
+		r := float64(i) * step
+		weight := step / 3 * float64(2+2*(i%2))
+		if i == 0 || i == points {
+			weight = step / 3
+		}
+		w := shape.at(r)
+		volume += weight * w * r
+		square += weight * w * w * r
+	}
+	p.meanW, p.meanW2 = 2*volume/peak, 2*square/(peak*peak)
 }
 
 // discShape is J_s(λr) + C I_s(λr), r from 0 to 1.
@@ -306,18 +321,12 @@ func modifiedBessel(n int, x float64) float64 {
 }
 
 // volumeShare is (mean W)²/(mean W²), the share of the mode that changes the
-// volume of a cavity. For a disc it follows from the radiation at low
-// frequency, r̂ = (k₀a)² (mean W)²/(2 mean W²).
+// volume of a cavity.
 func (p *plate) volumeShare() float64 {
-	if !p.circular {
-		return p.meanW * p.meanW / p.meanW2
-	}
-	const k0a = 1e-3
-	_, r, err := canon.BaffledCircularPlateMode(p.disc, p.m-1, p.n-1, 0.3, k0a)
-	if err != nil || p.n > 1 {
+	if p.meanW == 0 {
 		return 0
 	}
-	return 2 * r / (k0a * k0a)
+	return p.meanW * p.meanW / p.meanW2
 }
 
 // masses resolves dry, displaced and added mass per area.
@@ -367,13 +376,8 @@ func (p *plate) addedMass(r *Resolver, rho float64) {
 	free := p.mass * rho * p.a
 	r.derive(scale.AddedMassFree, free, units.MassPerArea, how)
 	p.wall(r, rho, free, how)
-	for _, id := range []scale.ID{scale.AddedMass, scale.AddedMassFree} {
-		r.Need(id, r.Needs(scale.Density))
-		r.Value(id).Kind = units.MassPerArea
-	}
-	if d := r.X(scale.Depth); atMost(d, 10*p.a) && r.Is(group.Fluid) {
-		r.trait(group.NearSurface)
-	}
+	r.addedNeeds(units.MassPerArea)
+	r.nearSurface(p.a)
 	viscous := p.b / 2
 	if !p.strip {
 		viscous = 1 / p.kb
@@ -401,8 +405,9 @@ func (p *plate) wall(r *Resolver, rho, free float64, how string) {
 	r.trait(group.Confined)
 	p.gap = gap
 	other := free * (p.sides - 1) / p.sides
-	inertia := 2 * math.Pi * p.dryFrequency(r) * gap * gap / r.X(scale.KinematicViscosity)
-	if p.film = atMost(gap/width, thinFilm) && !(inertia > filmInertia); p.film {
+	derived := p.lambda2 / (2 * math.Pi * p.a * p.a) * math.Sqrt(p.stiffness(r)/r.X(scale.DryMass))
+	inertia := 2 * math.Pi * r.likelyFrequency(derived) * gap * gap / r.X(scale.KinematicViscosity)
+	if p.film = isFilm(gap, width, inertia, true); p.film {
 		r.trait(group.Film)
 		r.derive(scale.AddedMass, other, units.MassPerArea, "the open side; a film whose friction outweighs its inertia adds a spring and a damper, no mass")
 		return
@@ -415,17 +420,6 @@ func (p *plate) wall(r *Resolver, rho, free float64, how string) {
 // inertia, ωg²/ν below 10: bounds a little beyond those of the assumption of
 // lubrication, so that it decides.
 const thinFilm, filmInertia = 0.15, 10
-
-// dryFrequency is the frequency of the motion, the dry one, or the one that
-// follows from the plate, the first that is known.
-func (p *plate) dryFrequency(r *Resolver) float64 {
-	for _, f := range []*input.Field{MotionFrequency, FrequencyDry, FrequencyWet} {
-		if r.c.Has(f) {
-			return r.c.X(f)
-		}
-	}
-	return p.lambda2 / (2 * math.Pi * p.a * p.a) * math.Sqrt(p.stiffness(r)/r.X(scale.DryMass))
-}
 
 // stiffness is the bending stiffness D of the plate.
 func (p *plate) stiffness(r *Resolver) float64 {
@@ -456,26 +450,10 @@ func (p *plate) frequencies(r *Resolver) {
 	if depth := r.c.X(BackingDepth); depth > 0 && r.Is(group.Fluid) {
 		c := r.X(scale.SoundSpeed)
 		spring := r.X(scale.Density) * c * c * p.volumeShare() / (4 * math.Pi * math.Pi * m * depth)
-		r.sprung(derived, how, p.gamma(r), func(float64) float64 { return spring }, spring, scale.DryMass, scale.AddedMass, scale.Density, scale.SoundSpeed)
+		r.sprung(derived, how, r.gamma(p.viscous), func(float64) float64 { return spring }, spring, scale.DryMass, scale.AddedMass, scale.Density, scale.SoundSpeed)
 		return
 	}
-	r.frequencies(derived, how, p.gamma(r))
-}
-
-// gamma is Γr of the viscous solution: Sader's for a strip, Stokes' layer
-// along a plate.
-func (p *plate) gamma(r *Resolver) func(f float64) float64 {
-	nu := r.X(scale.KinematicViscosity)
-	if math.IsNaN(nu) {
-		return nil
-	}
-	return func(f float64) float64 {
-		gr, _, err := p.viscous(f, nu)
-		if err != nil {
-			return 1
-		}
-		return gr
-	}
+	r.frequencies(derived, how, r.gamma(p.viscous))
 }
 
 // viscous is Γ of the viscous solution at a frequency.
@@ -530,11 +508,7 @@ func ribbon(stokes float64) (gr, gi float64, err error) {
 
 // deform puts the lengths over which an amplitude counts.
 func (p *plate) deform(r *Resolver) {
-	if p.curve > 0 && !math.IsNaN(p.h) {
-		r.derive(scale.CurvatureLength, p.a*p.a/(p.curve*p.h/2), units.Length, "ξ over the strain w″ h/2 of the mode")
-	}
-	r.Need(scale.CurvatureLength, plThickness.Path())
-	r.Value(scale.CurvatureLength).Kind = units.Length
+	r.strains(p.a, p.curve, p.h, plThickness)
 	if r.Is(group.Grazing) {
 		r.Put(scale.StaticDeflection, 0, units.Length, scale.Derived, "a flow along a flat plate has no load across it")
 	}
@@ -579,7 +553,7 @@ func (p *plate) Groups(s *scale.Set, g *group.Set) {
 	}
 	g.Traits |= group.ViscousSolved
 	p.still(s, g)
-	p.pressures(s, g)
+	wavePressure(g, p.kb*p.a)
 	p.coupling(s, g)
 	shockGroups(s, g)
 	if s.Has(scale.WallGap) {
@@ -613,19 +587,8 @@ func (p *plate) stiffening(nu float64) float64 {
 }
 
 func (p *plate) deformation(s *scale.Set, g *group.Set) {
-	missing := func(id group.ID, over float64) {
-		x := s.X(scale.Amplitude)
-		switch {
-		case math.IsNaN(over):
-			waitFor(s, g, []scale.ID{scale.Thickness}, id)
-		case math.IsNaN(x):
-			g.Miss(id, group.Need{Input: s.Needs(scale.Amplitude), Unit: "m", Coefficient: over, Power: 1})
-		default:
-			g.Put(id, x/over)
-		}
-	}
-	missing(group.DisplacementThickness, p.h)
-	missing(group.Slope, p.a/p.slope)
+	amplitudeOver(s, g, group.DisplacementThickness, p.h)
+	amplitudeOver(s, g, group.Slope, p.a/p.slope)
 	g.Drop(group.DisplacementSpan)
 	if t := p.h / p.a; !math.IsNaN(t) {
 		g.Put(group.ThicknessRatio, t)
@@ -634,18 +597,9 @@ func (p *plate) deformation(s *scale.Set, g *group.Set) {
 
 // still puts the factors of oscillation in fluid at rest.
 func (p *plate) still(s *scale.Set, g *group.Set) {
-	fw, nu, c := s.X(scale.FrequencyWet), s.X(scale.KinematicViscosity), s.X(scale.SoundSpeed)
-	if gr, gi, err := p.viscous(fw, nu); err == nil && !math.IsNaN(gr) {
-		g.Put(group.ViscousInertia, gr)
-		g.Put(group.ViscousDamping, gi)
-	} else {
-		waitFor(s, g, []scale.ID{scale.FrequencyWet, scale.KinematicViscosity}, group.ViscousInertia, group.ViscousDamping)
-	}
-	if k0 := 2 * math.Pi * fw / c; !math.IsNaN(k0) {
-		p.sound(k0, g)
-	} else {
-		waitFor(s, g, []scale.ID{scale.FrequencyWet, scale.SoundSpeed}, group.AcousticInertia, group.AcousticDamping)
-	}
+	fw, c := s.X(scale.FrequencyWet), s.X(scale.SoundSpeed)
+	viscousGroups(s, g, p.viscous)
+	p.sound(s, g, 2*math.Pi*fw/c)
 	if loading := s.X(scale.Density) * c / (s.X(scale.DryMass) * 2 * math.Pi * s.X(scale.CoincidenceFrequency)); !math.IsNaN(loading) {
 		g.Put(group.FluidLoading, loading)
 	}
@@ -666,16 +620,13 @@ func (p *plate) still(s *scale.Set, g *group.Set) {
 
 // sound puts Γ of the acoustic solution: the mode's radiation in a baffle, per
 // ideal added mass.
-func (p *plate) sound(k0 float64, g *group.Set) {
+func (p *plate) sound(s *scale.Set, g *group.Set, k0 float64) {
 	var mass, resistance float64
 	var err error
 	switch {
 	case p.strip && !p.baffled:
 		// the strip as a cylinder of its width, whose dipole radiates likewise
-		if gr, gi, e := canon.SoundCylinder(k0 * p.b / 2); e == nil {
-			g.Put(group.AcousticInertia, gr)
-			g.Put(group.AcousticDamping, gi)
-		}
+		soundGroups(s, g, k0*p.b/2, canon.SoundCylinder)
 		return
 	case p.circular:
 		mass, resistance, err = canon.BaffledCircularPlateMode(p.disc, p.m-1, p.n-1, 0.3, k0*p.a)
@@ -697,21 +648,6 @@ func (p *plate) sound(k0 float64, g *group.Set) {
 	}
 	g.Put(group.AcousticInertia, math.Max(1+share*(mass/ideal-1), 0))
 	g.Put(group.AcousticDamping, share*resistance/(k0*p.a*ideal))
-}
-
-// pressures puts the pressure of the oscillation, ρω²ξ/k_b under a bending wave.
-func (p *plate) pressures(s *scale.Set, g *group.Set) {
-	over := p.kb * p.a
-	switch g.State(group.OscillationPressure) {
-	case group.Known:
-		g.Put(group.OscillationPressure, g.Get(group.OscillationPressure)/over)
-	case group.Missing:
-		n := g.Need(group.OscillationPressure)
-		n.Coefficient *= math.Pow(over, 1/n.Power)
-		if !math.IsNaN(n.Coefficient) && !math.IsInf(n.Coefficient, 0) {
-			g.Miss(group.OscillationPressure, n)
-		}
-	}
 }
 
 // coupling bounds what the fluid couples: the next mode of the same parity, and
@@ -813,7 +749,7 @@ func known(g *group.Set, id group.ID) float64 {
 func (p *plate) grazingGroups(s *scale.Set, g *group.Set) {
 	g.Traits |= group.Streamlined
 	g.Put(group.SuctionPeak, 0.1) // a flat plate along the flow: the ripple of a bent panel
-	p.panelLayer(s, g)
+	waveLayer(g, p.a, p.alongWave())
 	putOrWait(s, g, group.ReducedFrequency, 2*math.Pi*s.X(scale.FrequencyMotion)/(s.X(scale.Speed)*p.alongWave()), scale.FrequencyMotion, scale.Speed)
 	mach := g.Get(group.Mach)
 	if math.IsNaN(mach) {
@@ -898,15 +834,4 @@ func (p *plate) supersonic(s *scale.Set, g *group.Set, mach float64) {
 	}
 	zeta := rho * s.X(scale.Speed) / root / (2 * 2 * math.Pi * s.X(scale.FrequencyWet) * (s.X(scale.DryMass) + s.X(scale.AddedMass)))
 	g.Put(group.DampingFlow, zeta)
-}
-
-// panelLayer puts the displacement thickness of the boundary layer at the
-// middle of the panel, times the wave number along the flow.
-func (p *plate) panelLayer(s *scale.Set, g *group.Set) {
-	re := g.Get(group.LengthReynolds)
-	if math.IsNaN(re) {
-		g.Miss(group.BoundaryLayer, g.Need(group.LengthReynolds))
-		return
-	}
-	g.Put(group.BoundaryLayer, displacementThickness(re)*p.a*p.alongWave())
 }

@@ -92,7 +92,7 @@ func newSection(r *Resolver) Physics {
 	r.damping()
 	c.masses(r)
 	r.bendingFrequency(secBending)
-	r.frequencies(math.NaN(), "", c.still.gamma(r))
+	r.frequencies(math.NaN(), "", r.gamma(c.still.viscous))
 	c.twist(r)
 	r.interestOf()
 	if r.Any(group.Flow) {
@@ -197,10 +197,7 @@ func (c *section) masses(r *Resolver) {
 	r.derive(scale.AddedMassFree, free, units.MassPerLength, why)
 	factor, walls := r.confine(math.Max(c.b, c.d))
 	r.derive(scale.AddedMass, free*factor, units.MassPerLength, why+walls)
-	for _, id := range []scale.ID{scale.AddedMass, scale.AddedMassFree} {
-		r.Need(id, r.Needs(scale.Density))
-		r.Value(id).Kind = units.MassPerLength
-	}
+	r.addedNeeds(units.MassPerLength)
 	c.still = strip{width: c.b, round: !r.Is(group.Elongated)}
 	r.derive(scale.ViscousLength, c.b/2, units.Length, "half the breadth")
 	circle := rho * math.Pi * c.d * c.d / 4

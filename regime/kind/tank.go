@@ -240,10 +240,7 @@ func (t *tank) masses(r *Resolver) {
 	how := "the impulsive share of the liquid, which moves with the walls"
 	r.derive(scale.AddedMass, t.rigid*t.mass, units.Mass, how)
 	r.derive(scale.AddedMassFree, t.rigid*t.mass, units.Mass, how)
-	for _, id := range []scale.ID{scale.AddedMass, scale.AddedMassFree} {
-		r.Need(id, r.Needs(scale.Density))
-		r.Value(id).Kind = units.Mass
-	}
+	r.addedNeeds(units.Mass)
 }
 
 // impulsiveTable is C_i of the bulging of an anchored upright tank of steel against

@@ -229,10 +229,7 @@ func (w *wing) masses(r *Resolver) {
 	r.derive(scale.AddedMassFree, cylinder, units.MassPerLength, "ρπb² of a strip")
 	factor, walls := r.confine(w.chord)
 	r.derive(scale.AddedMass, cylinder*factor, units.MassPerLength, "ρπb² of a strip"+walls)
-	for _, id := range []scale.ID{scale.AddedMass, scale.AddedMassFree} {
-		r.Need(id, r.Needs(scale.Density))
-		r.Value(id).Kind = units.MassPerLength
-	}
+	r.addedNeeds(units.MassPerLength)
 }
 
 // frequencies of a uniform half wing follow from its stiffness.
@@ -246,7 +243,7 @@ func (w *wing) frequencies(r *Resolver) {
 			derived, how = 3.5160/(2*math.Pi*l*l)*math.Sqrt(ei/r.X(scale.DryMass)), "3.516/(2πℓ²) √(EI/m)"
 		}
 	}
-	r.frequencies(derived, how, w.still.gamma(r))
+	r.frequencies(derived, how, r.gamma(w.still.viscous))
 }
 
 // twist reads the torsion, whose frequency follows from GJ of a half wing.
