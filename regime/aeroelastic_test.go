@@ -30,20 +30,13 @@ const (
 
 // Sections and wings: the class that an expert expects and the price that decides.
 func TestOrdinarySectionsAndWings(t *testing.T) {
-	of := func(id group.ID) func(*regime.Answer) float64 {
-		return func(a *regime.Answer) float64 { return a.Groups.Get(id) }
-	}
 	load := func(e *assumption.Entry) func(*regime.Answer) float64 {
 		return func(a *regime.Answer) float64 { return estimateOf(a, e, finding.Load) }
 	}
 	wind := func(text string, u float64, more string) string {
 		return fmt.Sprintf(`{%s,"flow":{"speed":"%g m/s"%s}}`, text, u, more)
 	}
-	rows := []struct {
-		name, text, class string
-		price             func(*regime.Answer) float64
-		want, tol         float64
-	}{
+	rows := []ordinary{
 		{"steel hydrofoil", "{" + fmt.Sprintf(hydrofoil, "2 bar") + "}", "steady-load", of(group.AddedMassRatio), 998.2 * math.Pi * 0.0025 / (0.685 * 0.001 * 7850), 0.01},
 		{"the same: cavitation number", "{" + fmt.Sprintf(hydrofoil, "2 bar") + "}", "steady-load", of(group.Cavitation), 3.95, 0.01},
 		{"Goland's wing at 60 m/s: q/(q_D − q)", wind(goland, 60, `,"incidence":"2 deg"`), "steady-load", load(assumption.RigidStructure), 0.0566 / (1 - 0.0566), 0.03},
@@ -56,20 +49,7 @@ func TestOrdinarySectionsAndWings(t *testing.T) {
 		{"square prism that gallops far from its vortices", wind(prism, 4, `,"operating":["3 m/s","4 m/s"]`), "quasi-steady", of(group.GallopingSpeed), 4 / (11.624 * 5 * 0.0254), 0.005},
 		{"square prism that its vortices lock to", wind(prism, 1.05, `,"operating":["0.9 m/s","1.05 m/s"]`), "wake-model", of(group.SheddingRatio), 0.13 * 1.05 / (5 * 0.0254), 0.01},
 	}
-	ran := 0
-	for _, r := range rows {
-		t.Run(r.name, func(t *testing.T) {
-			a := answer(t, r.text)
-			if got := a.Recommendation.Class.ID; got != r.class {
-				t.Errorf("class %s, want %s; ruled out: %s", got, r.class, fallen(a))
-			}
-			if x := r.price(a); !(math.Abs(x/r.want-1) <= r.tol) {
-				t.Errorf("deciding price %.4g, want %.4g within %.0f %%", x, r.want, 100*r.tol)
-			}
-		})
-		ran++
-	}
-	if ran != 11 {
+	if ran := runOrdinary(t, rows); ran != 11 {
 		t.Errorf("ran %d ordinary cases", ran)
 	}
 }

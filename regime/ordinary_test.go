@@ -38,24 +38,45 @@ func estimateOf(a *regime.Answer, e *assumption.Entry, m finding.Measure) float6
 	return x
 }
 
+// ordinary is a case with the class that an expert expects and the price that
+// decides.
+type ordinary struct {
+	name, text, class string
+	price             func(*regime.Answer) float64
+	want, tol         float64
+}
+
+// of is the price that is a group.
+func of(id group.ID) func(*regime.Answer) float64 {
+	return func(a *regime.Answer) float64 { return a.Groups.Get(id) }
+}
+
+func runOrdinary(t *testing.T, rows []ordinary) (ran int) {
+	for _, r := range rows {
+		t.Run(r.name, func(t *testing.T) {
+			a := answer(t, r.text)
+			if got := a.Recommendation.Class.ID; got != r.class {
+				t.Errorf("class %s, want %s; ruled out: %s", got, r.class, fallen(a))
+			}
+			if x := r.price(a); !(math.Abs(x/r.want-1) <= r.tol) {
+				t.Errorf("deciding price %.4g, want %.4g within %.0f %%", x, r.want, 100*r.tol)
+			}
+		})
+		ran++
+	}
+	return ran
+}
+
 // Ordinary cases: the class that an expert of the sub-field expects, and the
 // price that decides. The numbers are worked by hand from the formulas named.
 func TestOrdinaryCases(t *testing.T) {
 	absent := func(a *regime.Answer) float64 { return estimateOf(a, assumption.FluidAbsent, finding.Frequency) }
-	of := func(id group.ID) func(*regime.Answer) float64 {
-		return func(a *regime.Answer) float64 { return a.Groups.Get(id) }
-	}
 	const panel = `"structure":{"kind":"plate","length":"1 m","width":"1 m","thickness":"10 mm","material":"steel","edges":"SSSS","wetted_sides":1}`
 	const chimney = `"structure":{"kind":"cylinder","diameter":"2 m","length":"40 m","wall_thickness":"9.7 mm","mass_per_length":"477 kg/m","damping_ratio":"0.5 %","support":"clamped-free","frequency_dry":"0.8 Hz"},"fluid":"air"`
 	const thermowell = `"structure":{"kind":"cylinder","diameter":"25 mm","length":"%","wall_thickness":"9 mm","material":"stainless-steel","support":"clamped-free","damping_ratio":"0.05 %","strouhal":0.22},"fluid":{"density":"12 kg/m3","viscosity":"0.02 mPa s","sound_speed":"600 m/s","pressure":"30 bar","phase":"gas"}`
 	const riser = `"structure":{"kind":"cylinder","diameter":"0.3 m","length":"60 m","mass_per_length":"144.9 kg/m","damping_ratio":"0.5 %","support":"taut","tension":"200 kN","strouhal":0.2},"fluid":"seawater"`
 	const hose = `"structure":{"kind":"cylinder","diameter":"16 mm","length":"%","material":"rubber","support":"clamped-clamped"},"fluid":"water"`
-	rows := []struct {
-		name, text string
-		class      string
-		price      func(*regime.Answer) float64
-		want, tol  float64
-	}{
+	rows := []ordinary{
 		// ½·0.4095·1.204/78.5
 		{"steel panel in air", `{` + panel + `,"fluid":"air"}`, "dry-structure", absent, 0.0031, 0.05},
 		// √(1 + 0.4095·998.2/78.5) − 1
@@ -82,20 +103,7 @@ func TestOrdinaryCases(t *testing.T) {
 		{"tube with contents in still oil", `{"structure":{"kind":"cylinder","diameter":"60.3 mm","length":"4 m","wall_thickness":"3.9 mm","material":"steel","support":"clamped-clamped","contents_density":"870 kg/m3"},"fluid":{"density":"870 kg/m3","viscosity":"20 mPa s","sound_speed":"1300 m/s","vapour_pressure":"10 Pa"}}`,
 			"added-mass", absent, math.Sqrt(1+(870*2855.8e-6+870*2164.8e-6)/(7850*691e-6)) - 1, 0.05},
 	}
-	ran := 0
-	for _, r := range rows {
-		t.Run(r.name, func(t *testing.T) {
-			a := answer(t, r.text)
-			if got := a.Recommendation.Class.ID; got != r.class {
-				t.Errorf("class %s, want %s; ruled out: %s", got, r.class, fallen(a))
-			}
-			if x := r.price(a); !(math.Abs(x/r.want-1) <= r.tol) {
-				t.Errorf("deciding price %.4g, want %.4g within %.0f %%", x, r.want, 100*r.tol)
-			}
-		})
-		ran++
-	}
-	if ran != 15 {
+	if ran := runOrdinary(t, rows); ran != 15 {
 		t.Errorf("ran %d ordinary cases", ran)
 	}
 }

@@ -5,7 +5,6 @@ import (
 	"strings"
 	"testing"
 
-	"regimed/regime"
 	"regimed/regime/assumption"
 	"regimed/regime/finding"
 	"regimed/regime/group"
@@ -19,15 +18,8 @@ const benchmarkWater = `"fluid":{"density":"1000 kg/m3","kinematic_viscosity":"1
 
 // Ordinary cases of tube arrays and flags, worked by hand.
 func TestOrdinaryTubesAndFlags(t *testing.T) {
-	of := func(id group.ID) func(*regime.Answer) float64 {
-		return func(a *regime.Answer) float64 { return a.Groups.Get(id) }
-	}
 	// m = 0.708 + 0.581 kg/m; V_c = 3·50.0·0.01905·√(2π·0.015·1.289/(998.2·0.01905²)) wet; f_w 37.2 Hz
-	rows := []struct {
-		name, text, class string
-		price             func(*regime.Answer) float64
-		want, tol         float64
-	}{
+	rows := []ordinary{
 		{"heat exchanger tube below half of the critical speed", `{` + tube + `,"flow":{"gap_speed":"0.55 m/s"}}`, "quasi-static-array", of(group.FluidelasticSpeed),
 			0.55 / (3 * 37.2 * 0.01905 * math.Sqrt(2*math.Pi*0.015*1.289/(998.2*0.01905*0.01905))), 0.01},
 		{"the same: added mass between the tubes", `{` + tube + `,"flow":{"gap_speed":"0.55 m/s"}}`, "quasi-static-array", of(group.AddedMassRatio),
@@ -38,17 +30,8 @@ func TestOrdinaryTubesAndFlags(t *testing.T) {
 		{"FSI2", `{"structure":{` + turekHron + `,"density":"10000 kg/m3","young_modulus":"1.4 MPa"},` + benchmarkWater + `,"flow":{"speed":"1 m/s"}}`, "two-way-implicit", of(group.AddedMassRatio), 1.9, 0.03},
 		{"FSI3", `{"structure":{` + turekHron + `,"density":"1000 kg/m3","young_modulus":"5.6 MPa"},` + benchmarkWater + `,"flow":{"speed":"2 m/s"}}`, "two-way-implicit", of(group.AddedMassRatio), 19, 0.03},
 	}
-	for _, r := range rows {
-		a := answer(t, r.text)
-		if got := a.Recommendation.Class.ID; got != r.class {
-			t.Errorf("%s: class %s, want %s; ruled out: %s", r.name, got, r.class, fallen(a))
-		}
-		if x := r.price(a); !(math.Abs(x/r.want-1) <= r.tol) {
-			t.Errorf("%s: deciding price %.4g, want %.4g within %.0f %%", r.name, x, r.want, 100*r.tol)
-		}
-	}
-	if len(rows) != 6 {
-		t.Errorf("ran %d ordinary cases", len(rows))
+	if ran := runOrdinary(t, rows); ran != 6 {
+		t.Errorf("ran %d ordinary cases", ran)
 	}
 	a := answer(t, rows[0].text)
 	if f := a.Findings[assumption.StillFluid.Index()]; f.Verdict != finding.Invalid {

@@ -53,7 +53,7 @@ func estimateFreeSurface(x *finding.Context) {
 		return
 	}
 	mu, waves := x.Get(group.AddedMassRatio), x.Get(group.DynamicFroude)*x.Get(group.DynamicFroude)
-	lid, free := withoutSurface(mu, x.Get(group.SurfaceInertiaLid)), withoutSurface(mu, x.Get(group.SurfaceInertiaFree))
+	lid, free := inertiaError(mu, x.Get(group.SurfaceInertiaLid)), inertiaError(mu, x.Get(group.SurfaceInertiaFree))
 	switch {
 	case waves < 0.05:
 		p.Estimate, p.Say = lid, surfaceLid
@@ -63,12 +63,6 @@ func estimateFreeSurface(x *finding.Context) {
 		p.Estimate = math.Max(lid, free)
 	}
 	x.Add(p)
-}
-
-// withoutSurface is the error of the frequency, relative to the model that has
-// the surface, when the factor c on the added mass is left out.
-func withoutSurface(mu, c float64) float64 {
-	return math.Abs(math.Sqrt((1+mu*c)/(1+mu)) - 1)
 }
 
 // surfaceWaves adds what only a surface makes: waves, and the stiffness of a

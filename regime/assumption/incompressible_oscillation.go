@@ -37,12 +37,7 @@ func estimateIncompressibleOscillation(x *finding.Context) {
 	} else if !x.Is(group.StaticOnly) {
 		p := finding.Part{Measure: finding.Frequency, Basis: finding.Canonical, Factor: x.Factors.Acoustic,
 			Say: soundInertia, Source: cite.JungerFeit1986}
-		if x.Has(group.AddedMassRatio) && x.Has(group.AcousticInertia) {
-			p.Estimate = inertiaError(x.Get(group.AddedMassRatio), x.Get(group.AcousticInertia))
-			x.Add(p)
-		} else {
-			waitOn(x, p, group.AcousticInertia, group.AddedMassRatio)
-		}
+		addInertia(x, p, group.AcousticInertia)
 		if x.Is(group.Cavity) && !x.Is(group.Film) && x.Has(group.FluidStiffness) {
 			p.Say, p.Estimate = soundCavity, softened(x.Get(group.FluidStiffness))
 			x.Add(p)

@@ -43,12 +43,7 @@ func estimateInviscidOscillation(x *finding.Context) {
 	}
 	p := finding.Part{Measure: finding.Frequency, Basis: finding.Canonical, Factor: x.Factors.Viscous,
 		Say: inviscidInertia, Source: cite.Stokes1851}
-	if x.Has(group.AddedMassRatio) && x.Has(group.ViscousInertia) {
-		p.Estimate = inertiaError(x.Get(group.AddedMassRatio), x.Get(group.ViscousInertia))
-		x.Add(p)
-	} else {
-		waitOn(x, p, group.ViscousInertia, group.AddedMassRatio)
-	}
+	addInertia(x, p, group.ViscousInertia)
 	if x.Is(group.Film) && x.Has(group.FluidStiffness) {
 		p.Say, p.Estimate = inviscidFilm, softened(x.Get(group.FluidStiffness))
 		x.Add(p)

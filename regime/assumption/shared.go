@@ -58,6 +58,16 @@ func inertiaError(mu, gamma float64) float64 {
 	return math.Abs(math.Sqrt((1+mu*gamma)/(1+mu)) - 1)
 }
 
+// addInertia adds what a factor Γ on the added mass does to the wet frequency.
+func addInertia(x *finding.Context, p finding.Part, factor group.ID) {
+	if !x.Has(group.AddedMassRatio) || !x.Has(factor) {
+		waitOn(x, p, factor, group.AddedMassRatio)
+		return
+	}
+	p.Estimate = inertiaError(x.Get(group.AddedMassRatio), x.Get(factor))
+	x.Add(p)
+}
+
 // orZero is the value of a group, and 0 where it has none.
 func orZero(x *finding.Context, id group.ID) float64 {
 	if x.Has(id) {

@@ -301,7 +301,9 @@ func (r *Resolver) bendingFrequency(f *input.Field) {
 
 // nearSurface marks a body that a free surface lies within ten lengths of.
 func (r *Resolver) nearSurface(length float64) {
-	r.nearSurface(length)
+	if d := r.X(scale.Depth); atMost(d, 10*length) && r.Is(group.Fluid) {
+		r.trait(group.NearSurface)
+	}
 }
 
 // tilt puts the largest slope of the mode over the span; absent without a span.

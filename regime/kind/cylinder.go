@@ -287,7 +287,7 @@ func (c *cylinder) frequencies(r *Resolver) {
 	}
 	r.take(scale.Tension, cylTension)
 	derived, how := c.beamFrequency(r)
-	r.frequencies(derived, how, c.gamma(r))
+	r.frequencies(derived, how, r.gamma(c.around(c.outside(r.Set))))
 }
 
 // beamFrequency is the dry frequency of the mode; NaN where it does not follow.
@@ -340,18 +340,12 @@ func (c *cylinder) root(r *Resolver, name string, mass, flexibility float64) (fl
 	return canon.BeamMode(c.support, c.n, tip)
 }
 
-// gamma is Γr of the viscous solution, per ideal added mass as confined.
-func (c *cylinder) gamma(r *Resolver) func(f float64) float64 {
-	if !r.Has(scale.KinematicViscosity) {
-		return nil
-	}
-	share := c.outside(r.Set)
-	return func(f float64) float64 {
-		re, _, err := c.viscous(2 * math.Pi * f * c.d * c.d / 4 / r.X(scale.KinematicViscosity))
-		if err != nil {
-			return 1
-		}
-		return 1 + share*(re-1)
+// around is Γ of the viscous solution, per ideal added mass as confined, a share
+// of which lies outside the tube.
+func (c *cylinder) around(share float64) oscillation {
+	return func(f, nu float64) (gr, gi float64, err error) {
+		gr, gi, err = c.viscous(2 * math.Pi * f * c.d * c.d / 4 / nu)
+		return 1 + share*(gr-1), share * gi, err
 	}
 }
 
@@ -552,25 +546,14 @@ func (c *cylinder) still(s *scale.Set, g *group.Set) {
 		return
 	}
 	g.Traits |= group.ViscousSolved
-	fw, nu := s.X(scale.FrequencyWet), s.X(scale.KinematicViscosity)
+	fw := s.X(scale.FrequencyWet)
 	share := c.outside(s)
-	if stokes := 2 * math.Pi * fw * c.d * c.d / 4 / nu; !math.IsNaN(stokes) {
-		if gr, gi, err := c.viscous(stokes); err == nil {
-			g.Put(group.ViscousInertia, 1+share*(gr-1))
-			g.Put(group.ViscousDamping, share*gi)
-		}
-	} else {
-		waitFor(s, g, []scale.ID{scale.FrequencyWet, scale.KinematicViscosity}, group.ViscousInertia, group.ViscousDamping)
-	}
-	if ka := 2 * math.Pi * fw * c.d / 2 / s.X(scale.SoundSpeed); !math.IsNaN(ka) {
-		if gr, gi, err := canon.SoundCylinder(ka); err == nil {
-			g.Put(group.AcousticInertia, 1+share*(gr-1))
-			g.Put(group.AcousticDamping, share*gi)
-		}
-	} else {
-		waitFor(s, g, []scale.ID{scale.FrequencyWet, scale.SoundSpeed}, group.AcousticInertia, group.AcousticDamping)
-	}
-	if beta := s.X(scale.FrequencyMotion) * c.d * c.d / nu; !math.IsNaN(beta) {
+	viscousGroups(s, g, c.around(share))
+	soundGroups(s, g, math.Pi*fw*c.d/s.X(scale.SoundSpeed), func(ka float64) (gr, gi float64, err error) {
+		gr, gi, err = canon.SoundCylinder(ka)
+		return 1 + share*(gr-1), share * gi, err
+	})
+	if beta := s.X(scale.FrequencyMotion) * c.d * c.d / s.X(scale.KinematicViscosity); !math.IsNaN(beta) {
 		g.Put(group.Beta, beta)
 	}
 	if !math.IsNaN(c.cover) {
@@ -581,21 +564,8 @@ func (c *cylinder) still(s *scale.Set, g *group.Set) {
 			g.Put(group.SurfaceInertiaFree, free)
 		}
 	}
-	c.rarefied(s, g)
+	rarefaction(s, g, c.d)
 	g.Put(group.AcousticStep, s.X(scale.Density)*s.X(scale.SoundSpeed)*math.Pi*c.d/2/(20*fw*s.X(scale.DryMass)))
-}
-
-// rarefied puts the Knudsen number on the gap, else on the diameter.
-func (c *cylinder) rarefied(s *scale.Set, g *group.Set) {
-	if g.Is(group.Liquid) {
-		g.Drop(group.Knudsen)
-		return
-	}
-	length := c.d
-	if s.Has(scale.Gap) {
-		length = math.Min(length, s.X(scale.Gap))
-	}
-	putOrWait(s, g, group.Knudsen, meanFreePath(s)/length, scale.HeatCapacityRatio, scale.KinematicViscosity, scale.SoundSpeed)
 }
 
 // putOrWait puts a value, or waits for the first absent scale of a list.

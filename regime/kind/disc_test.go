@@ -25,3 +25,12 @@ func TestVolumeShareOfADisc(t *testing.T) {
 		t.Errorf("share %g, from the radiation %g", got, want)
 	}
 }
+
+// A round film has the squeeze number of the square of its area.
+func TestRoundFilmCountsAsASquare(t *testing.T) {
+	round := &plate{circular: true, a: 1, b: 1}
+	square := &plate{a: math.Sqrt(math.Pi), b: math.Sqrt(math.Pi)}
+	if math.Abs(round.filmArea()/square.filmArea()-1) > 1e-12 || round.filmAspect() != square.filmAspect() {
+		t.Errorf("area %g and %g", round.filmArea(), square.filmArea())
+	}
+}

@@ -320,8 +320,8 @@ var Film = &Kind{
 // film holds the solved problem of a plate over a film.
 type film struct {
 	squeeze
-	a, b   float64 // sides
-	round  bool
+	a, b  float64 // sides
+	round bool
 }
 
 func newFilm(r *Resolver) Physics {

@@ -393,9 +393,7 @@ func (f *flapper) still(s *scale.Set, g *group.Set) {
 	fw, c := s.X(scale.FrequencyWet), s.X(scale.SoundSpeed)
 	viscousGroups(s, g, f.viscous)
 	soundGroups(s, g, math.Pi*fw/c*math.Min(f.width, f.l), canon.SoundCylinder)
-	if step := 2 * s.X(scale.Density) * c / (20 * fw * s.X(scale.DryMass)); !math.IsNaN(step) {
-		g.Put(group.AcousticStep, step)
-	}
+	acousticStep(s, g, 2)
 	wavePressure(g, f.wave(1)*f.l)
 	rarefaction(s, g, math.Min(f.width, f.l))
 }

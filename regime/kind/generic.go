@@ -183,7 +183,8 @@ func (b *generic) confinement(r *Resolver) (float64, string) {
 }
 
 // viscous is Γ by shape: exact for a sphere, a cousin for the others.
-func (b *generic) viscous(s float64) (gr, gi float64, err error) {
+func (b *generic) viscous(f, nu float64) (gr, gi float64, err error) {
+	s := 2 * math.Pi * f * b.l * b.l / 4 / nu
 	switch b.shape {
 	case "sphere":
 		added, damping, err := canon.OscillatingSphere(s)

@@ -255,6 +255,14 @@ func soundGroups(s *scale.Set, g *group.Set, ka float64, solve func(ka float64) 
 	}
 }
 
+// acousticStep puts the mass that sound reaches in a twentieth of a period from
+// a wetted area, over the dry mass.
+func acousticStep(s *scale.Set, g *group.Set, area float64) {
+	if step := s.X(scale.Density) * s.X(scale.SoundSpeed) * area / (20 * s.X(scale.FrequencyWet) * s.X(scale.DryMass)); !math.IsNaN(step) {
+		g.Put(group.AcousticStep, step)
+	}
+}
+
 // image puts the factors of a surface on the added mass, x more under a lid and
 // x less under a surface that gives way.
 func image(g *group.Set, x float64) {
@@ -315,13 +323,6 @@ func (r *Resolver) displace(mass float64, k units.Kind, how string, h float64, t
 		need = r.Needs(scale.Density)
 	}
 	r.Need(scale.DisplacedMass, need)
-}
-
-// nearSurface says whether a surface is within ten lengths.
-func (r *Resolver) nearSurface(length float64) {
-	if d := r.X(scale.Depth); atMost(d, 10*length) && r.Is(group.Fluid) {
-		r.trait(group.NearSurface)
-	}
 }
 
 // wavePressure puts the pressure of the oscillation under a bending wave,

@@ -583,9 +583,7 @@ func (p *pipe) still(s *scale.Set, g *group.Set) {
 	} else {
 		g.Drop(group.Knudsen)
 	}
-	if step := s.X(scale.Density) * s.X(scale.SoundSpeed) * math.Pi * p.d / (20 * fw * s.X(scale.DryMass)); !math.IsNaN(step) {
-		g.Put(group.AcousticStep, step)
-	}
+	acousticStep(s, g, math.Pi*p.d)
 }
 
 // viscous puts Γ: the fluid inside is carried along as a body, whatever its

@@ -164,14 +164,8 @@ func (p *piston) Groups(s *scale.Set, g *group.Set) {
 	f, c := s.X(scale.FrequencyWet), s.X(scale.SoundSpeed)
 	viscousGroups(s, g, p.viscous)
 	sprungDamping(s, g)
-	if x := 2 * math.Pi * f * p.a / c; !math.IsNaN(x) {
-		p.sound(x, g)
-	} else {
-		waitFor(s, g, []scale.ID{scale.FrequencyWet, scale.SoundSpeed}, group.AcousticInertia, group.AcousticDamping)
-	}
-	if step := s.X(scale.Density) * c * p.sides * math.Pi * p.a * p.a / (20 * f * s.X(scale.DryMass)); !math.IsNaN(step) {
-		g.Put(group.AcousticStep, step)
-	}
+	soundGroups(s, g, 2*math.Pi*f*p.a/c, p.sound)
+	acousticStep(s, g, p.sides*math.Pi*p.a*p.a)
 	if g.Is(group.NearSurface) {
 		p.surface(s, g)
 	}
@@ -184,30 +178,20 @@ func (p *piston) Groups(s *scale.Set, g *group.Set) {
 	quality(s, g)
 }
 
-// sound puts Γ of sound over the inertia without it; x is k₀a.
-func (p *piston) sound(x float64, g *group.Set) {
+// sound is Γ of sound over the inertia without it; x is k₀a.
+func (p *piston) sound(x float64) (gr, gi float64, err error) {
 	if !p.baffled && !p.sealed() {
-		if gr, gi, err := canon.SoundSphere(dipoleOfDisc * x); err == nil {
-			g.Put(group.AcousticInertia, gr)
-			g.Put(group.AcousticDamping, gi)
-		}
-		return
+		return canon.SoundSphere(dipoleOfDisc * x)
 	}
 	const short, long = 1e-6, 1e10
 	x = math.Max(short, math.Min(x, long))
 	r1, x1, err := canon.BaffledPiston(x)
-	if err != nil {
-		return
-	}
-	if ideal := 8 * x / (3 * math.Pi); p.baffled {
-		g.Put(group.AcousticInertia, x1/ideal)
-		g.Put(group.AcousticDamping, r1/ideal)
-		return
+	ideal := 8 * x / (3 * math.Pi)
+	if p.baffled {
+		return x1 / ideal, r1 / ideal, err
 	}
 	// at the end of a box a long wave goes all round: half the resistance
-	ideal := openEnd * x
-	g.Put(group.AcousticInertia, x1/(8*x/(3*math.Pi)))
-	g.Put(group.AcousticDamping, r1*(1+math.Min(x*x/4, 1))/2/ideal)
+	return x1 / ideal, r1 * (1 + math.Min(x*x/4, 1)) / 2 / (openEnd * x), err
 }
 
 // surface puts the factor of a surface at depth d by the first image: of a

@@ -599,7 +599,11 @@ func (p *plate) deformation(s *scale.Set, g *group.Set) {
 func (p *plate) still(s *scale.Set, g *group.Set) {
 	fw, c := s.X(scale.FrequencyWet), s.X(scale.SoundSpeed)
 	viscousGroups(s, g, p.viscous)
-	p.sound(s, g, 2*math.Pi*fw/c)
+	share := 1.0 // only the open fluid radiates: near a wall it is a share of the added mass
+	if g.Has(group.AddedMassRatio) && g.Has(group.AddedMassRatioFree) && p.gap > 0 {
+		share = g.Get(group.AddedMassRatioFree) / math.Max(g.Get(group.AddedMassRatio), g.Get(group.AddedMassRatioFree)) * math.Max(p.sides-1, 0) / p.sides
+	}
+	soundGroups(s, g, 2*math.Pi*fw/c, func(k0 float64) (gr, gi float64, err error) { return p.sound(k0, share) })
 	if loading := s.X(scale.Density) * c / (s.X(scale.DryMass) * 2 * math.Pi * s.X(scale.CoincidenceFrequency)); !math.IsNaN(loading) {
 		g.Put(group.FluidLoading, loading)
 	}
@@ -608,9 +612,7 @@ func (p *plate) still(s *scale.Set, g *group.Set) {
 		g.Put(group.SurfaceInertiaLid, 1/t)
 		g.Put(group.SurfaceInertiaFree, t)
 	}
-	if step := s.X(scale.Density) * c * p.sides / (20 * fw * s.X(scale.DryMass)); !math.IsNaN(step) {
-		g.Put(group.AcousticStep, step)
-	}
+	acousticStep(s, g, p.sides)
 	if g.Is(group.Liquid) {
 		g.Drop(group.Knudsen)
 	} else if !s.Has(scale.Gap) {
@@ -618,16 +620,14 @@ func (p *plate) still(s *scale.Set, g *group.Set) {
 	}
 }
 
-// sound puts Γ of the acoustic solution: the mode's radiation in a baffle, per
-// ideal added mass.
-func (p *plate) sound(s *scale.Set, g *group.Set, k0 float64) {
+// sound is Γ of the acoustic solution: the mode's radiation in a baffle, per
+// ideal added mass, of which a share radiates.
+func (p *plate) sound(k0, share float64) (gr, gi float64, err error) {
 	var mass, resistance float64
-	var err error
 	switch {
 	case p.strip && !p.baffled:
 		// the strip as a cylinder of its width, whose dipole radiates likewise
-		soundGroups(s, g, k0*p.b/2, canon.SoundCylinder)
-		return
+		return canon.SoundCylinder(k0 * p.b / 2)
 	case p.circular:
 		mass, resistance, err = canon.BaffledCircularPlateMode(p.disc, p.m-1, p.n-1, 0.3, k0*p.a)
 	default:
@@ -635,19 +635,10 @@ func (p *plate) sound(s *scale.Set, g *group.Set, k0 float64) {
 	}
 	if err != nil { // beyond the range of the finite plate: the infinite one
 		mass, resistance, err = canon.FlexuralWaveLoading(k0/p.kb, p.kb*p.a)
-		if err != nil {
-			return
-		}
 		mass /= p.kb * p.a
 	}
-	// only the open fluid radiates: near a wall it is a share of the added mass
 	ideal := p.mass / p.sides
-	share := 1.0
-	if g.Has(group.AddedMassRatio) && g.Has(group.AddedMassRatioFree) && p.gap > 0 {
-		share = g.Get(group.AddedMassRatioFree) / math.Max(g.Get(group.AddedMassRatio), g.Get(group.AddedMassRatioFree)) * math.Max(p.sides-1, 0) / p.sides
-	}
-	g.Put(group.AcousticInertia, math.Max(1+share*(mass/ideal-1), 0))
-	g.Put(group.AcousticDamping, share*resistance/(k0*p.a*ideal))
+	return math.Max(1+share*(mass/ideal-1), 0), share * resistance / (k0 * p.a * ideal), err
 }
 
 // coupling bounds what the fluid couples: the next mode of the same parity, and
@@ -687,7 +678,7 @@ func (p *plate) filmGroups(s *scale.Set, g *group.Set) {
 			eta *= ratio
 		}
 	}
-	sigma := 12 * eta * omega * p.a * p.a / (pressure * gap * gap)
+	sigma := 12 * eta * omega * p.filmArea() / (pressure * gap * gap)
 	if g.Is(group.Liquid) {
 		p.liquidFilm(s, g, eta, gap, omega)
 		return
@@ -702,7 +693,7 @@ func (p *plate) filmGroups(s *scale.Set, g *group.Set) {
 	}
 	g.Put(group.ViscousInertia, 1)
 	g.Drop(group.ViscousDamping)
-	if spring, damper, err := canon.ThinFilm(sigma, p.a/p.b); err == nil {
+	if spring, damper, err := canon.ThinFilm(sigma, p.filmAspect()); err == nil {
 		inertia := s.X(scale.DryMass) + s.X(scale.AddedMass)
 		putOrWait(s, g, group.FluidStiffness, spring*pressure/gap/(s.X(scale.DryMass)*math.Pow(2*math.Pi*s.X(scale.FrequencyDry), 2)), scale.DryMass, scale.FrequencyDry)
 		putOrWait(s, g, group.DampingViscous, damper*pressure/gap/(2*inertia*omega*omega), scale.DryMass, scale.FrequencyMotion)
@@ -721,8 +712,25 @@ func (p *plate) liquidFilm(s *scale.Set, g *group.Set, eta, gap, omega float64) 
 	if err != nil {
 		return
 	}
-	c *= eta * p.a * p.a / (gap * gap * gap) // per area
+	c *= eta * p.filmArea() / (gap * gap * gap) // per area
 	putOrWait(s, g, group.DampingViscous, c/(2*(s.X(scale.DryMass)+s.X(scale.AddedMass))*omega), scale.DryMass, scale.FrequencyMotion)
+}
+
+
+// filmArea is the square of the side along x; a disc counts as the square of
+// its area, within 12 % for a liquid.
+func (p *plate) filmArea() float64 {
+	if p.circular {
+		return math.Pi * p.a * p.a
+	}
+	return p.a * p.a
+}
+
+func (p *plate) filmAspect() float64 {
+	if p.circular {
+		return 1
+	}
+	return p.a / p.b
 }
 
 // cavity puts the stiffness and the resonance of a closed cavity behind.

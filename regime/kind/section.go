@@ -206,7 +206,7 @@ func (c *section) masses(r *Resolver) {
 
 // Added mass of a rectangle that moves along its depth, over ρπB²/4, by B/D
 // (DNV-RP-C205 Table D-1, from memory).
-var addedRectangle = []struct{ ratio, coefficient float64 }{
+var addedRectangle = []ofRatio{
 	{0.1, 2.23}, {0.2, 1.98}, {0.5, 1.70}, {1, 1.51}, {2, 1.36}, {5, 1.21}, {10, 1.14}, {100, 1.01},
 }
 
@@ -220,17 +220,23 @@ func (c *section) addedCoefficient(r *Resolver) (float64, string) {
 	return rectangleAdded(c.b / c.d), "a rectangle of this breadth and depth"
 }
 
-func rectangleAdded(ratio float64) float64 {
-	if ratio <= addedRectangle[0].ratio {
-		return addedRectangle[0].coefficient
+func rectangleAdded(ratio float64) float64 { return interpolate(addedRectangle, ratio) }
+
+// ofRatio is a value at a ratio of the sides, a row of a table.
+type ofRatio struct{ ratio, value float64 }
+
+// interpolate is linear in the logarithm of the ratio, and level beyond the table.
+func interpolate(table []ofRatio, ratio float64) float64 {
+	if ratio <= table[0].ratio {
+		return table[0].value
 	}
-	for i := 1; i < len(addedRectangle); i++ {
-		a, b := addedRectangle[i-1], addedRectangle[i]
+	for i := 1; i < len(table); i++ {
+		a, b := table[i-1], table[i]
 		if ratio <= b.ratio {
-			return a.coefficient + (b.coefficient-a.coefficient)*math.Log(ratio/a.ratio)/math.Log(b.ratio/a.ratio)
+			return a.value + (b.value-a.value)*math.Log(ratio/a.ratio)/math.Log(b.ratio/a.ratio)
 		}
 	}
-	return addedRectangle[len(addedRectangle)-1].coefficient
+	return table[len(table)-1].value
 }
 
 // twist reads the torsion. A compact bluff section without a moment that grows
@@ -331,7 +337,7 @@ func (c *section) edge(r *Resolver) {
 
 // Drag of a sharp-edged rectangle on its depth, by B/D (EN 1991-1-4 Figure 7.23,
 // from memory).
-var dragRectangle = []struct{ ratio, drag float64 }{{0.1, 2.0}, {0.2, 2.0}, {0.65, 2.4}, {1, 2.1}, {2, 1.65}, {5, 1.0}, {10, 0.9}}
+var dragRectangle = []ofRatio{{0.1, 2.0}, {0.2, 2.0}, {0.65, 2.4}, {1, 2.1}, {2, 1.65}, {5, 1.0}, {10, 0.9}}
 
 // dragCoefficient on the depth: by shape, where it was not given.
 func (c *section) dragCoefficient(r *Resolver) float64 {
@@ -358,19 +364,7 @@ func (c *section) dragCoefficient(r *Resolver) float64 {
 	return drag
 }
 
-func (c *section) rectangleDrag() float64 {
-	x := c.b / c.d
-	if x <= dragRectangle[0].ratio {
-		return dragRectangle[0].drag
-	}
-	for i := 1; i < len(dragRectangle); i++ {
-		a, b := dragRectangle[i-1], dragRectangle[i]
-		if x <= b.ratio {
-			return a.drag + (b.drag-a.drag)*math.Log(x/a.ratio)/math.Log(b.ratio/a.ratio)
-		}
-	}
-	return dragRectangle[len(dragRectangle)-1].drag
-}
+func (c *section) rectangleDrag() float64 { return interpolate(dragRectangle, c.b/c.d) }
 
 // liftFluctuation is the r.m.s. lift coefficient of the fixed section, on its
 // depth: a square 1.1 and open sections 0.8 (EN 1991-1-4 Table E.2, from memory),

@@ -36,6 +36,21 @@ func surfaceCase(t *testing.T, text string) (*regime.Answer, []input.Violation) 
 	return regime.Classify(c)
 }
 
+// refusal is a case with the field at which it is refused.
+type refusal struct{ text, pointer string }
+
+func refuses(t *testing.T, rows []refusal) (ran int) {
+	t.Helper()
+	for _, r := range rows {
+		_, bad := surfaceCase(t, r.text)
+		if len(bad) == 0 || bad[0].Pointer != r.pointer {
+			t.Errorf("%s: %v, want a violation at %s", r.text, bad, r.pointer)
+		}
+		ran++
+	}
+	return ran
+}
+
 // expected is an ordinary case: the class that an expert expects, and a group or
 // a scale, worked by hand.
 type expected struct {
@@ -189,7 +204,7 @@ func TestTankStandards(t *testing.T) {
 
 // Cases that contradict themselves are refused at the field.
 func TestTankContradictions(t *testing.T) {
-	rows := []struct{ text, pointer string }{
+	rows := []refusal{
 		{with(steelTank, `"liquid_depth":"10 m"`, `"liquid_depth":"10 m","height":"9 m"`), "/structure/liquid_depth"},
 		{with(steelTank, `"fluid":"water"`, `"fluid":"water","flow":{"speed":"1 m/s"}`), "/flow/speed"},
 		{with(steelTank, `"fluid":"water"`, `"fluid":"water","waves":{"height":"1 m","period":"5 s"}`), "/waves/height"},
@@ -200,15 +215,7 @@ func TestTankContradictions(t *testing.T) {
 		{with(steelTank, `"fluid":"water"`, `"fluid":"water","motion":{"frequency":"1 Hz"}`), "/structure/spectral_acceleration"},
 		{with(shaken, `"kind":"tank"`, `"kind":"tank","base_acceleration":"3 m/s2"`), "/structure/base_acceleration"},
 	}
-	ran := 0
-	for _, r := range rows {
-		_, bad := surfaceCase(t, r.text)
-		if len(bad) == 0 || bad[0].Pointer != r.pointer {
-			t.Errorf("%s: %v, want a violation at %s", r.text, bad, r.pointer)
-		}
-		ran++
-	}
-	if ran != 9 {
+	if ran := refuses(t, rows); ran != 9 {
 		t.Errorf("ran %d rows", ran)
 	}
 }

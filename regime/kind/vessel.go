@@ -260,11 +260,7 @@ func (v *vessel) Groups(s *scale.Set, g *group.Set) {
 	if ratio := s.X(scale.SolidDensity) * v.h / (s.X(scale.Density) * v.r); !math.IsNaN(ratio) {
 		g.Put(group.WallMassRatio, ratio)
 	}
-	if g.Is(group.Liquid) {
-		g.Drop(group.Knudsen)
-	} else {
-		putOrWait(s, g, group.Knudsen, meanFreePath(s)/(2*v.r), scale.HeatCapacityRatio, scale.KinematicViscosity, scale.SoundSpeed)
-	}
+	rarefaction(s, g, 2*v.r)
 }
 
 // profile puts the Womersley number and what viscosity does to the pulse.
