@@ -716,7 +716,6 @@ func (p *plate) liquidFilm(s *scale.Set, g *group.Set, eta, gap, omega float64) 
 	putOrWait(s, g, group.DampingViscous, c/(2*(s.X(scale.DryMass)+s.X(scale.AddedMass))*omega), scale.DryMass, scale.FrequencyMotion)
 }
 
-
 // filmArea is the square of the side along x; a disc counts as the square of
 // its area, within 12 % for a liquid.
 func (p *plate) filmArea() float64 {
