@@ -22,7 +22,7 @@ func TestEveryAssumptionGetsEveryVerdict(t *testing.T) {
 		seen[i] = map[finding.Verdict]int{}
 	}
 	unsaid := map[string]int{}
-	const drawn = 8000
+	const drawn = 16000
 	classified := 0
 	all := rapid.OneOf(cases(), cases(), anyCases())
 	for n := range drawn {

@@ -92,6 +92,11 @@ func (d *drawer) active() {
 	if !d.chance(1) {
 		return
 	}
+	if d.chance(2) { // a dielectric elastomer of 0.1 to 10 MPa
+		d.quantity("active.maxwell_stress", d.log(1e3, 1e7))
+		d.maybe(8, "active.shear_modulus", 3e4, 3e6)
+		return
+	}
 	if d.kind == "piston" || d.kind == "generic" || d.kind == "film" {
 		d.maybe(7, "active.force_factor", 0.1, 20)
 		d.maybe(6, "active.coil_resistance", 0.5, 500)

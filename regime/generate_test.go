@@ -360,7 +360,7 @@ func (d *drawer) plate() {
 	if d.chance(2) {
 		d.switchOf("structure.edges_held")
 	}
-	d.maybe(1, "structure.tension", 1e2*h, 1e8*h)
+	d.maybe(3, "structure.tension", 1e2*h, 1e8*h)
 }
 
 // fluid gives none, one by name with its state, or one by values.

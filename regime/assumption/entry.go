@@ -45,7 +45,7 @@ var Catalogue = number(
 	TwoDimensional, QuasiSteady, PseudoStatic, CalibratedWake,
 	QuasiStaticGusts,
 	// structure
-	RigidStructure, SmallDisplacement, SmallStroke, SingleMode, LinearStructure, PassiveStructure,
+	RigidStructure, SmallDisplacement, SmallStroke, SingleMode, LinearStructure, PassiveStructure, NoPullIn,
 	// scales of reduced models
 	Lubrication, Slender, PlugFlow, OneDimensionalWaves, LongPulse, NoAxialCoupling, LongWave, RigidWalls,
 	// coupling

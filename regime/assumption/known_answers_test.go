@@ -112,6 +112,8 @@ func knownOfGroups() []knownGroup {
 	return []knownGroup{
 		{of(assumption.PassiveStructure, "K² ¼ in open circuit", finding.Frequency, math.Sqrt(1.25)-1, 0.05, finding.Invalid), group.Active, of1{group.Electromechanical: 0.25}},
 		{of(assumption.PassiveStructure, "K² of a thin patch", finding.Frequency, math.Sqrt(1.01)-1, 0.05, finding.Valid), group.Active, of1{group.Electromechanical: 0.01}},
+		{of(assumption.NoPullIn, "half the field of pull-in", finding.Stability, 0.5, 1, finding.Valid), group.Dielectric, of1{group.PullIn: 0.5}},
+		{of(assumption.NoPullIn, "twice the field of pull-in", finding.Stability, 2, 1, finding.Invalid), group.Dielectric, of1{group.PullIn: 2}},
 		{of(assumption.NoWaveResonance, "half way to the band", finding.Stability, 0.5, 1, finding.Valid), waves, of1{group.WaveRatio: 0.4}},
 		{of(assumption.NoWaveResonance, "resonance", finding.Stability, 1.25, 1, finding.Invalid), waves, of1{group.WaveRatio: 1}},
 		{of(assumption.NoSloshingResonance, "twice the band", finding.Stability, 0.5, 1, finding.Valid), tank, of1{group.SloshingRatio: 2.5}},
@@ -347,7 +349,7 @@ func TestKnownAnswers(t *testing.T) {
 			t.Errorf("%s has no known answer", e.ID)
 		}
 	}
-	if rows != 76 {
+	if rows != 78 {
 		t.Errorf("%d known answers", rows)
 	}
 }

@@ -82,11 +82,13 @@ var (
 		Full: "Taylor, G. I., The pressure and impulse of submarine explosion waves on plates, 1941, in Scientific Papers vol. 3, Cambridge University Press, 1963"}
 	Cole1948 = &Source{ID: "cole-1948", Short: "Cole 1948", Memory: true,
 		Full: "Cole, R. H., Underwater Explosions, Princeton University Press, 1948", Locator: "ch. 7, shock wave; ch. 10, damage to plates"}
+	ZhaoSuo2007 = &Source{ID: "zhao-suo-2007", Short: "Zhao & Suo 2007", Memory: true,
+		Full: "Zhao, X. & Suo, Z., Method to analyze electromechanical stability of dielectric elastomers, Applied Physics Letters 91, 061921, 2007", Locator: "equal-biaxial membrane of an ideal dielectric elastomer, neo-Hookean"}
 	ThisMethod = &Source{ID: "this-method", Short: "definition of this method",
 		Full: "A definition or a judgement of this tool, with its reason beside it; no outside source"}
 )
 
-var assumptions = []*Source{GovardhanWilliamson2000, Blevins1990, GadElHak1999, SumerFredsoe2006, Schlichting1979, Batchelor1967, Paidoussis2016,
+var assumptions = []*Source{ZhaoSuo2007, GovardhanWilliamson2000, Blevins1990, GadElHak1999, SumerFredsoe2006, Schlichting1979, Batchelor1967, Paidoussis2016,
 	PaidoussisPriceDeLangre2011, BisplinghoffAshleyHalfman1955, Dowell1975, Reynolds1886, Timoshenko1974, Brennen1995,
 	KinslerFrey2000, Landau1987, Newman1977, ScanlanTomko1971, LowryPolhamus1957, DiederichBudiansky1948, Davenport1967, WeaverFitzpatrickElKashlan1987,
 	PettigrewTaylor2003, Zukauskas1972, Parker1978, Zdravkovich1987, BokaianGeoola1984, ASMESTS1, PaidoussisPriceSuen1982, TurekHron2006,

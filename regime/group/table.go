@@ -189,6 +189,8 @@ const (
 	ShockTension
 	ShockPeriod
 
+	PullIn
+
 	Count // number of groups
 )
 
@@ -593,4 +595,6 @@ var table = [Count]Def{
 		Definition: "largest tension at the face of the plate / (p − p_v)"},
 	ShockPeriod: {ID: "shock_period", Symbol: "θ f_w", Title: "decay time over wet period",
 		Definition: "decay time of the shock / wet period"},
+	PullIn: {ID: "pull_in", Symbol: "E/E_c", Title: "pull-in ratio",
+		Definition: "field of a dielectric elastomer / field at which its membrane pulls itself in, √(εE²/(0.4725 μ))"},
 }

@@ -45,6 +45,7 @@ const (
 	Column                           // a column of fluid inside a tube
 	Pulsatile                        // a pulse runs through a compliant tube
 	Active                           // a piezoelectric part or a moving coil
+	Dielectric                       // a membrane of dielectric elastomer
 	Shock                            // a shock wave meets the structure
 )
 
@@ -66,7 +67,7 @@ var TraitNames = []TraitName{
 	{Cavity, "cavity"}, {Amplitude, "amplitude-given"}, {Flexible, "flexible"}, {PanelLike, "panel"}, {Piercing, "surface-piercing"},
 	{Sloshing, "sloshing"}, {Spectrum, "spectrum"}, {Elongated, "elongated"}, {BluntEdge, "blunt-edge"}, {Lifting, "lifting"},
 	{Array, "array"}, {WakeOfBody, "wake-of-body"}, {TwoPhase, "two-phase"}, {Duct, "duct"}, {Neighboured, "neighboured"},
-	{Column, "column"}, {Pulsatile, "pulsatile"}, {Active, "active"}, {Shock, "shock"},
+	{Column, "column"}, {Pulsatile, "pulsatile"}, {Active, "active"}, {Dielectric, "dielectric"}, {Shock, "shock"},
 }
 
 // Is reports whether every one of the traits holds.

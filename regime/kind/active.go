@@ -21,8 +21,10 @@ var (
 	ActiveLoad       = quantity("load_resistance", units.Resistance, "gte=0", "resistance across the part; of a coil that of the circuit outside it", "an open circuit; of a coil none beside its own")
 	ActiveForce      = quantity("force_factor", units.ForceFactor, "gt=0", "force factor Bl of a moving coil", "")
 	ActiveResistance = quantity("coil_resistance", units.Resistance, "gt=0", "resistance of the coil", "")
-	activeBlock      = &input.Block{Name: "active", Title: "Active part", Doc: "a piezoelectric part by its coupling, or a moving coil by its force factor, on any structure",
-		Fields: []*input.Field{ActiveCoupling, ActiveFactor, ActiveShort, ActiveOpen, ActiveCapacity, ActiveLoad, ActiveForce, ActiveResistance}}
+	ActiveMaxwell    = quantity("maxwell_stress", units.Modulus, "gt=0", "Maxwell stress εE² of a membrane of dielectric elastomer, E the voltage over the undeformed thickness", "")
+	ActiveShear      = quantity("shear_modulus", units.Modulus, "gt=0", "shear modulus of the elastomer", "a third of structure.young_modulus")
+	activeBlock      = &input.Block{Name: "active", Title: "Active part", Doc: "a piezoelectric part by its coupling, a moving coil by its force factor, or a dielectric elastomer by its Maxwell stress, on any structure",
+		Fields: []*input.Field{ActiveMaxwell, ActiveShear, ActiveCoupling, ActiveFactor, ActiveShort, ActiveOpen, ActiveCapacity, ActiveLoad, ActiveForce, ActiveResistance}}
 )
 
 // active takes the active part, once the masses of the kind are known.
@@ -32,6 +34,10 @@ func (r *Resolver) active() {
 	}
 	coil := r.c.Has(ActiveForce) || r.c.Has(ActiveResistance)
 	piezo := r.c.Has(ActiveCoupling) || r.c.Has(ActiveFactor) || r.c.Has(ActiveShort) || r.c.Has(ActiveOpen) || r.c.Has(ActiveCapacity)
+	if elastomer := r.c.Has(ActiveMaxwell) || r.c.Has(ActiveShear); elastomer {
+		r.elastomer(coil || piezo)
+		return
+	}
 	r.trait(group.Active)
 	switch {
 	case coil && piezo:
@@ -41,6 +47,22 @@ func (r *Resolver) active() {
 	default:
 		r.piezo()
 	}
+}
+
+// elastomer takes a membrane of dielectric elastomer.
+func (r *Resolver) elastomer(other bool) {
+	if other {
+		r.contradict(ActiveMaxwell, "An active part is a dielectric elastomer, piezoelectric or a moving coil, only one of them.")
+		return
+	}
+	r.trait(group.Dielectric)
+	r.takeOrNeed(scale.MaxwellStress, ActiveMaxwell)
+	if r.take(scale.ShearModulus, ActiveShear) {
+		return
+	}
+	r.derive(scale.ShearModulus, r.X(scale.Young)/3, units.Modulus, "E/3 of an incompressible solid")
+	r.Need(scale.ShearModulus, ActiveShear.Path())
+	r.Value(scale.ShearModulus).Kind = units.Modulus
 }
 
 func (r *Resolver) coil() {
@@ -110,6 +132,10 @@ func (r *Resolver) coupling() {
 
 // activeGroups puts what the circuit does to the mode.
 func activeGroups(s *scale.Set, g *group.Set) {
+	if g.Is(group.Dielectric) {
+		putOrWait(s, g, group.PullIn, math.Sqrt(s.X(scale.MaxwellStress)/(pullInStress*s.X(scale.ShearModulus))), scale.MaxwellStress, scale.ShearModulus)
+		return
+	}
 	if !g.Is(group.Active) {
 		return
 	}
@@ -200,3 +226,14 @@ func quality(s *scale.Set, g *group.Set) {
 	}
 	waitFor(s, g, []scale.ID{scale.FrequencyWet, scale.DryMass, scale.AddedMass}, group.QualityFluid)
 }
+
+// pullInStress is εE²/μ at which a membrane of ideal dielectric elastomer,
+// stretched alike both ways by the voltage alone, pulls itself in.
+//
+//	max over λ of λ⁻² − λ⁻⁸ = ¾·4^(−1/3) = 0.47247, at λ = 4^(1/6) = 1.26
+//
+// Symbols: ε permittivity, E voltage over the undeformed thickness, μ shear
+// modulus of a neo-Hookean solid, λ stretch. Range: no prestretch, which would
+// raise it. Accuracy: exact for that solid. Check: E√(ε/μ) = 0.687.
+// Source: Zhao & Suo 2007, from memory.
+var pullInStress = 0.75 * math.Pow(4, -1.0/3)

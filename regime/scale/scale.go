@@ -130,6 +130,9 @@ const (
 	ShockPressure
 	ShockDecay
 
+	MaxwellStress
+	ShearModulus
+
 	Count
 )
 
@@ -343,4 +346,6 @@ var table = [Count]Def{
 	ForceFactor:               {"force_factor", "Bl", "force factor of the moving coil", "active.force_factor"},
 	ShockPressure:             {"shock_pressure", "P", "peak pressure of the shock", "surroundings.shock_pressure"},
 	ShockDecay:                {"shock_decay_time", "θ", "decay time of the shock", "surroundings.shock_decay_time"},
+	MaxwellStress:             {"maxwell_stress", "εE²", "Maxwell stress of a dielectric elastomer", "active.maxwell_stress"},
+	ShearModulus:              {"shear_modulus", "μ_s", "shear modulus of the elastomer", "active.shear_modulus"},
 }
