@@ -30,7 +30,7 @@ var allowed = map[string][]string{
 	"regime/input":      {"units"},
 	"regime/scale":      {"units"},
 	"regime/finding":    {"regime/cite", "regime/group"},
-	"regime/criterion":  {"regime/cite", "regime/finding", "regime/group"},
+	"regime/criterion":  {"regime/canon", "regime/cite", "regime/finding", "regime/group"},
 	"regime/assumption": {"regime/canon", "regime/cite", "regime/criterion", "regime/finding", "regime/group"},
 	"regime/ladder":     {"regime/assumption", "regime/finding", "regime/group"},
 	"regime/kind": {"regime/canon", "regime/criterion", "regime/finding", "regime/fluid", "regime/group", "regime/input",

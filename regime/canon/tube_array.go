@@ -27,25 +27,15 @@ func TubeArrayCritical(massDamping, k float64) (float64, error) {
 	return k * math.Sqrt(massDamping), nil
 }
 
-// TubeArrayCriterion is one published constant of TubeArrayCritical.
-type TubeArrayCriterion struct {
-	ID             string
-	K              float64
-	MinMassDamping float64 // below it the criterion does not hold
-	SingleRow      bool    // holds for one row only, not for an array
-	Doc            string
-	Source         *cite.Source
-}
-
-// TubeArrayCriteria lists the constants, all from memory.
-func TubeArrayCriteria() []TubeArrayCriterion {
-	return []TubeArrayCriterion{
-		{ID: "connors-1970", K: 9.9, SingleRow: true, Doc: "one row, pitch ratio 1.41, in air", Source: cite.Connors1970},
-		{ID: "pettigrew-taylor-1991", K: 3.0, Doc: "design value, all layouts", Source: cite.PettigrewTaylor1991},
-		{ID: "asme-n1331-lower", K: 2.4, MinMassDamping: 0.7, Doc: "lower bound of all layouts", Source: cite.ASMEN1331},
-		{ID: "asme-n1331-mean", K: 4.0, MinMassDamping: 0.7, Doc: "mean of all layouts", Source: cite.ASMEN1331},
-	}
-}
+// Constants K of the criteria (from memory of the sources), and the mass-damping
+// from which those of ASME hold.
+const (
+	TubeArrayDesignK     = 3.0 // design value, all layouts: Pettigrew & Taylor 1991
+	TubeArrayASMELowerK  = 2.4 // lower bound of all layouts: ASME N-1331
+	TubeArrayASMEMeanK   = 4.0 // mean of all layouts: ASME N-1331
+	TubeArraySingleRowK  = 9.9 // one row, pitch ratio 1.41, in air: Connors 1970
+	TubeArrayASMEMinimum = 0.7
+)
 
 var tubeArrayCriticalEntry = &Entry{
 	Name:     "TubeArrayCritical",
@@ -53,7 +43,7 @@ var tubeArrayCriticalEntry = &Entry{
 	Equation: "V_p/(fD) = K √(2πζm/(ρD²))",
 	Args: []Arg{
 		{Name: "mass_damping", Symbol: "2πζm/(ρD²)", Doc: "mass-damping, all in the fluid", Min: 1e-6, Max: 1e6, From: 0.01, To: 1000},
-		{Name: "k", Symbol: "K", Doc: "constant of the criterion", Min: 0.1, Max: 20, Optional: true, Default: 3},
+		{Name: "k", Symbol: "K", Doc: "constant of the criterion", Min: 0.1, Max: 20, Optional: true, Default: TubeArrayDesignK},
 	},
 	Outputs:  []Output{{ID: "speed", Symbol: "V_p/(fD)", Doc: "critical reduced pitch velocity"}},
 	Accuracy: 1e-12,

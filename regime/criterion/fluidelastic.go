@@ -1,6 +1,7 @@
 package criterion
 
 import (
+	"regimed/regime/canon"
 	"regimed/regime/cite"
 	"regimed/regime/finding"
 	"regimed/regime/group"
@@ -9,14 +10,7 @@ import (
 // The criteria for fluidelastic instability: V_p/(f D) = K √(2πζm/(ρD²)) with
 // f, ζ and m in the fluid, and K by source. They differ from the physical model
 // in K alone, which there is that of the design value 3.
-const (
-	designK      = 3.0
-	lowestASME   = 0.7 // mass-damping from which the mean and the bound of ASME were fitted
-	connorsK     = 9.9
-	lowerASMEK   = 2.4
-	meanASMEK    = 4.0
-	fluidelastic = "no-fluidelastic-instability"
-)
+const fluidelastic = "no-fluidelastic-instability"
 
 var (
 	pettigrewTaylor = &finding.Criterion{
@@ -25,7 +19,7 @@ var (
 		Formula:  "V_p/(f D) < 3.0 √(2πζm/(ρD²))",
 		Source:   cite.PettigrewTaylor1991,
 		Applies:  func(x *finding.Context) bool { return x.Is(group.Array) },
-		Estimate: byConstant(designK),
+		Estimate: byConstant(canon.TubeArrayDesignK),
 		Say:      finding.Say("By Pettigrew & Taylor 1991, K = 3.0, the speed in the gaps stands at {u} of the critical one."),
 	}
 	asmeN1331Lower = &finding.Criterion{
@@ -34,7 +28,7 @@ var (
 		Formula:  "V_p/(f D) < 2.4 √(2πζm/(ρD²)), lower bound of all layouts, for 2πζm/(ρD²) > 0.7",
 		Source:   cite.ASMEN1331,
 		Applies:  massDampingAbove,
-		Estimate: byConstant(lowerASMEK),
+		Estimate: byConstant(canon.TubeArrayASMELowerK),
 		Say:      finding.Say("By ASME N-1331.3, lower bound K = 2.4, the speed in the gaps stands at {u} of the critical one."),
 	}
 	asmeN1331Mean = &finding.Criterion{
@@ -43,7 +37,7 @@ var (
 		Formula:  "V_p/(f D) < 4.0 √(2πζm/(ρD²)), mean of all layouts, for 2πζm/(ρD²) > 0.7",
 		Source:   cite.ASMEN1331,
 		Applies:  massDampingAbove,
-		Estimate: byConstant(meanASMEK),
+		Estimate: byConstant(canon.TubeArrayASMEMeanK),
 		Say:      finding.Say("By ASME N-1331.3, mean K = 4.0, the speed in the gaps stands at {u} of the critical one."),
 	}
 	connors = &finding.Criterion{
@@ -53,18 +47,18 @@ var (
 		Source:  cite.Connors1970,
 		// a single row is no array: it decides only where a case asks for it
 		Applies:  func(*finding.Context) bool { return false },
-		Estimate: byConstant(connorsK),
+		Estimate: byConstant(canon.TubeArraySingleRowK),
 		Say:      finding.Say("By Connors 1970, K = 9.9 for one row, the speed in the gaps stands at {u} of the critical one."),
 	}
 )
 
 func massDampingAbove(x *finding.Context) bool {
-	return x.Is(group.Array) && x.Has(group.ArrayMassDamping) && x.Get(group.ArrayMassDamping) > lowestASME
+	return x.Is(group.Array) && x.Has(group.ArrayMassDamping) && x.Get(group.ArrayMassDamping) > canon.TubeArrayASMEMinimum
 }
 
 // byConstant is the speed ratio with another constant than the design value.
 func byConstant(k float64) func(x *finding.Context) (float64, bool) {
 	return func(x *finding.Context) (float64, bool) {
-		return x.Get(group.FluidelasticSpeed) * designK / k, x.Has(group.FluidelasticSpeed)
+		return x.Get(group.FluidelasticSpeed) * canon.TubeArrayDesignK / k, x.Has(group.FluidelasticSpeed)
 	}
 }

@@ -157,11 +157,11 @@ func (d *decoder) structure(raw jsontext.Value) {
 	}
 	kindRaw, found := find(raw, "kind")
 	if !found {
-		d.bad.Add(at+"/kind", MissingField, "The structure needs a kind: "+orList(d.kindNames())+".", nil)
+		d.bad.Add(at+"/kind", MissingField, "The structure needs a kind: "+OrList(d.kindNames())+".", nil)
 		return
 	}
 	if kindRaw.Kind() != '"' {
-		d.bad.Add(at+"/kind", WrongType, "The kind is a name: "+orList(d.kindNames())+".", kindRaw)
+		d.bad.Add(at+"/kind", WrongType, "The kind is a name: "+OrList(d.kindNames())+".", kindRaw)
 		return
 	}
 	name := text(kindRaw)
@@ -509,7 +509,7 @@ func (d *decoder) text(f *Field, at string, raw jsontext.Value) (string, bool) {
 
 func (d *decoder) choice(f *Field, at string, raw jsontext.Value) (string, bool) {
 	if raw.Kind() != '"' {
-		d.bad.Add(at, WrongType, fmt.Sprintf("%s is one of %s.", f.Path(), orList(f.Options)), raw)
+		d.bad.Add(at, WrongType, fmt.Sprintf("%s is one of %s.", f.Path(), OrList(f.Options)), raw)
 		return "", false
 	}
 	s := text(raw)
@@ -524,7 +524,7 @@ func (d *decoder) choice(f *Field, at string, raw jsontext.Value) (string, bool)
 
 func (d *decoder) choices(f *Field, at string, raw jsontext.Value) ([]string, bool) {
 	if raw.Kind() != '[' {
-		d.bad.Add(at, WrongType, fmt.Sprintf("%s is a list of %s.", f.Path(), orList(f.Options)), raw)
+		d.bad.Add(at, WrongType, fmt.Sprintf("%s is a list of %s.", f.Path(), OrList(f.Options)), raw)
 		return nil, false
 	}
 	var list []string

@@ -12,9 +12,9 @@ func unknown(what, name string, known []string) string {
 	}
 	near := Nearest(name, known)
 	if len(near) == 0 {
-		return fmt.Sprintf("No %s is called %q; known are %s.", what, name, orList(known))
+		return fmt.Sprintf("No %s is called %q; known are %s.", what, name, OrList(known))
 	}
-	return fmt.Sprintf("No %s is called %q. Did you mean %s?", what, name, orList(near))
+	return fmt.Sprintf("No %s is called %q. Did you mean %s?", what, name, OrList(near))
 }
 
 // Nearest returns the known names that differ least from a name, at most three.
@@ -69,8 +69,8 @@ func editDistance(a, b string, most int) int {
 	return rows[(len(a)+1)%3][len(b)]
 }
 
-// orList joins names: "a, b or c".
-func orList(list []string) string {
+// OrList joins names: "a, b or c".
+func OrList(list []string) string {
 	if len(list) < 2 {
 		return strings.Join(list, "")
 	}

@@ -317,7 +317,7 @@ func (r *Resolver) flow() {
 	}
 	direction := r.c.Choice(FlowDirection, r.kind.Directions[0])
 	if !slices.Contains(r.kind.Directions, direction) {
-		r.violations.Add(FlowDirection.Pointer(), input.OutOfRange, fmt.Sprintf("A flow does not run %s to a %s; it runs %s.", direction, r.kind.Name, list(r.kind.Directions)), nil)
+		r.violations.Add(FlowDirection.Pointer(), input.OutOfRange, fmt.Sprintf("A flow does not run %s to a %s; it runs %s.", direction, r.kind.Name, input.OrList(r.kind.Directions)), nil)
 		return
 	}
 	switch direction {
@@ -437,18 +437,4 @@ func (r *Resolver) material() {
 		}
 	}
 	r.plausibleSolid()
-}
-
-func list(names []string) string {
-	switch len(names) {
-	case 0:
-		return ""
-	case 1:
-		return names[0]
-	}
-	s := names[0]
-	for _, n := range names[1 : len(names)-1] {
-		s += ", " + n
-	}
-	return s + " or " + names[len(names)-1]
 }

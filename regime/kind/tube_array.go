@@ -64,7 +64,6 @@ const (
 	tubeDragDefault = 0.5   // pressure drop of 0.3 dynamic pressures a row over the frontal area (Žukauskas 1972, from memory)
 	tubeTurbulence  = 0.25  // behind the second row (Žukauskas 1972, from memory)
 	tubeSuction     = 1.2   // as behind a single cylinder, on the speed in the gaps
-	tubeConstant    = 3.0   // K of the design value (Pettigrew & Taylor 1991, from memory)
 )
 
 func newTubeArray(r *Resolver) Physics {
@@ -380,7 +379,7 @@ func (t *tubeArray) critical(r *Resolver) {
 	if math.IsNaN(number) {
 		return
 	}
-	v, err := canon.TubeArrayCritical(math.Max(1e-6, math.Min(number, 1e6)), tubeConstant)
+	v, err := canon.TubeArrayCritical(math.Max(1e-6, math.Min(number, 1e6)), canon.TubeArrayDesignK)
 	if err != nil {
 		return
 	}
@@ -561,7 +560,7 @@ func (t *tubeArray) fluidelastic(s *scale.Set, g *group.Set) {
 func (t *tubeArray) reaction(s *scale.Set, g *group.Set) {
 	v, f := s.X(scale.Speed), s.X(scale.FrequencyWet)
 	mass := s.X(scale.DryMass) + s.X(scale.AddedMass)
-	reduced := v / (tubeConstant * f)
+	reduced := v / (canon.TubeArrayDesignK * f)
 	needs := []scale.ID{scale.Speed, scale.FrequencyWet, scale.FrequencyDry, scale.DryMass, scale.Density}
 	g.Drop(group.FlowStiffness)
 	putOrWait(s, g, group.FlowStiffness, reduced*reduced*s.X(scale.Density)/(math.Pi*mass), needs...)
