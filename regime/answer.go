@@ -24,5 +24,10 @@ type Answer struct {
 	Warnings []kind.Warning
 	Modes    []Mode // where a case gives several
 
+	// What package whatif adds; nil where it was not asked.
+	Drivers [][]Driver // by finding, the three largest
+	Turns   []Turn
+	Spread  *Spread // where an input is uncertain
+
 	judged *finding.Context // what Findings lies in
 }

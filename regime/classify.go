@@ -13,20 +13,30 @@ import (
 // groups are judged, the cheapest class that holds is recommended, and figures
 // for setting it up follow.
 func Classify(c *input.Case) (*Answer, []input.Violation) {
-	if modes := c.Lookup(kind.Modes); modes != nil {
-		return classifyModes(c, modes)
+	a, violations := Judge(c)
+	if len(violations) > 0 {
+		return nil, violations
 	}
-	return classifyOne(c)
+	a.Setup = setup.Figures(a.Scales, a.Groups, &a.Recommendation)
+	return a, nil
 }
 
-func classifyOne(c *input.Case) (*Answer, []input.Violation) {
+// Judge is Classify without the figures for setting up: what is asked by the
+// thousand where an input is varied.
+func Judge(c *input.Case) (*Answer, []input.Violation) {
+	if modes := c.Lookup(kind.Modes); modes != nil {
+		return judgeModes(c, modes)
+	}
+	return judgeOne(c)
+}
+
+func judgeOne(c *input.Case) (*Answer, []input.Violation) {
 	resolved, warnings, violations := kind.Resolve(c)
 	if len(violations) > 0 {
 		return nil, violations
 	}
 	a := Decide(resolved, kind.StudyOf(c))
 	a.Case, a.Warnings = c, warnings
-	a.Setup = setup.Figures(a.Scales, a.Groups, &a.Recommendation)
 	return a, nil
 }
 

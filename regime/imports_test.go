@@ -38,6 +38,8 @@ var allowed = map[string][]string{
 	"regime/setup": {"regime/canon", "regime/cite", "regime/group", "regime/ladder", "regime/scale", "units"},
 	"regime": {"regime/assumption", "regime/finding", "regime/group", "regime/input", "regime/kind", "regime/ladder",
 		"regime/scale", "regime/setup"},
+	"regime/whatif": {"regime", "regime/assumption", "regime/finding", "regime/group", "regime/input", "regime/ladder",
+		"regime/scale", "regime/setup", "units"},
 }
 
 // outside are modules of others that the core may import, by package.

@@ -7,7 +7,6 @@ import (
 	"regimed/regime/kind"
 	"regimed/regime/ladder"
 	"regimed/regime/scale"
-	"regimed/regime/setup"
 )
 
 // Mode is one of several modes of a case, with what it asks for by itself.
@@ -20,10 +19,10 @@ type Mode struct {
 	Utilisation  float64
 }
 
-// classifyModes answers a case with several modes: it is resolved once a mode,
+// judgeModes answers a case with several modes: it is resolved once a mode,
 // each finding is taken from the mode for which it is worst, and the class must
 // hold for all of them.
-func classifyModes(c *input.Case, modes *input.Value) (*Answer, []input.Violation) {
+func judgeModes(c *input.Case, modes *input.Value) (*Answer, []input.Violation) {
 	plain := c.Without(kind.Modes)
 	for _, f := range modes.Field.Row.Fields {
 		if plain.Has(f) {
@@ -37,7 +36,7 @@ func classifyModes(c *input.Case, modes *input.Value) (*Answer, []input.Violatio
 		for _, v := range row {
 			one = one.With(v)
 		}
-		a, violations := classifyOne(one)
+		a, violations := judgeOne(one)
 		if len(violations) > 0 {
 			return nil, violations
 		}
@@ -65,7 +64,6 @@ func merge(all []*Answer) *Answer {
 		merged.Findings[i] = all[at].Findings[i].OfMode(at+1, all[at].Groups)
 	}
 	merged.Recommendation = ladder.Choose(base.Kind.Name, base.Groups, merged.Findings)
-	merged.Setup = setup.Figures(base.Scales, base.Groups, &merged.Recommendation)
 	for i, a := range all {
 		m := Mode{Number: i + 1, FrequencyDry: a.Scales.X(scale.FrequencyDry), FrequencyWet: a.Scales.X(scale.FrequencyWet), Class: a.Recommendation.Class}
 		m.Worst, m.Utilisation = mostLoaded(a)

@@ -30,6 +30,8 @@ func newCheck() *cobra.Command {
   one-way.utilisation<0.5       a number of its finding: utilisation,
                                 estimate, margin, limit or factor
   reynolds>1e4                  a group
+  scale.speed_critical<3        a scale, in SI
+  setup.time_step_structure<0.1 a figure for setting up, in SI
 
 Names take = and !=, and alternatives by |. Numbers take ~ (within 2 %), = and
 != (the same to nine digits), <, <=, > and >=; null stands for a number that

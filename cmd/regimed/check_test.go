@@ -15,6 +15,7 @@ import (
 	"regimed/regime/input"
 	"regimed/regime/kind"
 	"regimed/regime/ladder"
+	"regimed/regime/whatif"
 )
 
 func pile(t *testing.T) *regime.Answer {
@@ -186,16 +187,13 @@ func TestExpectationsThatAreRefused(t *testing.T) {
 
 // A subject must mean one thing only.
 func TestSubjectsAreUnique(t *testing.T) {
-	all := subjects()
+	all := whatif.ColumnNames()
 	slices.Sort(all)
 	if n := len(slices.Compact(slices.Clone(all))); n != len(all) || n < 100 {
 		t.Errorf("%d subjects, %d different ones", len(all), n)
 	}
 	for _, s := range all {
-		if _, isName := nameOf(s); isName {
-			continue
-		}
-		if _, isNumber := numberOf(s); !isNumber {
+		if c, err := whatif.FindColumn(s); err != nil || (c.Text == nil) == (c.Number == nil) {
 			t.Errorf("%s is listed and not known", s)
 		}
 	}

@@ -9,10 +9,7 @@ import (
 	"strings"
 
 	"regimed/regime"
-	"regimed/regime/assumption"
-	"regimed/regime/finding"
-	"regimed/regime/group"
-	"regimed/regime/ladder"
+	"regimed/regime/whatif"
 )
 
 // An expectation is a subject, an operator, and what is wanted:
@@ -22,6 +19,8 @@ import (
 //	one-way=valid|marginal                  the verdict on an assumption
 //	one-way.utilisation<0.5                 a number of its finding
 //	reynolds>1e4                            a group
+//	scale.speed_critical<3                  a scale, in SI
+//	setup.time_step_structure~1e-3          a figure for setting up, in SI
 //
 // Names take = and !=, and alternatives by |. Numbers take ~ (within 2 %), =
 // and != (the same but for the noise of arithmetic), <, <=, > and >=; and the
@@ -56,18 +55,6 @@ const (
 // ones first.
 var operators = []string{"!=", "<=", ">=", "=", "<", ">", "~"}
 
-// findingNumbers are the numbers of a finding that can be asked for.
-var findingNumbers = []struct {
-	name string
-	of   func(p *finding.Part) float64
-}{
-	{"utilisation", func(p *finding.Part) float64 { return p.Utilisation }},
-	{"estimate", func(p *finding.Part) float64 { return p.Estimate }},
-	{"margin", func(p *finding.Part) float64 { return finding.Margin(p.Utilisation) }},
-	{"limit", func(p *finding.Part) float64 { return p.Limit }},
-	{"factor", func(p *finding.Part) float64 { return p.Factor }},
-}
-
 // parseExpectation reads one expectation; a name that is not known is an error
 // that names the nearest known ones.
 func parseExpectation(text string) (expectation, error) {
@@ -76,13 +63,13 @@ func parseExpectation(text string) (expectation, error) {
 		return expectation{}, fmt.Errorf("%q is no expectation: want a name, one of %s, and a value, as in class=added-mass", text, strings.Join(operators, " "))
 	}
 	e := expectation{text: text}
-	var err error
-	if read, known := nameOf(subject); known {
-		e.met, err = nameTest(read, operator, want)
-	} else if number, known := numberOf(subject); known {
-		e.met, err = numberTest(number, operator, want)
-	} else {
-		err = fmt.Errorf("nothing in an answer is called %q.%s", subject, didYouMean(subject, subjects()))
+	column, err := whatif.FindColumn(subject)
+	switch {
+	case err != nil:
+	case column.Text != nil:
+		e.met, err = nameTest(column, operator, want)
+	default:
+		e.met, err = numberTest(column.Number, operator, want)
 	}
 	if err != nil {
 		return expectation{}, fmt.Errorf("%q: %w", text, err)
@@ -102,89 +89,27 @@ func splitExpectation(text string) (subject, operator, want string) {
 	return text, "", ""
 }
 
-// nameSubject is a subject whose value is a name.
-type nameSubject struct {
-	known []string
-	of    func(a *regime.Answer) string
-}
-
-func nameOf(subject string) (nameSubject, bool) {
-	if subject == "class" {
-		return nameSubject{classIDs(), func(a *regime.Answer) string { return a.Recommendation.Class.ID }}, true
-	}
-	if id, ok := strings.CutPrefix(subject, "axis."); ok {
-		for _, x := range ladder.AxisList {
-			if x.ID == id {
-				return nameSubject{x.Values, func(a *regime.Answer) string { return *x.Of(&a.Recommendation.Axes) }}, true
-			}
-		}
-		return nameSubject{}, false
-	}
-	if entry := assumption.Find(subject); entry != nil {
-		return nameSubject{finding.VerdictNames(), func(a *regime.Answer) string { return a.Findings[entry.Index()].Verdict.String() }}, true
-	}
-	return nameSubject{}, false
-}
-
-func nameTest(n nameSubject, operator, want string) (func(*regime.Answer) (bool, string), error) {
+func nameTest(n whatif.Column, operator, want string) (func(*regime.Answer) (bool, string), error) {
 	if operator != "=" && operator != "!=" {
 		return nil, fmt.Errorf("a name takes = or !=, not %s", operator)
 	}
 	var alternatives []string
 	for word := range strings.SplitSeq(want, "|") {
 		word = strings.TrimSpace(word)
-		if !slices.Contains(n.known, word) {
-			return nil, fmt.Errorf("no such value %q; it is one of %s.%s", word, strings.Join(n.known, ", "), didYouMean(word, n.known))
+		if !slices.Contains(n.Known, word) {
+			return nil, fmt.Errorf("no such value %q; it is one of %s.%s", word, strings.Join(n.Known, ", "), didYouMean(word, n.Known))
 		}
 		alternatives = append(alternatives, word)
 	}
 	return func(a *regime.Answer) (bool, string) {
-		got := n.of(a)
+		got := n.Text(a)
 		return slices.Contains(alternatives, got) == (operator == "="), got
 	}, nil
 }
 
-// numberSubject is a subject whose value is a number: it returns NaN where the answer
-// has none, and says why.
-type numberSubject func(a *regime.Answer) (x float64, why string)
-
-func numberOf(subject string) (numberSubject, bool) {
-	if id, known := group.Find(subject); known {
-		return func(a *regime.Answer) (float64, string) { return groupValue(a.Groups, id) }, true
-	}
-	id, name, _ := strings.Cut(subject, ".")
-	entry := assumption.Find(id)
-	if entry == nil {
-		return nil, false
-	}
-	for _, n := range findingNumbers {
-		if n.name == name {
-			return func(a *regime.Answer) (float64, string) { return findingValue(&a.Findings[entry.Index()], n.of) }, true
-		}
-	}
-	return nil, false
-}
-
-func groupValue(g *group.Set, id group.ID) (float64, string) {
-	switch {
-	case g.Has(id):
-		return g.Get(id), ""
-	case g.State(id) == group.Missing:
-		return math.NaN(), "it needs " + g.Need(id).Input
-	case g.State(id) == group.OffRange:
-		return math.NaN(), "it is outside the range of its formula"
-	default:
-		return math.NaN(), "it does not arise"
-	}
-}
-
-func findingValue(f *finding.Finding, of func(*finding.Part) float64) (float64, string) {
-	p := f.Main()
-	if p == nil || p.Waits {
-		return math.NaN(), "the verdict is " + f.Verdict.String()
-	}
-	return of(p), ""
-}
+// numberSubject is the number that an expectation is about: NaN where the answer
+// has none, and why.
+type numberSubject = func(a *regime.Answer) (x float64, why string)
 
 func numberTest(read numberSubject, operator, want string) (func(*regime.Answer) (bool, string), error) {
 	if want == "null" {
@@ -239,47 +164,19 @@ func compare(x float64, operator string, y float64) bool {
 	}
 }
 
-func classIDs() []string {
-	var ids []string
-	for i := range ladder.Classes {
-		ids = append(ids, ladder.Classes[i].ID)
-	}
-	return ids
-}
-
-// subjects lists everything that an expectation can be about.
-func subjects() []string {
-	all := []string{"class"}
-	for _, x := range ladder.AxisList {
-		all = append(all, "axis."+x.ID)
-	}
-	for _, e := range assumption.Catalogue {
-		all = append(all, e.ID)
-	}
-	for id := range group.Count {
-		all = append(all, group.Of(id).ID)
-	}
-	for _, e := range assumption.Catalogue {
-		for _, n := range findingNumbers {
-			all = append(all, e.ID+"."+n.name)
-		}
-	}
-	return all
-}
-
 // expectationWords completes the beginning of an expectation: subjects, and
 // after a subject of names its values.
 func expectationWords(start string) []string {
 	subject, operator, _ := splitExpectation(start)
 	if operator == "" {
-		return sortedWith(subjects(), start)
+		return sortedWith(whatif.ColumnNames(), start)
 	}
-	n, known := nameOf(subject)
-	if !known {
+	n, err := whatif.FindColumn(subject)
+	if err != nil {
 		return nil
 	}
 	var words []string
-	for _, v := range n.known {
+	for _, v := range n.Known {
 		words = append(words, subject+operator+v)
 	}
 	return sortedWith(words, start)
