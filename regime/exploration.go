@@ -20,8 +20,8 @@ type Driver struct {
 type Turn struct {
 	Place   input.Place
 	Up      bool
-	Value   float64           // SI
-	Factor  float64           // of the value of the case; NaN where that is zero or counts from no zero
+	Value   float64           // SI; a gauge pressure as such where it was given as one; 0: at once, from a zero
+	Factor  float64           // of the value of the case, a gauge pressure counting as the absolute one; NaN where that is zero
 	Entry   *assumption.Entry // whose verdict turns; nil where the domain of the classes changes
 	Verdict finding.Verdict   // that it turns to
 	Class   *ladder.Class     // recommended beyond
@@ -51,7 +51,10 @@ type Spread struct {
 	Inputs  []input.Place // the uncertain ones, by pointer
 	Samples int           // that were judged
 	Outside int           // draws beyond the range of an input or a property: left out
-	Settled bool          // every class probability is known to ±0.01, so that fewer samples were enough
+	// Refusals are, by input, how many of these were left out for it; those that
+	// are missing from the sum were left out for what follows from several inputs.
+	Refusals []int
+	Settled  bool // every class probability is known to ±0.01, so that fewer samples were enough
 
 	Classes      []ClassProbability   // cheapest first, only those that occurred
 	Verdicts     []VerdictProbability // by the order of assumption.Catalogue

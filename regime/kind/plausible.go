@@ -14,19 +14,31 @@ import (
 // same length in two units must lie on the same side of a rule.
 func atMost(x, limit float64) bool { return x <= limit*(1+1e-9) }
 
+// UncertainCode is the code of the warning that an input is taken at its middle.
+// An answer that carries the spread of its inputs does without it.
+const UncertainCode = "uncertain"
+
 // uncertain says which inputs are uncertain, and where they are taken.
 func (r *Resolver) uncertain() {
 	for i := range r.c.Given() {
 		v := &r.c.Given()[i]
-		if v.Q.Form == units.Certain || v.Field.Type != input.Quantity && v.Field.Type != input.Number {
-			continue
+		switch v.Field.Type {
+		case input.Quantity:
+			r.middle(v.Field, v.Q, v.Field.Kind)
+		case input.Number:
+			r.middle(v.Field, v.Q, units.Dimensionless)
+		case input.Interval:
+			r.middle(v.Field, v.Ends[0], v.Field.Kind)
+			r.middle(v.Field, v.Ends[1], v.Field.Kind)
 		}
-		k := v.Field.Kind
-		if v.Field.Type == input.Number {
-			k = units.Dimensionless
-		}
-		r.warn(v.Field, "uncertain", fmt.Sprintf("%s is uncertain and taken at its middle, %s; the answer does not carry its spread.", v.Field.Path(), units.Format(v.Q.Value, k)))
 	}
+}
+
+func (r *Resolver) middle(f *input.Field, q units.Quantity, k units.Kind) {
+	if q.Form == units.Certain {
+		return
+	}
+	r.warn(f, UncertainCode, fmt.Sprintf("%s is uncertain; single numbers and verdicts are those at its middle, %s.", f.Path(), units.Format(q.Value, k)))
 }
 
 // band warns, and never refuses, where a value lies outside what is usual.
