@@ -71,11 +71,23 @@ func ConveyingPipe(beta, gamma, alpha float64, support PipeSupport) (u, omega fl
 		return 0, 0, &RangeError{Function: "ConveyingPipe", Arg: "gamma", Value: gamma, Reason: "the pipe buckles under its own weight without flow"}
 	}
 	if support == PipeCantilever {
-		return pipeFlutter(conveyingPipe{beta, gamma, alpha})
+		p := conveyingPipe{beta, gamma, alpha}
+		o := pipeFlutterMemo.of(p, func() pipeFlutterOnset {
+			u, omega, err := pipeFlutter(p)
+			return pipeFlutterOnset{u, omega, err}
+		})
+		return o.u, o.omega, o.err
 	}
 	u, err = pipeBuckling(gamma, support)
 	return u, 0, err
 }
+
+type pipeFlutterOnset struct {
+	u, omega float64
+	err      error
+}
+
+var pipeFlutterMemo = newSolvedMemo[conveyingPipe, pipeFlutterOnset](1 << 10)
 
 // pipeOwnWeight is γ at which the pipe without flow buckles; the test finds
 // each as a zero of the static determinant.

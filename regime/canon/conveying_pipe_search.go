@@ -202,18 +202,30 @@ var (
 	}
 )
 
-// pipeSearchStart is a speed from which the search may begin: for a pipe without
-// damping, which is not upright, a little below the onset of the next smaller β
-// and γ that are known; it saves most of the way where that is long.
+// pipeLeastOnsets are the least onsets over all dampings α up to 0.1, over the
+// same β and γ: a little damping can destabilise. They too rise with both.
+var pipeLeastOnsets = [...][len(pipeOnsetGamma)]float64{
+	{4.444, 4.859, 5.975, 7.897}, {4.749, 5.230, 6.567, 9.136}, {5.591, 6.339, 8.454, 10.575}, {7.108, 7.866, 9.491, 11.505},
+	{7.813, 8.539, 10.219, 12.589}, {8.146, 8.874, 10.580, 13.049}, {8.310, 9.027, 10.699, 13.083}, {8.411, 9.113, 10.752, 13.093},
+	{8.493, 9.180, 10.791, 13.106}, {8.562, 9.237, 10.826, 13.120}, {8.581, 9.252, 10.836, 13.125},
+}
+
+// pipeSearchStart is a speed from which the search may begin: for a pipe which
+// is not upright, a little below the onset of the next smaller β and γ that are
+// known; it saves most of the way where that is long.
 func pipeSearchStart(p conveyingPipe) float64 {
 	start := pipeQuiet(p)
-	if p.gamma < 0 || p.alpha > 0 {
+	if p.gamma < 0 {
 		return start
+	}
+	onsets := &pipeOnsets
+	if p.alpha > 0 {
+		onsets = &pipeLeastOnsets
 	}
 	for i, β := range pipeOnsetBeta {
 		for j, γ := range pipeOnsetGamma {
 			if β <= p.beta && γ <= p.gamma {
-				start = max(start, 0.97*pipeOnsets[i][j])
+				start = max(start, 0.97*onsets[i][j])
 			}
 		}
 	}

@@ -312,15 +312,31 @@ func TestConveyingPipeSearchStart(t *testing.T) {
 			ran++
 		}
 	}
-	for _, p := range []conveyingPipe{{0.07, 3, 0}, {0.23, 25, 0}, {0.297, 0, 0}, {0.298, 0, 0}, {0.25, 12, 0}, {0.62, 7, 0}, {0.69, 0, 0}, {0.71, 39, 0}, {0.88, 5, 0}, {0.95, 0, 0}, {0.95, 30, 0}} {
-		u, _, err := ConveyingPipe(p.beta, p.gamma, 0, PipeCantilever)
+	for _, p := range []conveyingPipe{{0.07, 3, 0}, {0.23, 25, 0}, {0.297, 0, 0}, {0.298, 0, 0}, {0.25, 12, 0}, {0.62, 7, 0}, {0.69, 0, 0}, {0.71, 39, 0}, {0.88, 5, 0}, {0.95, 0, 0}, {0.95, 30, 0},
+		{0.06, 1, 0.1}, {0.19, 9, 0.01}, {0.299, 0, 1e-3}, {0.31, 0, 0.02}, {0.54, 0, 2e-3}, {0.69, 39, 0.05}, {0.75, 0, 3e-4}, {0.89, 99, 0.1}, {0.95, 0, 1e-5}, {0.95, 100, 0.03}} {
+		u, _, err := ConveyingPipe(p.beta, p.gamma, p.alpha, PipeCantilever)
 		if want := full(p); err != nil || math.Abs(u-want) > 1e-8 {
 			t.Errorf("%+v: %g, %v; from the beginning %g", p, u, err, want)
 		}
 		ran++
 	}
-	if ran != 55 {
-		t.Errorf("ran %d rows, want 55", ran)
+	for i, beta := range pipeOnsetBeta {
+		for j, gamma := range pipeOnsetGamma {
+			known, least := pipeLeastOnsets[i][j], pipeOnsets[i][j]
+			for _, alpha := range []float64{1e-4, 1e-3, 3e-3, 0.01, 0.03, 0.1} {
+				least = min(least, full(conveyingPipe{beta, gamma, alpha}))
+			}
+			if least < known-2e-3 || least > 1.01*known {
+				t.Errorf("β %g γ %g: least onset over the damping %g, listed %g", beta, gamma, least, known)
+			}
+			if i > 0 && known < pipeLeastOnsets[i-1][j] || j > 0 && known < pipeLeastOnsets[i][j-1] {
+				t.Errorf("β %g γ %g, damped: %g lies below a smaller one", beta, gamma, known)
+			}
+			ran++
+		}
+	}
+	if ran != 109 {
+		t.Errorf("ran %d rows, want 109", ran)
 	}
 }
 
@@ -354,7 +370,7 @@ func BenchmarkConveyingPipe(b *testing.B) {
 	} {
 		b.Run(name, func(b *testing.B) {
 			for b.Loop() {
-				flowSink, _, _ = ConveyingPipe(args[0], args[1], args[2], PipeCantilever)
+				flowSink, _, _ = pipeFlutter(conveyingPipe{args[0], args[1], args[2]})
 			}
 		})
 	}

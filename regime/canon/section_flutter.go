@@ -3,6 +3,7 @@ package canon
 import (
 	"math"
 	"math/cmplx"
+	"sync"
 
 	"regimed/regime/cite"
 )
@@ -28,12 +29,18 @@ func SectionFlutter(mu, a, xAlpha, r2, ratio, zetaH, zetaAlpha float64) (speed, 
 	if err := s.check(); err != nil {
 		return 0, 0, 0, err
 	}
-	k, y := s.lowest()
-	if k == 0 {
+	at := sectionFlutterMemo.of(s, s.lowest)
+	if at.k == 0 {
 		return math.Inf(1), 0, 0, nil
 	}
-	return 1 / (y * k), 1 / y, k, nil
+	return 1 / (at.y * at.k), 1 / at.y, at.k, nil
 }
+
+// neutralPoint is a reduced frequency and y = ω_α/ω at which the determinant
+// vanishes; k = 0: none.
+type neutralPoint struct{ k, y float64 }
+
+var sectionFlutterMemo = newSolvedMemo[flutterSection, neutralPoint](1 << 10)
 
 type flutterSection struct{ mu, a, xAlpha, r2, ratio, zetaH, zetaAlpha float64 }
 
@@ -70,8 +77,12 @@ func (s flutterSection) arg(name string) float64 {
 // coefficients of the determinant as a polynomial in y = ω_α/ω, c[n] yⁿ.
 func (s flutterSection) coefficients(k float64) [5]complex128 {
 	re, im := theodorsenC(k)
+	return s.coefficientsWith(k, complex(re, im))
+}
+
+// coefficientsWith are the coefficients where C(k) = c is known.
+func (s flutterSection) coefficientsWith(k float64, c complex128) [5]complex128 {
 	ik := complex(0, -1/k) // 1/(ik)
-	c := complex(re, im)
 	half := complex(0.5-s.a, 0)
 	aft := complex(0.5+s.a, 0)
 	lh := 1 + 2*c*ik
@@ -97,26 +108,21 @@ func (s flutterSection) determinant(k, y float64) complex128 {
 	return (((c[4]*z+c[3])*z+c[2])*z+c[1])*z + c[0]
 }
 
-// branches are the two roots y with positive real part at a given k. A real
-// root is a neutral motion.
-func (s flutterSection) branches(k float64) [2]complex128 {
-	c := s.coefficients(k)
-	var roots [4]complex128
-	if s.zetaH == 0 && s.zetaAlpha == 0 { // a quadratic in y²
+// branches are the two roots y with positive real part of the determinant with
+// coefficients c. A real root is a neutral motion.
+func (s flutterSection) branches(c *[5]complex128) [2]complex128 {
+	if s.undamped() { // a quadratic in y²
 		b, d := c[2]/c[4], c[0]/c[4]
 		root := cmplx.Sqrt(b*b - 4*d)
 		if real(b*cmplx.Conj(root)) > 0 { // the larger one first, the other from the product
 			root = -root
 		}
 		first := (-b + root) / 2
-		roots[0] = cmplx.Sqrt(first)
-		roots[1] = cmplx.Sqrt(d / first)
-		return [2]complex128{roots[0], roots[1]}
+		return [2]complex128{cmplx.Sqrt(first), cmplx.Sqrt(d / first)}
 	}
-	roots = quarticRoots(c[3]/c[4], c[2]/c[4], c[1]/c[4], c[0]/c[4])
 	var right [2]complex128
 	n := 0
-	for _, z := range roots {
+	for _, z := range quarticRoots(c[3]/c[4], c[2]/c[4], c[1]/c[4], c[0]/c[4]) {
 		if real(z) > 0 && n < 2 {
 			right[n] = z
 			n++
@@ -125,6 +131,44 @@ func (s flutterSection) branches(k float64) [2]complex128 {
 	return right
 }
 
+func (s flutterSection) undamped() bool { return s.zetaH == 0 && s.zetaAlpha == 0 }
+
+// follow carries both branches on from where they are expected, by Newton's
+// method. It is not ok where one ends outside the right half plane, or both end
+// in the same root.
+func (s flutterSection) follow(c *[5]complex128, expected [2]complex128) (now [2]complex128, ok bool) {
+	for b, z := range expected {
+		if now[b], ok = quarticNear(c, z); !ok || real(now[b]) <= 0 {
+			return now, false
+		}
+	}
+	return now, largerPart(now[0]-now[1]) > 1e-4*largerPart(now[0])
+}
+
+// quarticNear is the root of c₄z⁴ + … + c₀ that Newton's method finds from z; not
+// ok without convergence to twelve digits.
+func quarticNear(c *[5]complex128, z complex128) (complex128, bool) {
+	for range 8 {
+		p, slope := c[4], complex128(0)
+		for n := 3; n >= 0; n-- {
+			slope = slope*z + p
+			p = p*z + c[n]
+		}
+		step := p / slope
+		z -= step
+		switch size := largerPart(step); {
+		case math.IsNaN(size):
+			return z, false
+		case size < 1e-12*largerPart(z): // the square of what is left is rounding
+			return z, true
+		}
+	}
+	return z, false
+}
+
+// largerPart is the larger of the parts of z, which bound |z| to a factor of √2.
+func largerPart(z complex128) float64 { return max(math.Abs(real(z)), math.Abs(imag(z))) }
+
 // Search over k: on a logarithmic grid fine enough for neighbours to be matched.
 const (
 	sectionFlutterKMin  = 1e-3
@@ -132,24 +176,65 @@ const (
 	sectionFlutterSteps = 330
 )
 
-// lowest follows both branches over k, collects where one crosses the real
-// axis, and returns the crossing of lowest speed 1/(ky); k = 0: none.
-func (s flutterSection) lowest() (k, y float64) {
-	best := math.Inf(1)
-	keep := func(kc, yc float64) {
-		if kc, yc, ok := s.solve(kc, yc); ok && 1/(kc*yc) < best {
-			best, k, y = 1/(kc*yc), kc, yc
+// sectionFlutterGrid is k with Theodorsen's C(k), the same for every section.
+type sectionFlutterGrid struct {
+	factor float64
+	k      [sectionFlutterSteps + 1]float64
+	c      [sectionFlutterSteps + 1]complex128
+}
+
+var theodorsenGrid = sync.OnceValue(func() *sectionFlutterGrid {
+	g := &sectionFlutterGrid{factor: math.Pow(sectionFlutterKMin/sectionFlutterKMax, 1./sectionFlutterSteps)}
+	at := sectionFlutterKMax
+	for i := range g.k {
+		re, im := theodorsenC(at)
+		g.k[i], g.c[i] = at, complex(re, im)
+		at *= g.factor
+	}
+	return g
+})
+
+// branchTrail is the last three values of each branch, the latest last.
+type branchTrail [2][3]complex128
+
+// next finds both branches at the next k, in the order of the trail.
+func (s flutterSection) next(c *[5]complex128, trail *branchTrail, step int) [2]complex128 {
+	if step > 1 && !s.undamped() {
+		expected := [2]complex128{2*trail[0][2] - trail[0][1], 2*trail[1][2] - trail[1][1]}
+		if now, ok := s.follow(c, expected); ok {
+			return trail.inOrder(now)
 		}
 	}
-	factor := math.Pow(sectionFlutterKMin/sectionFlutterKMax, 1./sectionFlutterSteps)
-	var trail [2][3]complex128 // the last three values of each branch
-	at := sectionFlutterKMax
-	for step := range sectionFlutterSteps + 1 {
-		now := s.branches(at)
-		if step > 0 && cmplx.Abs(now[0]-trail[0][2])+cmplx.Abs(now[1]-trail[1][2]) > cmplx.Abs(now[1]-trail[0][2])+cmplx.Abs(now[0]-trail[1][2]) {
-			now[0], now[1] = now[1], now[0]
+	now := s.branches(c)
+	if step == 0 {
+		return now
+	}
+	return trail.inOrder(now)
+}
+
+// inOrder gives each branch the value that is nearer to its last.
+func (t *branchTrail) inOrder(now [2]complex128) [2]complex128 {
+	if cmplx.Abs(now[0]-t[0][2])+cmplx.Abs(now[1]-t[1][2]) > cmplx.Abs(now[1]-t[0][2])+cmplx.Abs(now[0]-t[1][2]) {
+		now[0], now[1] = now[1], now[0]
+	}
+	return now
+}
+
+// lowest follows both branches over k, collects where one crosses the real
+// axis, and returns the crossing of lowest speed 1/(ky); k = 0: none.
+func (s flutterSection) lowest() neutralPoint {
+	best, found := math.Inf(1), neutralPoint{}
+	keep := func(k, y float64) {
+		if k, y, ok := s.solve(k, y); ok && 1/(k*y) < best {
+			best, found = 1/(k*y), neutralPoint{k, y}
 		}
-		for b, z := range now {
+	}
+	grid := theodorsenGrid()
+	factor := grid.factor
+	var trail branchTrail
+	for step, at := range grid.k {
+		c := s.coefficientsWith(at, grid.c[step])
+		for b, z := range s.next(&c, &trail, step) {
 			trail[b] = [3]complex128{trail[b][1], trail[b][2], z}
 			before, last := trail[b][0], trail[b][1]
 			if step > 0 && (imag(last) > 0) != (imag(z) > 0) {
@@ -163,9 +248,8 @@ func (s flutterSection) lowest() (k, y float64) {
 				keep(at/factor*1.02, real(last))
 			}
 		}
-		at *= factor
 	}
-	return k, y
+	return found
 }
 
 // humps says that |b| is a minimum of three values of one sign, and small
