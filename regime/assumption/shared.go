@@ -99,7 +99,8 @@ func addShare(x *finding.Context, p finding.Part, left float64) {
 // selfExcitedHazards are the hazards that feed on the motion.
 var selfExcitedHazards = []*Entry{NoLockIn, NoGalloping, NoFlutter, NoDivergence, NoBucklingByFlow, NoFluidelasticInstability, NoWakeInterference}
 
-// selfExcited returns the worst finding among the hazards that feed on motion.
+// selfExcited returns the worst finding among the hazards that feed on motion: an
+// invalid one before one that a wider factor only makes look worse.
 func selfExcited(x *finding.Context) (worst *finding.Finding, e *Entry) {
 	for _, h := range selfExcitedHazards {
 		f := &x.Made[h.index]
@@ -107,7 +108,7 @@ func selfExcited(x *finding.Context) (worst *finding.Finding, e *Entry) {
 		if p == nil || p.Waits {
 			continue
 		}
-		if worst == nil || p.Utilisation*p.Factor > worst.Main().Utilisation*worst.Main().Factor {
+		if worst == nil || f.WorseThan(worst) {
 			worst, e = f, h
 		}
 	}

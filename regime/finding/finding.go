@@ -174,7 +174,7 @@ func (x *Context) Add(p Part) {
 		p.Inner = p.Factor
 	}
 	if math.IsInf(p.Estimate, 1) { // a square that overflows: as bad as can be
-		p.Estimate = maxUtilisation * p.Limit
+		p.Estimate = MostUtilisation * p.Limit
 	}
 	x.arena = append(x.arena, p)
 }

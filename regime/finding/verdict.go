@@ -107,20 +107,20 @@ func VerdictNames() []string {
 	return []string{"not-applicable", "valid", "marginal", "undetermined", "invalid"}
 }
 
-// Bounds of the utilisation: a threshold that vanishes, or an effect that is
+// Bounds of a utilisation: a threshold that vanishes, or an effect that is
 // exactly nil, must not make an infinity.
 const (
-	minUtilisation = 1e-6
-	maxUtilisation = 1e6
+	LeastUtilisation = 1e-6
+	MostUtilisation  = 1e6
 )
 
 // Utilisation returns e/ℓ kept within 1e-6 … 1e6.
 func Utilisation(estimate, limit float64) float64 {
 	u := estimate / limit
-	if math.IsNaN(u) || u < minUtilisation { // 0/0: nothing is left out
-		return minUtilisation
+	if math.IsNaN(u) || u < LeastUtilisation { // 0/0: nothing is left out
+		return LeastUtilisation
 	}
-	return math.Min(u, maxUtilisation)
+	return math.Min(u, MostUtilisation)
 }
 
 // Margin returns −log10 of a utilisation: decades to spare.
