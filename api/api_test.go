@@ -281,7 +281,7 @@ func TestProblemTypesResolve(t *testing.T) {
 			t.Errorf("%s: %+v", p.ID, record)
 		}
 	}
-	if len(seen) != 11 {
+	if len(seen) != 12 {
 		t.Errorf("%d types", len(seen))
 	}
 }

@@ -269,6 +269,12 @@ var badRequests = []struct {
 	{"members twice", http.MethodPost, "/v1/classify?fields=findings&fields=groups", 422, "invalid-query"},
 	{"too many members", http.MethodPost, "/v1/classify?fields=" + strings.Repeat("groups,", 40) + "groups", 422, "invalid-query"},
 	{"unknown parameter", http.MethodPost, "/v1/classify?field=findings", 422, "invalid-query"},
+	{"too few samples", http.MethodPost, "/v1/classify?samples=63", 422, "invalid-query"},
+	{"too many samples", http.MethodPost, "/v1/classify?samples=65537", 422, "invalid-query"},
+	{"no samples", http.MethodPost, "/v1/classify?samples=0", 422, "invalid-query"},
+	{"samples that are no number", http.MethodPost, "/v1/classify?samples=1e3", 422, "invalid-query"},
+	{"a choice that is none", http.MethodPost, "/v1/classify?what_if=maybe", 422, "invalid-query"},
+	{"a choice that is empty", http.MethodPost, "/v1/classify?what_if=", 422, "invalid-query"},
 	{"parameter of a catalogue", http.MethodGet, "/v1/catalog/kinds?kind=cylinder", 422, "invalid-query"},
 	{"query with a bad escape", http.MethodPost, "/v1/classify?fields=%zz", 400, "bad-request"},
 	{"query with a semicolon", http.MethodGet, "/v1/catalog?a;b", 400, "bad-request"},
@@ -304,7 +310,7 @@ func TestBadRequests(t *testing.T) {
 			checkViolations(t, p)
 		})
 	}
-	if len(badRequests) != 31 {
+	if len(badRequests) != 37 {
 		t.Errorf("%d rows", len(badRequests))
 	}
 }

@@ -7,6 +7,7 @@ import (
 	"net"
 	"net/http"
 	"strconv"
+	"strings"
 	"sync"
 	"testing"
 	"time"
@@ -17,7 +18,10 @@ import (
 	"regimed/regime/kind"
 )
 
-// served serves a handler on the loopback interface and returns the address.
+// served serves a handler on the loopback interface and returns the address. Both
+// sides of a comparison are asked with what_if=false: what is measured is the
+// service around one classification. What the exploration costs on top is
+// measured by itself, in BenchmarkExploration.
 func served(b *testing.B, h http.Handler) string {
 	b.Helper()
 	l, err := net.Listen("tcp", "127.0.0.1:0")
@@ -27,8 +31,11 @@ func served(b *testing.B, h http.Handler) string {
 	server := &http.Server{Handler: h}
 	go server.Serve(l)
 	b.Cleanup(func() { server.Close() })
-	return "http://" + l.Addr().String() + "/v1/classify"
+	return "http://" + l.Addr().String() + "/v1/classify?what_if=false"
 }
+
+// explored is the same address without the parameter.
+func explored(url string) string { return strings.TrimSuffix(url, "?what_if=false") }
 
 // classifying is the whole server, with a log that is written and thrown away.
 func classifying() http.Handler {
@@ -57,8 +64,10 @@ func bare(length int) http.Handler {
 var client = &http.Client{Transport: &http.Transport{MaxIdleConnsPerHost: 64}}
 
 // ask sends the case once and returns the length of the answer.
-func ask(b *testing.B, url string) int {
-	r, err := client.Post(url, "application/json", bytes.NewReader([]byte(riser)))
+func ask(b *testing.B, url string) int { return askFor(b, url, riser) }
+
+func askFor(b *testing.B, url, body string) int {
+	r, err := client.Post(url, "application/json", strings.NewReader(body))
 	if err != nil {
 		b.Error(err)
 		return 0
@@ -127,13 +136,38 @@ func block(b *testing.B, url string) {
 	all.Wait()
 }
 
+// BenchmarkExploration reports how many times as long an answer takes that says
+// what would change it, and one of a case with an uncertain speed. All take turns,
+// one client.
+func BenchmarkExploration(b *testing.B) {
+	url := served(b, classifying())
+	uncertain := strings.Replace(riser, `"1.1 m/s"`, `"1.1 m/s +- 20 %"`, 1)
+	if uncertain == riser {
+		b.Fatal("the riser has another speed")
+	}
+	asked := []struct{ url, body string }{{url, riser}, {explored(url), riser}, {url, uncertain}}
+	var spent [3]time.Duration
+	for i := range b.N {
+		for j := range asked {
+			which := (i + j) % len(asked)
+			start := time.Now()
+			askFor(b, asked[which].url, asked[which].body)
+			spent[which] += time.Since(start)
+		}
+	}
+	b.ReportMetric(spent[1].Seconds()/spent[0].Seconds(), "with-what-if/plain")
+	b.ReportMetric(spent[2].Seconds()/spent[0].Seconds(), "uncertain/plain")
+	b.ReportMetric(spent[1].Seconds()/float64(b.N)*1e3, "ms/exploration")
+	b.ReportMetric(spent[2].Seconds()/float64(b.N)*1e3, "ms/spread")
+}
+
 // BenchmarkClassifyHandler is the service without the network.
 func BenchmarkClassifyHandler(b *testing.B) {
 	h := classifying()
 	w := &discarded{header: http.Header{}}
 	b.ReportAllocs()
 	for b.Loop() {
-		r, err := http.NewRequest(http.MethodPost, "/v1/classify", bytes.NewReader([]byte(riser)))
+		r, err := http.NewRequest(http.MethodPost, "/v1/classify?what_if=false", bytes.NewReader([]byte(riser)))
 		if err != nil {
 			b.Fatal(err)
 		}

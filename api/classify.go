@@ -1,20 +1,21 @@
 package api
 
 import (
+	"context"
 	"errors"
+	"fmt"
 	"io"
 	"mime"
 	"net"
 	"net/http"
-	"strconv"
 	"strings"
 	"sync"
 
 	"github.com/labstack/echo/v4"
 
 	"regimed/api/render"
-	"regimed/regime"
 	"regimed/regime/input"
+	"regimed/regime/whatif"
 )
 
 // space is the room that one request needs for its body and its answer.
@@ -48,7 +49,7 @@ func (p *spacePool) put(s *space) {
 // classify answers a case. Nothing here uses reflection, and both buffers are
 // used again: decoding and rendering keep no reference to them.
 func (s *Server) classify(c echo.Context) error {
-	only, err := answerFields(c)
+	only, options, err := classifyOptions(c, true)
 	if err != nil {
 		return err
 	}
@@ -67,13 +68,30 @@ func (s *Server) classify(c echo.Context) error {
 	if len(violations) > 0 {
 		return violated(invalidCase, "The case", violations)
 	}
-	answer, violations := regime.Classify(kase)
+	ctx, cancel := context.WithTimeout(c.Request().Context(), s.config.WriteTimeout*computing/writing)
+	defer cancel()
+	answer, violations, err := whatif.Classify(ctx, kase, options)
+	if err != nil {
+		return s.unfinished(err)
+	}
 	if len(violations) > 0 {
 		return violated(invalidCase, "The case", violations)
 	}
 	room.answer = render.AppendJSON(room.answer[:0], answer, only)
 	answer.Release()
 	return send(c, http.StatusOK, typeJSON, room.answer)
+}
+
+// Of the time for writing an answer, so many parts of so many may go into
+// computing it.
+const computing, writing = 3, 4
+
+// unfinished is the problem of an answer that was not computed to its end.
+func (s *Server) unfinished(err error) *Problem {
+	if errors.Is(err, context.DeadlineExceeded) {
+		return problem(tooLong, fmt.Sprintf("The answer was not ready within %s. Fewer samples, what_if=false or fewer fields take less.", s.config.WriteTimeout*computing/writing))
+	}
+	return problem(badRequest, "The client went away before the answer was ready.")
 }
 
 // acceptsJSON refuses a body that is not announced as plain JSON in UTF-8.
@@ -136,7 +154,7 @@ func (s *Server) readBody(c echo.Context, dst []byte) ([]byte, error) {
 
 func (s *Server) bodyTooLarge(c echo.Context) error {
 	c.Response().Header().Set(echo.HeaderConnection, "close")
-	return problem(tooLarge, "The body is larger than "+strconv.FormatInt(s.config.BodyLimit, 10)+" bytes.")
+	return largerThan(s.config.BodyLimit)
 }
 
 // appendAll reads to the end, into the room that dst has as far as it goes.

@@ -47,6 +47,9 @@ func init() {
 	}
 	openapi3filter.RegisterBodyDecoder(typeYAML, text)
 	openapi3filter.RegisterBodyDecoder(typeSchema, openapi3filter.JSONBodyDecoder)
+	openapi3filter.RegisterBodyDecoder(typeLines, text)
+	openapi3filter.RegisterBodyDecoder("text/csv", text)
+	openapi3filter.RegisterBodyDecoder("image/svg+xml", text)
 }
 
 // The contract holds against OpenAPI 3.1, its examples against its schemas.
@@ -108,7 +111,7 @@ func TestRoutesAndOperations(t *testing.T) {
 			t.Errorf("%s has no HEAD", o)
 		}
 	}
-	if len(operations) != 21 {
+	if len(operations) != 26 {
 		t.Errorf("%d operations", len(operations))
 	}
 }
@@ -162,7 +165,7 @@ func exampleRequests(t *testing.T, method, path string, op *openapi3.Operation) 
 			case p.In == "query" && p.Explode != nil && *p.Explode:
 				queries = []string{"?" + exploded(value.(map[string]any))}
 			case p.In == "query":
-				queries = append(queries, "?"+p.Name+"="+commas(value.([]any)))
+				queries = append(queries, "?"+p.Name+"="+commas(value))
 			}
 		}
 	}
@@ -201,7 +204,13 @@ func exploded(arguments map[string]any) string {
 	return query.Encode()
 }
 
-func commas(list []any) string {
+// commas writes a list as OpenAPI does that does not explode it, and a single
+// value as it is.
+func commas(value any) string {
+	list, isList := value.([]any)
+	if !isList {
+		return fmt.Sprint(value)
+	}
 	var parts []string
 	for _, x := range list {
 		parts = append(parts, fmt.Sprint(x))
@@ -214,8 +223,12 @@ func exampleBodies(t *testing.T, op *openapi3.Operation) [][]byte {
 	if op.RequestBody == nil {
 		return [][]byte{nil}
 	}
+	content := op.RequestBody.Value.Content["application/json"]
+	if content == nil {
+		return nil // a stream, which has a test of its own
+	}
 	var list [][]byte
-	for _, e := range op.RequestBody.Value.Content["application/json"].Examples {
+	for _, e := range content.Examples {
 		body, err := json.Marshal(e.Value.Value)
 		if err != nil {
 			t.Fatal(err)

@@ -6,6 +6,8 @@
 // openapi/openapi.yaml; tests hold the two against each other both ways.
 //
 //	POST /v1/classify            a case in, the answer out
+//	POST /v1/batch               cases in, a line each, answers out, a line each
+//	POST /v1/sweeps              a case and axes in, a row a point out
 //	GET  /v1/catalog             what the engine knows, by catalogue
 //	GET  /v1/catalog/{name}      one catalogue
 //	GET  /v1/canon/{name}        one canonical solution, arguments in the query

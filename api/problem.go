@@ -22,9 +22,9 @@ type Problem struct {
 	Title      string          `json:"title"`
 	Status     int             `json:"status"`
 	Detail     string          `json:"detail"`
-	Instance   string          `json:"instance"`         // the request, as a URN
-	Place      string          `json:"pointer,omitzero"` // of malformed JSON: where reading stopped
-	Offset     *int64          `json:"offset,omitzero"`  // of malformed JSON: after how many bytes
+	Instance   string          `json:"instance,omitzero"` // the request, as a URN; none in a line of a batch
+	Place      string          `json:"pointer,omitzero"`  // of malformed JSON: where reading stopped
+	Offset     *int64          `json:"offset,omitzero"`   // of malformed JSON: after how many bytes
 	Violations []ViolationItem `json:"violations,omitempty"`
 }
 

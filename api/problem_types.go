@@ -24,7 +24,7 @@ var (
 	malformedJSON = &ProblemType{ID: "malformed-json", Title: "The body is no JSON", Status: http.StatusBadRequest,
 		Doc: "The body can't be read as one strict JSON document in UTF-8. The offset counts the bytes before the place where reading stopped, and the pointer names the innermost value that had begun."}
 	badRequest = &ProblemType{ID: "bad-request", Title: "The request can't be read", Status: http.StatusBadRequest,
-		Doc: "The query is not encoded as a URL wants it, or the body broke off before its announced length."}
+		Doc: "The query is not encoded as a URL wants it, or the body broke off before its announced length or is not encoded as announced."}
 	notFound = &ProblemType{ID: "not-found", Title: "Nothing here", Status: http.StatusNotFound,
 		Doc: "No resource has this path or name. The detail names the nearest one where there is one."}
 	methodNotAllowed = &ProblemType{ID: "method-not-allowed", Title: "Wrong method", Status: http.StatusMethodNotAllowed,
@@ -34,7 +34,7 @@ var (
 	tooLarge = &ProblemType{ID: "payload-too-large", Title: "The body is too large", Status: http.StatusRequestEntityTooLarge,
 		Doc: "The body is larger than the server reads. A case is a few kilobytes; the limit is the operator's to set."}
 	unsupportedMedia = &ProblemType{ID: "unsupported-media-type", Title: "Wrong media type", Status: http.StatusUnsupportedMediaType,
-		Doc: "A case is sent as application/json in UTF-8, not compressed. The headers Accept-Post and Accept-Encoding say so too."}
+		Doc: "A case is sent as application/json in UTF-8, not compressed; a batch as application/x-ndjson in UTF-8, as it is or in gzip. The headers Accept-Post and Accept-Encoding say so too."}
 	invalidCase = &ProblemType{ID: "invalid-case", Title: "Invalid case", Status: http.StatusUnprocessableEntity, Codes: true,
 		Doc: "The body is JSON, but no case that can be computed. Every violation that was found is listed: its JSON Pointer into the body, a code, a sentence that says what would be right, and the value as received."}
 	invalidQuery = &ProblemType{ID: "invalid-query", Title: "Invalid query", Status: http.StatusUnprocessableEntity, Codes: true,
@@ -43,10 +43,14 @@ var (
 		Doc: "The server failed on a request that may well be right. The request id, in the instance and the header X-Request-ID, finds the cause in its log."}
 	unavailable = &ProblemType{ID: "unavailable", Title: "Not ready", Status: http.StatusServiceUnavailable,
 		Doc: "The server takes no new work, because it is about to stop."}
+	tooLong = &ProblemType{ID: "answer-took-too-long", Title: "The answer took too long", Status: http.StatusServiceUnavailable,
+		Doc: "The answer was not computed within the time that the server has for it. Ask for less: fewer samples of an uncertain input, what_if=false, or only the fields that are needed."}
+	tooManyPoints = &ProblemType{ID: "too-many-points", Title: "Too many points for one request", Status: http.StatusUnprocessableEntity,
+		Doc: "The sweep is right, and has more points than the server computes in one request; the limit is the operator's to set. Ask for its parts one after the other, with shards and index, or run it on the command line: regimed sweep --plan takes the same request, and can be stopped and resumed."}
 )
 
 var problemTypes = []*ProblemType{malformedJSON, badRequest, notFound, methodNotAllowed, requestTimeout, tooLarge,
-	unsupportedMedia, invalidCase, invalidQuery, internal, unavailable}
+	unsupportedMedia, invalidCase, invalidQuery, internal, unavailable, tooManyPoints}
 
 // codes are the codes of violations, with what they mean.
 var codes = []codeRecord{

@@ -5,6 +5,7 @@ import (
 	"fmt"
 	"net/url"
 	"reflect"
+	"strconv"
 	"strings"
 
 	"github.com/go-playground/validator/v10"
@@ -12,6 +13,7 @@ import (
 
 	"regimed/api/render"
 	"regimed/regime/input"
+	"regimed/regime/whatif"
 )
 
 // validate checks what comes in a query. Names in its errors are those of the
@@ -32,33 +34,66 @@ func isMember(f validator.FieldLevel) bool {
 	return err == nil
 }
 
-// classifyQuery are the parameters of a classification.
+// classifyQuery are the parameters of a classification. The bounds of samples are
+// those of package whatif.
 type classifyQuery struct {
-	Fields []string `query:"fields" validate:"max=32,dive,required,max=64,member"`
+	Fields  []string `query:"fields" validate:"max=32,dive,required,max=64,member"`
+	Samples *int     `query:"samples" validate:"omitempty,gte=64,lte=65536"`
+	WhatIf  *string  `query:"what_if" validate:"omitempty,oneof=true false"`
 }
 
-// answerFields reads which members of the answer are wanted.
-func answerFields(c echo.Context) (render.Fields, error) {
+// classifyOptions reads which members of the answer are wanted, and what is asked
+// about the case besides. explore says whether it is explored where the query
+// does not say.
+func classifyOptions(c echo.Context, explore bool) (render.Fields, whatif.Options, error) {
 	if c.Request().URL.RawQuery == "" {
-		return render.All, nil
+		return render.All, whatif.Options{Explore: explore}, nil
 	}
-	values, violations, err := parameters(c, "fields")
+	values, violations, err := parameters(c, "fields", "samples", "what_if")
 	if err != nil {
-		return 0, err
+		return 0, whatif.Options{}, err
 	}
 	var q classifyQuery
-	if values.Has("fields") {
-		q.Fields = strings.Split(values.Get("fields"), ",")
-	}
+	violations = append(violations, q.read(values)...)
 	violations = append(violations, check(&q, values)...)
 	if len(violations) > 0 {
-		return 0, violated(invalidQuery, "The query", violations)
+		return 0, whatif.Options{}, violated(invalidQuery, "The query", violations)
 	}
 	only, err := render.ParseFields(q.Fields)
 	if err != nil {
-		return 0, problem(invalidQuery, "The answer has no such member.")
+		return 0, whatif.Options{}, problem(invalidQuery, "The answer has no such member.")
 	}
-	return only, nil
+	if q.WhatIf != nil {
+		explore = *q.WhatIf == "true"
+	}
+	o := whatif.Options{Explore: explore && only.Explored()}
+	if q.Samples != nil {
+		o.Samples = *q.Samples
+	}
+	return only, o, nil
+}
+
+// read reads the parameters as they stand; what is no number is a violation.
+func (q *classifyQuery) read(values url.Values) []input.Violation {
+	if values.Has("fields") {
+		q.Fields = strings.Split(values.Get("fields"), ",")
+	}
+	if values.Has("what_if") {
+		text := values.Get("what_if")
+		q.WhatIf = &text
+	}
+	if !values.Has("samples") {
+		return nil
+	}
+	text := values.Get("samples")
+	n, err := strconv.Atoi(text)
+	if err != nil {
+		var bad input.Violations
+		bad.Add("/samples", input.WrongType, fmt.Sprintf("samples is a whole number from %d to %d.", whatif.MinSamples, whatif.MaxSamples), jsonString(text))
+		return bad.List()
+	}
+	q.Samples = &n
+	return nil
 }
 
 // noParameters refuses every parameter.
@@ -126,7 +161,8 @@ func check(q any, values url.Values) []input.Violation {
 }
 
 func codeOf(tag string) input.Code {
-	if tag == "member" {
+	switch tag {
+	case "member", "oneof":
 		return input.UnknownChoice
 	}
 	return input.OutOfRange
@@ -139,6 +175,12 @@ func sentenceOf(name, tag, bound, value string) string {
 		return err.Error()
 	case "required":
 		return name + " has an empty element."
+	case "gte":
+		return name + " must be at least " + bound + "."
+	case "lte":
+		return name + " must be at most " + bound + "."
+	case "oneof":
+		return name + " is " + strings.ReplaceAll(bound, " ", " or ") + "."
 	}
 	return fmt.Sprintf("%s is too long: at most %s are read.", name, bound)
 }

@@ -11,6 +11,11 @@ import (
 // and nowhere else.
 func (s *Server) routes() {
 	s.echo.POST("/v1/classify", s.classify)
+	s.echo.POST("/v1/sweeps", s.sweep)
+	s.echo.POST("/v1/batch", s.batch)
+	s.echo.POST("/v1/compare", s.compare)
+	s.echo.POST("/v1/scale", s.scale)
+	s.echo.POST("/v1/map", s.regimeMap)
 	s.get("/v1/catalog", plainQuery(s.fixed.index))
 	for _, name := range CatalogNames() {
 		s.get("/v1/catalog/"+name, plainQuery(s.fixed.catalogs[name]))

@@ -20,18 +20,21 @@ import (
 type Config struct {
 	Logger            *slog.Logger  // access log and faults; none: silent
 	BodyLimit         int64         // largest request body in bytes; 1 MiB
+	SweepLimit        int64         // most points of a sweep in one request; a million
 	ReadHeaderTimeout time.Duration // 5 s
 	ReadTimeout       time.Duration // 15 s, header and body together
 	WriteTimeout      time.Duration // 30 s
 	IdleTimeout       time.Duration // 120 s
+	StreamIdleTimeout time.Duration // of a batch, which has no other: how long it may stand still; 60 s
 	DrainDelay        time.Duration // from "not ready" to the end of accepting; none
-	ShutdownTimeout   time.Duration // for requests in flight; 15 s
+	ShutdownTimeout   time.Duration // for requests in flight; 15 s. A batch is told to end after half of it
 }
 
 // Limits that no operator has a reason to change.
 const (
-	defaultBodyLimit = 1 << 20
-	maxHeaderBytes   = 32 << 10
+	defaultBodyLimit  = 1 << 20
+	defaultSweepLimit = 1_000_000
+	maxHeaderBytes    = 32 << 10
 )
 
 func (c Config) withDefaults() Config {
@@ -41,10 +44,14 @@ func (c Config) withDefaults() Config {
 	if c.BodyLimit <= 0 {
 		c.BodyLimit = defaultBodyLimit
 	}
+	if c.SweepLimit <= 0 {
+		c.SweepLimit = defaultSweepLimit
+	}
 	orDefault(&c.ReadHeaderTimeout, 5*time.Second)
 	orDefault(&c.ReadTimeout, 15*time.Second)
 	orDefault(&c.WriteTimeout, 30*time.Second)
 	orDefault(&c.IdleTimeout, 120*time.Second)
+	orDefault(&c.StreamIdleTimeout, 60*time.Second)
 	orDefault(&c.ShutdownTimeout, 15*time.Second)
 	return c
 }
@@ -63,6 +70,9 @@ type Server struct {
 	fixed    documents
 	spaces   spacePool
 	draining atomic.Bool
+
+	streams    context.Context // ends when no stream may go on reading
+	endStreams context.CancelFunc
 }
 
 // New makes a server. Everything that does not depend on a request is written
@@ -70,6 +80,7 @@ type Server struct {
 func New(config Config) *Server {
 	s := &Server{config: config.withDefaults(), echo: echo.New(), schema: kind.Schema()}
 	s.fixed = newDocuments()
+	s.streams, s.endStreams = context.WithCancel(context.Background())
 	s.echo.HTTPErrorHandler = s.answerError
 	// An address is neither logged nor trusted: behind a proxy it would be
 	// the proxy's, and in a forwarded header it is whatever a caller says.
@@ -113,6 +124,9 @@ func (s *Server) Run(ctx context.Context, listener net.Listener) error {
 	wait(s.config.DrainDelay, failed)
 	limit, cancel := context.WithTimeout(context.Background(), s.config.ShutdownTimeout)
 	defer cancel()
+	// A stream could outlast any limit. It gets half of this one to come to its
+	// end, and the other half to answer what it has read and to say how far it came.
+	defer time.AfterFunc(s.config.ShutdownTimeout/2, s.endStreams).Stop()
 	if err := server.Shutdown(limit); err != nil {
 		return errors.Join(err, server.Close())
 	}

@@ -38,15 +38,19 @@ var allowed = map[string][]string{
 	"regime/setup": {"regime/canon", "regime/cite", "regime/group", "regime/ladder", "regime/scale", "units"},
 	"regime": {"regime/assumption", "regime/finding", "regime/group", "regime/input", "regime/kind", "regime/ladder",
 		"regime/scale", "regime/setup"},
-	"regime/whatif": {"regime", "regime/assumption", "regime/finding", "regime/group", "regime/input", "regime/ladder",
-		"regime/scale", "regime/setup", "units"},
+	"regime/similar": {"regime", "regime/assumption", "regime/finding", "regime/group", "regime/input", "regime/kind", "regime/ladder",
+		"regime/scale", "units"},
+	"regime/whatif": {"regime", "regime/assumption", "regime/finding", "regime/group", "regime/input", "regime/kind",
+		"regime/ladder", "regime/scale", "regime/setup", "units"},
 }
 
 // outside are modules of others that the core may import, by package.
 var outside = map[string][]string{
-	"units":        {"gonum.org/v1/gonum/"},
-	"regime/canon": {"gonum.org/v1/gonum/"},
-	"regime/input": {"github.com/go-json-experiment/json", "github.com/go-playground/validator/"},
+	"units":          {"gonum.org/v1/gonum/"},
+	"regime/canon":   {"gonum.org/v1/gonum/"},
+	"regime/input":   {"github.com/go-json-experiment/json", "github.com/go-playground/validator/"},
+	"regime/similar": {"github.com/go-json-experiment/json"},
+	"regime/whatif":  {"github.com/go-json-experiment/json", "gonum.org/v1/gonum/"},
 }
 
 // unitless are the packages that judge: none of them may reach, over however

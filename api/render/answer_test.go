@@ -136,7 +136,7 @@ func dry(t testing.TB) *regime.Answer {
 // answers are all of them, and the classified ones, by name.
 func answers(t testing.TB) map[string]*regime.Answer {
 	t.Helper()
-	all := map[string]*regime.Answer{"panel": panel(t), "riser": riser(t), "dry": dry(t)}
+	all := map[string]*regime.Answer{"panel": panel(t), "riser": riser(t), "dry": dry(t), "uncertain": spread(t), "beyond": beyond(t)}
 	for name, doc := range classified {
 		all["classified "+name] = classify(t, doc)
 	}

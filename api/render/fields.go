@@ -21,6 +21,8 @@ const (
 	Groups
 	Findings
 	Recommendation
+	Uncertainty
+	TurningPoints
 	Setup
 	Frequencies
 	Modes
@@ -34,13 +36,16 @@ const (
 const All = fieldsEnd - 1
 
 var fieldNames = []string{"digest", "engine", "title", "reference", "kind", "study", "scales", "groups", "findings",
-	"recommendation", "setup", "frequencies", "modes", "warnings", "cautions"}
+	"recommendation", "uncertainty", "turning_points", "setup", "frequencies", "modes", "warnings", "cautions"}
 
 // FieldNames lists the top-level members by name, in the order of the answer.
 func FieldNames() []string { return append([]string(nil), fieldNames...) }
 
 // Has reports whether a member is in the set.
 func (f Fields) Has(member Fields) bool { return f&member != 0 }
+
+// Explored reports whether a member is in the set that exploring a case adds to.
+func (f Fields) Explored() bool { return f.Has(Findings | TurningPoints) }
 
 // UnknownFieldsError names the members that were asked for and do not exist.
 type UnknownFieldsError struct {

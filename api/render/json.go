@@ -39,6 +39,12 @@ func AppendJSON(dst []byte, a *regime.Answer, only Fields) []byte {
 	if only.Has(Recommendation) {
 		dst = appendRecommendation(name(dst, "recommendation"), a)
 	}
+	if only.Has(Uncertainty) && a.Spread != nil {
+		dst = appendUncertainty(name(dst, "uncertainty"), a)
+	}
+	if only.Has(TurningPoints) && a.Turns != nil {
+		dst = appendTurns(name(dst, "turning_points"), a)
+	}
 	if only.Has(Setup) {
 		dst = appendSetup(name(dst, "setup"), a)
 	}
@@ -143,6 +149,7 @@ func appendGroup(dst []byte, a *regime.Answer, id group.ID, w *written) []byte {
 	if b := groupBand(a, id); b != "" {
 		dst = member(dst, "band", b)
 	}
+	dst = appendGroupQuantiles(dst, a, id)
 	switch {
 	case !a.Groups.Has(id):
 		dst, start := open(name(dst, "because"))
@@ -272,9 +279,10 @@ func element(dst []byte, s string) []byte { return text(comma(dst), s) }
 
 func flag(dst []byte, n string, b bool) []byte { return strconv.AppendBool(name(dst, n), b) }
 
-// number appends a number in the shortest form, null where it is not finite.
-func number(dst []byte, n string, x float64) []byte {
-	dst = name(dst, n)
+func number(dst []byte, n string, x float64) []byte { return value(name(dst, n), x) }
+
+// value appends a number in the shortest form, null where it is not finite.
+func value(dst []byte, x float64) []byte {
 	switch {
 	case math.IsNaN(x) || math.IsInf(x, 0):
 		return append(dst, "null"...)

@@ -12,7 +12,9 @@ func appendFindings(dst []byte, a *regime.Answer) []byte {
 	dst = append(dst, '{')
 	for i := range assumption.Catalogue {
 		dst = append(comma(dst), findingHeads[i]...)
-		dst = append(appendFinding(dst, a, &a.Findings[i]), '}')
+		dst = appendFinding(dst, a, &a.Findings[i])
+		dst = appendFindingSpread(dst, a, i)
+		dst = append(appendDrivers(dst, a, i), '}')
 	}
 	return append(dst, '}')
 }

@@ -35,7 +35,7 @@ func appendRecommendation(dst []byte, a *regime.Answer) []byte {
 		dst = member(dst, "class", r.Beside.ID)
 		dst = append(member(dst, "title", r.Beside.Title), '}')
 	}
-	return append(dst, '}')
+	return append(appendClassProbabilities(dst, a), '}')
 }
 
 func appendJustification(dst []byte, a *regime.Answer) []byte {

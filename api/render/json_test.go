@@ -53,7 +53,8 @@ func keysOf(dst map[string]bool, path string, v any) {
 		}
 	case map[string]any:
 		for k, e := range v {
-			if path == "scales" || path == "groups" || path == "findings" || path == "setup" || strings.HasSuffix(path, ".with") {
+			if path == "scales" || path == "groups" || path == "findings" || path == "setup" || strings.HasSuffix(path, ".with") ||
+				strings.HasSuffix(path, ".probability") || strings.HasSuffix(path, ".standard_error") {
 				k = "*"
 			}
 			next := strings.TrimPrefix(path+"."+k, ".")
@@ -96,7 +97,14 @@ setup.* setup.*.governs setup.*.rule setup.*.source setup.*.title setup.*.unit s
 findings.*.published findings.*.published[].clause findings.*.published[].criterion findings.*.published[].edition
 findings.*.published[].formula findings.*.published[].limit findings.*.published[].picked findings.*.published[].source
 findings.*.published[].standard findings.*.published[].utilisation findings.*.published[].verdict
+findings.*.drivers findings.*.drivers[].input findings.*.drivers[].sensitivity
+turning_points turning_points[].class turning_points[].direction turning_points[].factor turning_points[].finding turning_points[].gauge
+turning_points[].input turning_points[].pointer turning_points[].sentence turning_points[].unit turning_points[].value turning_points[].verdict
 recommendation.beside recommendation.beside.class recommendation.beside.title study.criterion
+groups.*.quantiles findings.*.quantiles findings.*.probability findings.*.probability.* findings.*.standard_error findings.*.standard_error.*
+recommendation.probability recommendation.probability.* recommendation.standard_error recommendation.standard_error.*
+uncertainty uncertainty.inputs uncertainty.inputs[].input uncertainty.inputs[].pointer uncertainty.inputs[].form uncertainty.inputs[].value
+uncertainty.inputs[].spread uncertainty.inputs[].unit uncertainty.samples uncertainty.outside uncertainty.settled
 `)
 
 func decode(t testing.TB, a *regime.Answer) map[string]any {
@@ -326,7 +334,7 @@ func TestParseFields(t *testing.T) {
 			t.Errorf("%s: %b, %v", name, f, err)
 		}
 	}
-	if len(FieldNames()) != 15 || All != 1<<15-1 {
+	if len(FieldNames()) != 17 || All != 1<<17-1 {
 		t.Errorf("%d members, all is %b", len(FieldNames()), All)
 	}
 }

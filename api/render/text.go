@@ -37,7 +37,9 @@ func AppendText(dst []byte, a *regime.Answer, o TextOptions) []byte {
 	p.recommendation(a)
 	p.ladder(a)
 	p.conditions(a)
+	p.spread(a)
 	p.assumptions(a)
+	p.turns(a)
 	p.groups(a)
 	p.scales(a)
 	p.modes(a)
@@ -282,7 +284,11 @@ func (p *page) warnings(a *regime.Answer) {
 	p.heading("Warnings")
 	for i := range a.Warnings {
 		w := &a.Warnings[i]
-		p.room = append(append(append(p.room[:0], w.Pointer...), ": "...), w.Sentence...)
+		p.room = p.room[:0]
+		if w.Pointer != "" {
+			p.room = append(append(p.room, w.Pointer...), ": "...)
+		}
+		p.room = append(p.room, w.Sentence...)
 		p.wrap(yellow, "  - ", p.room)
 	}
 }
@@ -367,6 +373,7 @@ func (p *page) group(a *regime.Answer, id group.ID) {
 		p.room = append(append(append(p.room, " ["...), b...), ']')
 	}
 	p.room = p.with(p.room, a, id)
+	p.room = appendGroupSpread(p.room, a, id)
 	p.wrap(plain, string(lead), p.room)
 }
 

@@ -2,6 +2,7 @@ package main
 
 import (
 	"cmp"
+	"context"
 	"errors"
 	"fmt"
 	"io"
@@ -14,6 +15,7 @@ import (
 
 	"regimed/regime"
 	"regimed/regime/input"
+	"regimed/regime/whatif"
 )
 
 func newCheck() *cobra.Command {
@@ -32,6 +34,8 @@ func newCheck() *cobra.Command {
   reynolds>1e4                  a group
   scale.speed_critical<3        a scale, in SI
   setup.time_step_structure<0.1 a figure for setting up, in SI
+  probability.added-mass>0.9    how likely a class is, where an input is
+                                uncertain
 
 Names take = and !=, and alternatives by |. Numbers take ~ (within 2 %), = and
 != (the same to nine digits), <, <=, > and >=; null stands for a number that
@@ -59,7 +63,7 @@ are not, 2 on bad input or an unknown name.`,
 			}
 			c := &checker{out: cmd.OutOrStdout(), err: cmd.ErrOrStderr(), quiet: quiet, common: common}
 			for _, file := range files {
-				c.check(file, cmd.InOrStdin())
+				c.check(cmd.Context(), file, cmd.InOrStdin())
 			}
 			return c.finish(len(files))
 		},
@@ -98,13 +102,13 @@ type checker struct {
 	failed             error // of writing
 }
 
-func (c *checker) check(file string, stdin io.Reader) {
+func (c *checker) check(ctx context.Context, file string, stdin io.Reader) {
 	d, err := readDocument(file, stdin)
 	if err != nil {
 		c.refuse(err)
 		return
 	}
-	a, list, err := c.prepare(d)
+	a, list, err := c.prepare(ctx, d)
 	if err != nil {
 		c.refuse(err)
 		return
@@ -136,17 +140,22 @@ func (t tally) String() string {
 	return strings.Join(parts, ", ")
 }
 
-// prepare classifies the case of a document and reads its expectations.
-func (c *checker) prepare(d *document) (*regime.Answer, []expectation, error) {
+// prepare classifies the case of a document and reads its expectations. How the
+// answer spreads is found out only where it is asked for.
+func (c *checker) prepare(ctx context.Context, d *document) (*regime.Answer, []expectation, error) {
 	own, bad := ownExpectations(d)
-	a, err := d.classify()
+	list := append(append([]expectation{}, c.common...), own...)
+	answer := d.classify
+	if slices.ContainsFunc(list, func(e expectation) bool { return e.spread }) {
+		answer = func() (*regime.Answer, error) { return d.explore(ctx, whatif.Options{}) }
+	}
+	a, err := answer()
 	if len(bad) > 0 {
 		err = errors.Join(err, d.refuseAll(bad))
 	}
 	if err != nil {
 		return nil, nil, err
 	}
-	list := append(append([]expectation{}, c.common...), own...)
 	if len(list) == 0 {
 		return nil, nil, refuse(d.name, 0, "Nothing is expected of it: give --expect, or expectations beside the case.")
 	}

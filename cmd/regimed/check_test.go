@@ -185,6 +185,33 @@ func TestExpectationsThatAreRefused(t *testing.T) {
 	}
 }
 
+// Probabilities can be expected of an uncertain case; a certain one has none.
+func TestCheckProbabilities(t *testing.T) {
+	certain := file(t, "pile.yaml", pileYAML)
+	unsure := file(t, "unsure.yaml", strings.Replace(pileYAML, "frequency_dry: 2 Hz", "frequency_dry: 2 Hz +- 20 %", 1))
+	rows := []struct {
+		file, expect string
+		status       int
+		out          string
+	}{
+		{unsure, "probability.added-mass>0.9", statusMet, "ok "},
+		{unsure, "probability.dry-structure=0", statusMet, "ok "},
+		{unsure, "probability.added-mass<0.5", statusUnmet, "FAIL "},
+		{certain, "probability.added-mass>0.9", statusUnmet, "FAIL "},
+		{certain, "probability.added-mass=null", statusMet, "ok "},
+		{unsure, "probability.added-mas>0.9", statusRefuse, ""},
+	}
+	for _, row := range rows {
+		got := regimed("", "check", row.file, "-e", row.expect)
+		if got.status != row.status || !strings.HasPrefix(got.out, row.out) {
+			t.Errorf("%s: %+v", row.expect, got)
+		}
+	}
+	if len(rows) != 6 {
+		t.Errorf("%d rows", len(rows))
+	}
+}
+
 // A subject must mean one thing only.
 func TestSubjectsAreUnique(t *testing.T) {
 	all := whatif.ColumnNames()

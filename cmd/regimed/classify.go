@@ -8,6 +8,7 @@ import (
 
 	"regimed/api/render"
 	"regimed/regime"
+	"regimed/regime/whatif"
 )
 
 // formats are the forms of an answer; the first is the default.
@@ -17,6 +18,7 @@ func newClassify() *cobra.Command {
 	var format string
 	var fields []string
 	var page render.TextOptions
+	options := whatif.Options{Explore: true}
 	cmd := &cobra.Command{
 		Use:   "classify FILE|-",
 		Short: "Answer a case: the cheapest class of model that holds, and why",
@@ -28,6 +30,12 @@ The ending of the name says which of the two it is: .json, .yaml or .yml. Withou
 one a document that begins with { is JSON, and any other YAML. YAML is read by
 the core schema of its version 1.2: 2 m is a string, yes and on are strings.
 
+Where inputs are uncertain, as in speed: 1.4 m/s +- 20 %, the case is judged for
+up to --samples draws of them, fewer where the probability of every class is
+known to 1 % sooner: the answer then says how its numbers spread and how likely
+each verdict and class is. --what-if=false leaves out what would change the
+answer, which takes most of the time.
+
 What is wrong with a case is said all at once, one violation a line: file, line,
 JSON Pointer, code, and a sentence that says what would be right. Status 2.`,
 		Example: `  regimed classify riser.yaml
@@ -37,15 +45,19 @@ JSON Pointer, code, and a sentence that says what would be right. Status 2.`,
 		Args:              arguments(1, 1, "name one file, or - for standard input"),
 		ValidArgsFunction: completeCases,
 		RunE: func(cmd *cobra.Command, args []string) error {
-			write, err := writerOf(format, fields, page)
+			write, only, err := writerOf(format, fields, page)
 			if err != nil {
+				return err
+			}
+			if err := knownSamples(options.Samples); err != nil {
 				return err
 			}
 			d, err := readDocument(args[0], cmd.InOrStdin())
 			if err != nil {
 				return said(cmd, err)
 			}
-			a, err := d.classify()
+			options.Explore = options.Explore && only.Explored()
+			a, err := d.explore(cmd.Context(), options)
 			if err != nil {
 				return said(cmd, err)
 			}
@@ -55,10 +67,13 @@ JSON Pointer, code, and a sentence that says what would be right. Status 2.`,
 	}
 	cmd.Flags().StringVarP(&format, "format", "f", formats[0], "form of the answer: text or json")
 	cmd.Flags().StringSliceVar(&fields, "fields", nil, "members of the JSON answer, separated by commas (default all)")
+	cmd.Flags().IntVar(&options.Samples, "samples", whatif.DefaultSamples, "most draws of uncertain inputs")
+	cmd.Flags().BoolVar(&options.Explore, "what-if", true, "say what would change the answer")
 	cmd.Flags().IntVar(&page.Width, "width", 96, "columns of the text, from 72 to 160")
 	cmd.Flags().BoolVar(&page.Colour, "colour", false, "set the text in the colours of a terminal")
 	completeFlag(cmd, "format", completeFrom(func() []string { return formats }))
 	completeFlag(cmd, "fields", completeFrom(render.FieldNames))
+	completeFlag(cmd, "samples", cobra.NoFileCompletions)
 	completeFlag(cmd, "width", cobra.NoFileCompletions)
 	return cmd
 }
@@ -69,22 +84,30 @@ func said(cmd *cobra.Command, err error) error {
 	return status(statusRefuse)
 }
 
-// writerOf returns what writes an answer in a format.
-func writerOf(format string, fields []string, page render.TextOptions) (func(*regime.Answer) []byte, error) {
+// writerOf returns what writes an answer in a format, and the members that it
+// writes.
+func writerOf(format string, fields []string, page render.TextOptions) (func(*regime.Answer) []byte, render.Fields, error) {
 	if err := knownFormat(format); err != nil {
-		return nil, err
+		return nil, 0, err
 	}
 	if format == "json" {
 		only, err := render.ParseFields(fields)
 		if err != nil {
-			return nil, &usageError{err}
+			return nil, 0, &usageError{err}
 		}
-		return func(a *regime.Answer) []byte { return render.AppendJSON(nil, a, only) }, nil
+		return func(a *regime.Answer) []byte { return render.AppendJSON(nil, a, only) }, only, nil
 	}
 	if len(fields) > 0 {
-		return nil, &usageError{fmt.Errorf("--fields needs --format json")}
+		return nil, 0, &usageError{fmt.Errorf("--fields needs --format json")}
 	}
-	return func(a *regime.Answer) []byte { return render.AppendText(nil, a, page) }, nil
+	return func(a *regime.Answer) []byte { return render.AppendText(nil, a, page) }, render.All, nil
+}
+
+func knownSamples(n int) error {
+	if n >= whatif.MinSamples && n <= whatif.MaxSamples {
+		return nil
+	}
+	return &usageError{fmt.Errorf("--samples is from %d to %d, not %d", whatif.MinSamples, whatif.MaxSamples, n)}
 }
 
 func knownFormat(format string) error {

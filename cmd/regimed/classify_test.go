@@ -32,6 +32,10 @@ func TestClassifyIsWhatTheServiceAnswers(t *testing.T) {
 	situation := file(t, "situation.yml", "title: A pile\nsource: invented\nexpect: [class=added-mass]\ncase:\n"+indent(pileYAML))
 	want := served(t, http.MethodPost, "/v1/classify", pileJSON)
 	trimmed := served(t, http.MethodPost, "/v1/classify?fields=kind,recommendation", pileJSON)
+	unsure := strings.Replace(pileJSON, `"2 Hz"`, `"2 Hz +- 20 %"`, 1)
+	spread := served(t, http.MethodPost, "/v1/classify", unsure)
+	few := served(t, http.MethodPost, "/v1/classify?samples=100&what_if=false", unsure)
+	point := served(t, http.MethodPost, "/v1/classify?what_if=false", pileJSON)
 	rows := []struct {
 		stdin string
 		args  []string
@@ -44,6 +48,10 @@ func TestClassifyIsWhatTheServiceAnswers(t *testing.T) {
 		{pileYAML, []string{"-"}, want},
 		{"", []string{asYAML, "--fields", "kind,recommendation"}, trimmed},
 		{"", []string{asYAML, "--fields", "recommendation", "--fields", "kind"}, trimmed},
+		{unsure, []string{"-"}, spread},
+		{unsure, []string{"-", "--samples", "1024"}, spread},
+		{unsure, []string{"-", "--samples", "100", "--what-if=false"}, few},
+		{pileJSON, []string{"-", "--what-if=false"}, point},
 	}
 	ran := 0
 	for _, row := range rows {
@@ -53,8 +61,11 @@ func TestClassifyIsWhatTheServiceAnswers(t *testing.T) {
 		}
 		ran++
 	}
-	if ran != 7 {
+	if ran != 11 {
 		t.Errorf("ran %d rows", ran)
+	}
+	if !strings.Contains(spread, `"uncertainty":{`) || len(few) >= len(spread) || len(point) >= len(want) {
+		t.Errorf("the service answers %.200s", spread)
 	}
 	if v := jsontext.Value(want); !v.IsValid() || len(trimmed) >= len(want) {
 		t.Errorf("the service answers %.200s", want)
@@ -82,6 +93,16 @@ func TestClassifyAsText(t *testing.T) {
 	}
 	if narrow := regimed("", "classify", "--width", "72", path); narrow.out == plain.out {
 		t.Error("--width changes nothing")
+	}
+}
+
+// Numbers of samples that can't be are refused before anything is read.
+func TestClassifyRefusesSamples(t *testing.T) {
+	for _, n := range []string{"0", "63", "65537", "-1", "many"} {
+		got := regimed("", "classify", "--samples", n, "never-read.yaml")
+		if got.status != statusRefuse || got.out != "" || !strings.Contains(got.errOut, "samples") {
+			t.Errorf("%s: %+v", n, got)
+		}
 	}
 }
 

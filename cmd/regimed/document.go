@@ -3,6 +3,7 @@ package main
 import (
 	"bytes"
 	"cmp"
+	"context"
 	"errors"
 	"fmt"
 	"io"
@@ -16,6 +17,7 @@ import (
 	"regimed/regime"
 	"regimed/regime/input"
 	"regimed/regime/kind"
+	"regimed/regime/whatif"
 )
 
 // document is a file that was read: a case, or a situation that holds a case
@@ -31,6 +33,7 @@ type document struct {
 	at     lines
 	within string // pointer of the case inside the document: "" or "/case"
 	raw    []byte // the case as JSON, exactly as a client would send it
+	whole  bool   // it is no situation, even with a case in it
 	expect []string
 	bad    []input.Violation // pointers into the document
 }
@@ -83,6 +86,10 @@ func (d *document) place(line int) string {
 
 // readDocument reads a file, or standard input for "-".
 func readDocument(file string, stdin io.Reader) (*document, error) {
+	return readInto(&document{}, file, stdin)
+}
+
+func readInto(d *document, file string, stdin io.Reader) (*document, error) {
 	name := file
 	if file == "-" {
 		name = "(standard input)"
@@ -91,7 +98,7 @@ func readDocument(file string, stdin io.Reader) (*document, error) {
 	if err != nil {
 		return nil, refuse(name, 0, plainError(err))
 	}
-	d := &document{name: name}
+	d.name = name
 	if err := d.parse(data, strings.ToLower(filepath.Ext(file))); err != nil {
 		return nil, err
 	}
@@ -181,7 +188,7 @@ func (d *document) yaml(data []byte) error {
 func (d *document) split(data []byte) error {
 	d.raw = data
 	dec := jsontext.NewDecoder(bytes.NewBuffer(data), jsontext.AllowDuplicateNames(true))
-	if dec.PeekKind() != '{' || !hasCase(data) {
+	if d.whole || dec.PeekKind() != '{' || !hasCase(data) {
 		return nil
 	}
 	if _, err := dec.ReadToken(); err != nil {
@@ -294,9 +301,8 @@ func didYouMean(name string, known []string) string {
 	return " Did you mean " + near[0] + "?"
 }
 
-// classify answers the case of a document, or returns everything that is wrong
-// with it.
-func (d *document) classify() (*regime.Answer, error) {
+// decode reads the case of a document, or returns everything that is wrong with it.
+func (d *document) decode() (*input.Case, error) {
 	c, violations, err := input.Decode(d.raw, kind.Schema())
 	var syntax *input.SyntaxError
 	if errors.As(err, &syntax) {
@@ -308,7 +314,33 @@ func (d *document) classify() (*regime.Answer, error) {
 	if bad := d.merge(violations); len(bad) > 0 {
 		return nil, d.refuseAll(bad)
 	}
+	return c, nil
+}
+
+// classify answers the case of a document, or returns everything that is wrong
+// with it.
+func (d *document) classify() (*regime.Answer, error) {
+	c, err := d.decode()
+	if err != nil {
+		return nil, err
+	}
 	a, violations := regime.Classify(c)
+	if len(violations) > 0 {
+		return nil, d.refuseAll(d.merge(violations))
+	}
+	return a, nil
+}
+
+// explore is classify with what varying the inputs adds.
+func (d *document) explore(ctx context.Context, o whatif.Options) (*regime.Answer, error) {
+	c, err := d.decode()
+	if err != nil {
+		return nil, err
+	}
+	a, violations, err := whatif.Classify(ctx, c, o)
+	if err != nil {
+		return nil, refuse(d.name, 0, "The answer was not computed to its end: "+err.Error()+".")
+	}
 	if len(violations) > 0 {
 		return nil, d.refuseAll(d.merge(violations))
 	}

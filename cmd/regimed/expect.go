@@ -21,6 +21,7 @@ import (
 //	reynolds>1e4                            a group
 //	scale.speed_critical<3                  a scale, in SI
 //	setup.time_step_structure~1e-3          a figure for setting up, in SI
+//	probability.added-mass>0.9              how probable a class is, where an input is uncertain
 //
 // Names take = and !=, and alternatives by |. Numbers take ~ (within 2 %), =
 // and != (the same but for the noise of arithmetic), <, <=, > and >=; and the
@@ -28,6 +29,8 @@ import (
 type expectation struct {
 	text string
 	met  func(a *regime.Answer) (bool, string) // whether it is met, and what there is
+
+	spread bool // it asks how the answer spreads
 }
 
 // question is what an expectation asks of an answer: the class, an axis, an
@@ -64,6 +67,7 @@ func parseExpectation(text string) (expectation, error) {
 	}
 	e := expectation{text: text}
 	column, err := whatif.FindColumn(subject)
+	e.spread = column.NeedsSpread()
 	switch {
 	case err != nil:
 	case column.Text != nil:

@@ -11,9 +11,10 @@ import (
 
 // The statuses with which the program ends.
 const (
-	statusMet    = 0 // it did what was asked
-	statusUnmet  = 1 // an expectation is not met
-	statusRefuse = 2 // bad input, an unknown name, a wrong use
+	statusMet         = 0 // it did what was asked
+	statusUnmet       = 1 // an expectation is not met
+	statusRefuse      = 2 // bad input, an unknown name, a wrong use
+	statusInterrupted = 3 // it was stopped: neither wrong nor done
 )
 
 // status ends the program after everything was said already.
@@ -61,11 +62,15 @@ geometry, material, a frequency, a fluid, a speed. It computes the
 dimensionless groups, prices every modelling simplification by a solved
 problem, and recommends the cheapest class of model that holds.
 
-Statuses: 0 done or all expectations met; 1 an expectation is not met;
-2 bad input, an unknown name or a wrong use.`,
+Statuses: 0 done or all expectations met; 1 an expectation is not met, or
+a model cannot keep what it should; 2 bad input, an unknown name or a wrong use;
+3 interrupted.`,
 		Example: `  regimed classify riser.yaml
   regimed classify --format json --fields recommendation riser.yaml
+  regimed batch cases.ndjson -o answers.ndjson
   regimed check --expect class=added-mass riser.yaml
+  regimed sweep riser.yaml --axis 'flow.speed=0.1..10 m/s:200:log'
+  regimed scale riser.yaml --length 1:40 --keep froude
   regimed canon OscillatingCylinder 36
   regimed catalog kinds
   regimed serve`,
@@ -73,7 +78,7 @@ Statuses: 0 done or all expectations met; 1 an expectation is not met;
 		SilenceUsage:  true,
 	}
 	root.SetFlagErrorFunc(func(_ *cobra.Command, err error) error { return &usageError{err} })
-	root.AddCommand(newServe(), newClassify(), newCheck(), newCanon(), newCatalog(), newSchema(), newVersion())
+	root.AddCommand(newServe(), newClassify(), newBatch(), newCheck(), newSweep(), newMap(), newCompare(), newScale(), newCanon(), newCatalog(), newSchema(), newVersion())
 	return root
 }
 

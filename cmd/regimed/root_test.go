@@ -19,7 +19,7 @@ func TestHelpHasExamples(t *testing.T) {
 		}
 		ran++
 	}
-	if ran != 7 {
+	if ran != 12 {
 		t.Errorf("saw %d commands", ran)
 	}
 	if got := regimed(""); got.status != statusMet || !strings.Contains(got.out, "Examples:\n") {

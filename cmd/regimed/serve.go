@@ -20,12 +20,13 @@ func newServe() *cobra.Command {
 	cmd := &cobra.Command{
 		Use:   "serve",
 		Short: "Answer cases over HTTP",
-		Long: `Serves POST /v1/classify, the catalogues and the canonical solutions over HTTP.
-The contract stands at /openapi.yaml.
+		Long: `Serves POST /v1/classify and /v1/batch, the catalogues and the canonical
+solutions over HTTP. The contract stands at /openapi.yaml.
 
 On SIGTERM or an interrupt it stops without losing a request: /readyz says 503,
 every connection closes after its next answer, and when --drain is over the
-server stops accepting and finishes what it has begun. A second signal ends it at
+server stops accepting and finishes what it has begun; a batch is told to end
+after half of --shutdown-timeout, and says how far it came. A second signal ends it at
 once.`,
 		Example: `  regimed serve
   regimed serve --listen 0.0.0.0:8610 --drain 10s
@@ -51,8 +52,10 @@ once.`,
 	flags.StringVar(&listen, "listen", "127.0.0.1:8610", "address and port")
 	flags.DurationVar(&config.DrainDelay, "drain", 5*time.Second, "from \"not ready\" to the end of accepting; more than the balancer needs to notice")
 	flags.DurationVar(&config.ShutdownTimeout, "shutdown-timeout", 15*time.Second, "for requests in flight at the end")
-	flags.Int64Var(&config.BodyLimit, "body-limit", 1<<20, "largest body of a request in bytes")
-	for _, name := range []string{"listen", "drain", "shutdown-timeout", "body-limit"} {
+	flags.Int64Var(&config.BodyLimit, "body-limit", 1<<20, "largest body of a request, and line of a batch, in bytes")
+	flags.DurationVar(&config.StreamIdleTimeout, "stream-idle-timeout", time.Minute, "for how long a batch may stand still")
+	flags.Int64Var(&config.SweepLimit, "sweep-limit", 1_000_000, "most points of a sweep in one request")
+	for _, name := range []string{"listen", "drain", "shutdown-timeout", "body-limit", "sweep-limit", "stream-idle-timeout"} {
 		completeFlag(cmd, name, cobra.NoFileCompletions)
 	}
 	return cmd

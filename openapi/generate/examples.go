@@ -28,6 +28,12 @@ var cases = []struct{ name, file, summary string }{
 	{"CaseMarineRiser", "marine-riser.json", "A steel riser across a current"},
 	{"CaseWetModes", "wet-modes.json", "Modes of a plate in still water, fluid by values"},
 	{"CaseUncertain", "uncertain.json", "Uncertain inputs and a tolerance of the caller's own"},
+	{"SweepRequest", "sweep.json", "Speeds and diameters of a rod in a current"},
+	{"SweepRequestText", "sweep-text.json", "Axes as texts, rows as CSV"},
+	{"MapRequest", "map.json", "Guide rods over speed and diameter"},
+	{"ComparisonRequest", "requests/compare.json", "A pile in two reaches of a river"},
+	{"ScalingRequest", "scale.json", "A foil at 1:40 that keeps the Froude number, in a towing tank"},
+	{"ScalingRequestExcluded", "scale-excluded.json", "Two groups that exclude each other"},
 }
 
 // server answers the examples; stopping is one that is about to stop.
@@ -63,6 +69,7 @@ func examples(folder string) ([]byte, error) {
 		return nil, err
 	}
 	return toYAML(append(list,
+		shown("BatchCases", "A case, a blank line, a case with an id, and two mistakes", asString(batchCases)),
 		shown("CanonArguments", "The Stokes number", jsontext.Value(`{"R": 36}`)),
 		shown("CaseSchemaHead", "The head of the schema", schema),
 		shown("ContractHead", "The first line", jsontext.Value(`"openapi: 3.1.0\n"`)),
@@ -79,6 +86,19 @@ func requests(bodies map[string][]byte) []example {
 	list := []example{
 		{name: "AnswerMarineRiser", summary: "The whole answer", request: post("/v1/classify", bodies["CaseMarineRiser"]), status: 200},
 		{name: "AnswerWetModes", summary: "Trimmed by ?fields=recommendation", request: post("/v1/classify?fields=recommendation", bodies["CaseWetModes"]), status: 200},
+		{name: "AnswerUncertain", summary: "How sure the recommendation is, ?fields=recommendation,uncertainty", request: post("/v1/classify?fields=recommendation,uncertainty", bodies["CaseUncertain"]), status: 200},
+		{name: "SweepLines", summary: "Rows as NDJSON", request: post("/v1/sweeps", bodies["SweepRequest"]), status: 200, show: asText},
+		{name: "SweepCSV", summary: "Rows as CSV", request: post("/v1/sweeps", bodies["SweepRequestText"]), status: 200, show: asText},
+		{name: "ProblemInvalidSweep", summary: "Several mistakes at once", request: post("/v1/sweeps", []byte(mistakenSweep)), status: 422},
+		{name: "ProblemTooManyPoints", summary: "Ten million points", request: post("/v1/sweeps", []byte(endlessSweep)), status: 422},
+		{name: "RegimeMap", summary: "The largest region, and the first line", request: post("/v1/map?format=json", bodies["MapRequest"]), status: 200, show: firstOf("regions", "lines")},
+		{name: "ProblemInvalidMap", summary: "A misspelt input, and an end in a wrong unit", request: post("/v1/map", []byte(mistakenMap)), status: 422},
+		{name: "Comparison", summary: "A pile in two reaches of a river", request: post("/v1/compare", bodies["ComparisonRequest"]), status: 200},
+		{name: "Scaling", summary: "A foil at 1:40 that keeps the Froude number, in a towing tank", request: post("/v1/scale", bodies["ScalingRequest"]), status: 200},
+		{name: "ScalingExcluded", summary: "Two groups that exclude each other", request: post("/v1/scale", bodies["ScalingRequestExcluded"]), status: 200},
+		{name: "ProblemInvalidComparison", summary: "Only one case, with a wrong unit", request: post("/v1/compare", []byte(`{"a": {"structure": {"kind": "cylinder", "diameter": "0.3 kg"}}}`)), status: 422},
+		{name: "ProblemInvalidScaling", summary: "A misspelt group, and a scale below zero", request: post("/v1/scale", []byte(mistakenScale)), status: 422},
+		{name: "BatchAnswers", summary: "Answers trimmed by ?fields=title,kind", request: batch("?fields=title,kind"), status: 200, show: asText},
 		{name: "CatalogIndex", summary: "All catalogues", request: get("/v1/catalog"), status: 200},
 		{name: "CanonResult", summary: "A cylinder at a Stokes number of 36", request: get("/v1/canon/OscillatingCylinder?R=36"), status: 200},
 		{name: "ProblemIndex", summary: "The first type", request: get("/problems"), status: 200, show: firstOf("problems")},
@@ -106,6 +126,46 @@ func requests(bodies map[string][]byte) []example {
 // unit that is not known.
 const mistaken = `{"structure": {"kind": "cylinder", "diameter": "0.3 kg", "lenght": "40 m", "frequency_dry": 1.2},
 	"fluid": "seawater", "flow": {"speed": "2 knotts"}}`
+
+// mistakenScale names a group that does not exist, and a scale below zero.
+const mistakenScale = `{"case": {"structure": {"kind": "cylinder", "diameter": "0.3 m"}, "fluid": "water", "flow": {"speed": "1 m/s"}},
+	"length": "1:-40", "keep": ["froude", "reynold"]}`
+
+// mistakenSweep has a misspelt input, an end of an axis in a wrong unit and an
+// unknown column.
+const mistakenSweep = `{"case": ` + rod + `,
+	"axes": [{"input": "flow.sped", "values": ["1 m/s"]}, {"input": "structure.diameter", "from": "1 kg", "to": "2 m", "points": 3}],
+	"columns": ["class", "reynold"]}`
+
+// mistakenMap has a misspelt input, and an end of an axis in a wrong unit.
+const mistakenMap = `{"case": ` + rod + `, "x": {"input": "flow.sped"}, "y": {"input": "structure.diameter", "from": "1 kg", "to": "2 m"}}`
+
+const endlessSweep = `{"case": ` + rod + `, "axes": ["flow.speed=0..5 m/s:10000000"]}`
+
+const rod = `{"structure": {"kind": "cylinder", "diameter": "40 mm", "frequency_dry": "12 Hz"}, "fluid": "seawater"}`
+
+// batchCases are lines of a batch.
+const batchCases = `{"title": "Pile", "structure": {"kind": "cylinder", "diameter": "0.5 m", "frequency_dry": "2 Hz"}, "fluid": "water"}
+
+{"id": "a7", "case": {"title": "Rod", "structure": {"kind": "cylinder", "diameter": "40 mm", "frequency_dry": "12 Hz"}, "fluid": "seawater"}}
+{"id": "a8", "case": {"structure": {"kind": "cylinder", "diameter": "40 kg"}, "fluid": "seawater"}}
+{"structure": {"kind": "cylinder"
+`
+
+func batch(query string) *http.Request {
+	r := post("/v1/batch"+query, []byte(batchCases))
+	r.Header.Set("Content-Type", "application/x-ndjson")
+	return r
+}
+
+// asString is a text as a value of JSON.
+func asString(text string) jsontext.Value {
+	v, err := jsontext.AppendQuote(nil, text)
+	if err != nil {
+		panic("generate: " + err.Error()) // a text of this file that is no UTF-8
+	}
+	return v
+}
 
 func titled(name string) string { return string(name[0]-'a'+'A') + name[1:] }
 
@@ -155,15 +215,18 @@ func (e *example) answer() (jsontext.Value, error) {
 	return e.show(w.Body.Bytes())
 }
 
-// firstOf keeps the first element of a list in an answer.
-func firstOf(list string) func(jsontext.Value) (jsontext.Value, error) {
+// asText shows an answer that is no JSON.
+func asText(v jsontext.Value) (jsontext.Value, error) { return jsontext.AppendQuote(nil, v) }
+
+// firstOf keeps the first element of each of some lists in an answer.
+func firstOf(lists ...string) func(jsontext.Value) (jsontext.Value, error) {
 	return func(v jsontext.Value) (jsontext.Value, error) {
 		members, err := parse(v)
 		if err != nil {
 			return nil, err
 		}
 		for i := range members {
-			if members[i].Name != list {
+			if !slices.Contains(lists, members[i].Name) {
 				continue
 			}
 			var elements []jsontext.Value

@@ -26,6 +26,8 @@ import (
 //	reynolds                  a group
 //	scale.speed_critical      a scale, in SI
 //	setup.time_step_structure a figure for setting up, in SI
+//	probability.added-mass    how probable it is that a class is recommended,
+//	                          where an input is uncertain
 //
 // Exactly one of Text and Number is set.
 type Column struct {
@@ -36,7 +38,11 @@ type Column struct {
 	Number func(a *regime.Answer) (x float64, why string)
 	unit   func(a *regime.Answer) units.Kind
 	setup  bool
+	spread bool
 }
+
+// NeedsSpread reports whether the column is read from the spread of an answer.
+func (c *Column) NeedsSpread() bool { return c.spread }
 
 // findingNumbers are the numbers of a finding that can be asked for.
 var findingNumbers = []struct {
@@ -98,6 +104,8 @@ func columnOf(name string) (Column, bool) {
 		return scaleColumn(tail)
 	case "setup":
 		return setupColumn(tail)
+	case "probability":
+		return probabilityColumn(tail)
 	}
 	if id, known := group.Find(name); known {
 		return Column{Number: func(a *regime.Answer) (float64, string) { return groupValue(a.Groups, id) }}, true
@@ -152,6 +160,15 @@ func setupColumn(name string) (Column, bool) {
 	return Column{}, false
 }
 
+func probabilityColumn(id string) (Column, bool) {
+	for i := range ladder.Classes {
+		if c := &ladder.Classes[i]; c.ID == id {
+			return Column{spread: true, Number: func(a *regime.Answer) (float64, string) { return probabilityValue(a.Spread, c) }}, true
+		}
+	}
+	return Column{}, false
+}
+
 func groupValue(g *group.Set, id group.ID) (float64, string) {
 	switch {
 	case g.Has(id):
@@ -192,6 +209,21 @@ func setupValue(a *regime.Answer, row *setup.Row) (float64, string) {
 	return math.NaN(), "the recommended class does not need it, or its scales are not known"
 }
 
+func probabilityValue(s *regime.Spread, c *ladder.Class) (float64, string) {
+	switch {
+	case s == nil:
+		return math.NaN(), "no input of the case is uncertain"
+	case s.Samples == 0:
+		return math.NaN(), "every draw lay outside what the case allows"
+	}
+	for i := range s.Classes {
+		if s.Classes[i].Class == c {
+			return s.Classes[i].Share, ""
+		}
+	}
+	return 0, ""
+}
+
 func classIDs() []string {
 	var ids []string
 	for i := range ladder.Classes {
@@ -222,6 +254,9 @@ func ColumnNames() []string {
 	}
 	for i := range setup.Rows {
 		all = append(all, "setup."+setup.Rows[i].ID)
+	}
+	for _, id := range classIDs() {
+		all = append(all, "probability."+id)
 	}
 	return all
 }
