@@ -66,7 +66,9 @@ func turnsOf(found []explored) []regime.Turn {
 	for i := range found {
 		all = append(all, found[i].turns...)
 	}
-	slices.SortStableFunc(all, func(a, b regime.Turn) int { return cmp.Compare(rounded(distance(a.Factor)), rounded(distance(b.Factor))) })
+	slices.SortStableFunc(all, func(a, b regime.Turn) int {
+		return cmp.Compare(rounded(distance(a.Factor)), rounded(distance(b.Factor)))
+	})
 	return all
 }
 

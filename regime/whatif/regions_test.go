@@ -487,3 +487,39 @@ func TestCloud(t *testing.T) {
 		t.Errorf("a range has 5 and 95 %% at %v", uniform)
 	}
 }
+
+// A case of any kind can be mapped over inputs named alone: the regions cover the map,
+// and hold what is judged at points of a coarse net shifted from the one it is made of.
+func TestEveryKindHasAMap(t *testing.T) {
+	rows := []struct{ file, x, y string }{
+		{"race-liner", "flow.speed", "structure.length"}, {"roll-tank", "structure.length", "structure.width"},
+		{"iced-feeder", "flow.speed", "structure.breadth"}, {"drift-buoy", "structure.diameter", "structure.draft"},
+		{"weed-strip", "flow.speed", "structure.length"}, {"ferry-foil", "flow.speed", "structure.chord"},
+		{"thrust-plate", "structure.radius", "structure.gap"}, {"flue-coils", "structure.diameter", "structure.wall_thickness"},
+		{"dew-cantilever", "structure.length", "structure.width"}, {"wave-bar", "structure.diameter", "structure.length"},
+		{"vent-disc", "structure.radius", "structure.thickness"}, {"lock-main", "flow.speed", "structure.inner_diameter"},
+		{"camera-housing", "flow.speed", "structure.length"}, {"sampler-tube", "flow.speed", "structure.radius"},
+	}
+	kinds := map[string]bool{}
+	for _, r := range rows {
+		m := mapOf(t, mapFile(t, r.file), r.x, r.y)
+		kinds[m.Case.Kind] = true
+		area := 0.0
+		for _, g := range m.Regions {
+			area += g.Area
+		}
+		if math.Abs(area-1) > 1e-6 || m.Here == nil || m.Judged > 60_000 {
+			t.Errorf("%s: the regions cover %v; the case at %v; judged %d times", r.file, area, m.Here, m.Judged)
+		}
+		for k := range 17 * 17 {
+			p := Point{(float64(k%17) + 0.43) / 17, (float64(k/17) + 0.57) / 17}
+			g := m.At(p)
+			if z := judgeAt(m, p).zone; g == nil || !same(z, g.Zone) && nearest(m.Borders, p) > 3e-4 {
+				t.Errorf("%s: at %v judged %s, on the map another", r.file, p, name(z))
+			}
+		}
+	}
+	if len(rows) != len(kind.All) || len(kinds) != len(kind.All) {
+		t.Errorf("%d rows of %d kinds, there are %d", len(rows), len(kinds), len(kind.All))
+	}
+}
