@@ -1,0 +1,67 @@
+// The case and its answer in forms to take away.
+
+import { h } from './dom.js';
+import { shown, quantityShown, times } from './quantity.js';
+import { toLink } from './case.js';
+
+// Copies holds the buttons and the text that they make. The text is always shown
+// too: a browser may refuse to copy.
+export class Copies {
+  constructor(current, say) {
+    this.text = h('textarea', { id: 'copied', rows: '8', readonly: true, spellcheck: 'false' });
+    this.label = h('label', { for: 'copied' }, 'Text');
+    this.out = h('div', { hidden: true }, this.label, this.text);
+    this.say = say;
+    const button = (id, name, make) => h('button', { type: 'button', id: 'copy-' + id, onclick: () => this.take(name, make(current())) }, name);
+    this.element = h('div', { class: 'copies' }, h('p', { class: 'tools' },
+      button('link', 'Copy link', ({ kase }) => link(kase)),
+      button('json', 'Copy JSON', ({ kase }) => JSON.stringify(kase, null, 2)),
+      button('curl', 'Copy curl line', ({ kase }) => curl(kase)),
+      button('markdown', 'Copy Markdown', ({ kase, answer }) => markdown(kase, answer))),
+    h('p', { class: 'quiet' }, 'The link holds the case itself, behind the #: no server sees it.'), this.out);
+  }
+
+  async take(name, text) {
+    this.out.hidden = false;
+    this.text.value = text;
+    try {
+      await navigator.clipboard.writeText(text);
+      this.label.textContent = name.replace('Copy', 'Copied:');
+    } catch {
+      this.label.textContent = 'The browser does not let the page copy; take the text from here:';
+      this.text.focus();
+      this.text.select();
+    }
+    this.say(this.label.textContent);
+  }
+}
+
+export const link = (kase) => `${location.origin}/#case=${toLink(kase)}`;
+
+// curl is a line for a shell, with the case between single quotes.
+function curl(kase) {
+  const quoted = (text) => `'${text.replaceAll("'", `'\\''`)}'`;
+  return `curl -s -H 'Content-Type: application/json' --data ${quoted(JSON.stringify(kase))} ${quoted(location.origin + '/v1/classify')}`;
+}
+
+// cell makes a text fit for a cell of a table in Markdown.
+const cell = (text) => String(text).replace(/\s+/g, ' ').replace(/[\\|`*_<>[\]]/g, '\\$&');
+
+function markdown(kase, a) {
+  const r = a.recommendation;
+  const rows = [
+    ['Case', [a.title, a.reference && `(${a.reference})`].filter(Boolean).join(' ') || 'untitled'],
+    ['Kind', a.kind],
+    ['Model class', `${r.title} (${r.class})${r.provisional ? ', provisional' : ''}`],
+    ['Solves', r.solves],
+    ['Axes', Object.entries(r.axes).map(([axis, value]) => `${axis.replaceAll('_', ' ')}: ${value}`).join(', ')],
+    ...r.conditions.map((c) => ['Condition', c]),
+    ...r.rejected.map((x) => [`Ruled out: ${x.title}`, x.because.join(', ')]),
+    ...a.frequencies.map((f) => [`Frequency, ${f.title.replace('natural frequency, ', '')}`, quantityShown(f.value, f.unit, 4)]),
+    ...Object.entries(a.findings).filter(([, f]) => f.verdict === 'invalid' || f.verdict === 'marginal').map(([id, f]) => [`${id}: ${f.verdict}`, `${times(f.utilisation)} of the limit, φ ${shown(f.factor)}`]),
+    ...a.warnings.map((w) => ['Warning', w.sentence]),
+    ...a.cautions.map((c) => ['Caution', c]),
+    ['Engine', `${a.engine.version}, catalogue ${a.engine.catalogue.slice(0, 12)}, case ${a.digest.slice(0, 12)}`],
+  ];
+  return ['| | |', '|---|---|', ...rows.map(([name, value]) => `| ${cell(name)} | ${cell(value)} |`), '', `[The case](${link(kase)})`, ''].join('\n');
+}
