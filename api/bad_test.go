@@ -248,7 +248,7 @@ var badRequests = []struct {
 	status             int
 	problem            string
 }{
-	{"no path", http.MethodGet, "/", 404, "not-found"},
+	{"two slashes", http.MethodGet, "//", 404, "not-found"},
 	{"unknown path", http.MethodGet, "/v1/clasify", 404, "not-found"},
 	{"path in other letters", http.MethodGet, "/V1/Catalog", 404, "not-found"},
 	{"path with a slash behind", http.MethodGet, "/v1/catalog/", 404, "not-found"},

@@ -68,7 +68,7 @@ func (s *Server) batch(c echo.Context) error {
 
 // batchOptions reads the parameters of a batch.
 func (s *Server) batchOptions(c echo.Context) (BatchOptions, error) {
-	fields, ask, err := classifyOptions(c, false)
+	fields, _, ask, err := caseOptions(c, false, nil)
 	if err != nil {
 		return BatchOptions{}, err
 	}

@@ -49,7 +49,8 @@ func (p *spacePool) put(s *space) {
 // classify answers a case. Nothing here uses reflection, and both buffers are
 // used again: decoding and rendering keep no reference to them.
 func (s *Server) classify(c echo.Context) error {
-	only, options, err := classifyOptions(c, true)
+	c.Response().Header()[echo.HeaderVary] = varyAccept
+	only, form, options, err := classifyOptions(c, true)
 	if err != nil {
 		return err
 	}
@@ -68,7 +69,7 @@ func (s *Server) classify(c echo.Context) error {
 	if len(violations) > 0 {
 		return violated(invalidCase, "The case", violations)
 	}
-	ctx, cancel := context.WithTimeout(c.Request().Context(), s.config.WriteTimeout*computing/writing)
+	ctx, cancel := s.computing(c)
 	defer cancel()
 	answer, violations, err := whatif.Classify(ctx, kase, options)
 	if err != nil {
@@ -76,6 +77,9 @@ func (s *Server) classify(c echo.Context) error {
 	}
 	if len(violations) > 0 {
 		return violated(invalidCase, "The case", violations)
+	}
+	if form != nil {
+		return sendForm(c, form, answer)
 	}
 	room.answer = render.AppendJSON(room.answer[:0], answer, only)
 	answer.Release()
@@ -85,6 +89,11 @@ func (s *Server) classify(c echo.Context) error {
 // Of the time for writing an answer, so many parts of so many may go into
 // computing it.
 const computing, writing = 3, 4
+
+// computing is the context of a request with the time that may go into its answer.
+func (s *Server) computing(c echo.Context) (context.Context, context.CancelFunc) {
+	return context.WithTimeout(c.Request().Context(), s.config.WriteTimeout*computing/writing)
+}
 
 // unfinished is the problem of an answer that was not computed to its end.
 func (s *Server) unfinished(err error) *Problem {

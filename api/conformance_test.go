@@ -45,7 +45,9 @@ func init() {
 		data, err := io.ReadAll(body)
 		return string(data), err
 	}
-	openapi3filter.RegisterBodyDecoder(typeYAML, text)
+	for _, media := range []string{typeYAML, "text/html", "text/css", "text/javascript", "text/xml", "image/svg+xml", "text/markdown", "text/csv", "image/png"} {
+		openapi3filter.RegisterBodyDecoder(media, text)
+	}
 	openapi3filter.RegisterBodyDecoder(typeSchema, openapi3filter.JSONBodyDecoder)
 	openapi3filter.RegisterBodyDecoder(typeLines, text)
 	openapi3filter.RegisterBodyDecoder("text/csv", text)
@@ -111,7 +113,7 @@ func TestRoutesAndOperations(t *testing.T) {
 			t.Errorf("%s has no HEAD", o)
 		}
 	}
-	if len(operations) != 26 {
+	if len(operations) != 37 {
 		t.Errorf("%d operations", len(operations))
 	}
 }
@@ -137,8 +139,9 @@ func TestExamplesOfTheContract(t *testing.T) {
 		for method, op := range doc.Paths.Value(path).Operations() {
 			for _, r := range exampleRequests(t, method, path, op) {
 				ran++
+				prepareRecord(t, r)
 				answer := checkAgainst(t, router, r)
-				if answer.StatusCode != http.StatusOK {
+				if answer.StatusCode/100 != 2 {
 					t.Errorf("%s %s: status %d", method, r.URL, answer.StatusCode)
 				}
 				strict.check(t, op, answer)
@@ -155,19 +158,23 @@ func TestExamplesOfTheContract(t *testing.T) {
 // optional parameters.
 func exampleRequests(t *testing.T, method, path string, op *openapi3.Operation) []*http.Request {
 	t.Helper()
-	paths, queries := []string{path}, []string{""}
+	var paths []string
+	queries := []string{""}
 	for _, ref := range op.Parameters {
 		p := ref.Value
 		for _, value := range exampleValues(p) {
 			switch {
 			case p.In == "path":
-				paths = []string{strings.ReplaceAll(path, "{"+p.Name+"}", fmt.Sprint(value))}
+				paths = append(paths, strings.ReplaceAll(path, "{"+p.Name+"}", fmt.Sprint(value)))
 			case p.In == "query" && p.Explode != nil && *p.Explode:
 				queries = []string{"?" + exploded(value.(map[string]any))}
 			case p.In == "query":
-				queries = append(queries, "?"+p.Name+"="+commas(value))
+				queries = append(queries, "?"+p.Name+"="+url.QueryEscape(commas(value)))
 			}
 		}
+	}
+	if len(paths) == 0 {
+		paths = []string{path}
 	}
 	var list []*http.Request
 	for _, p := range paths {
@@ -384,6 +391,9 @@ func shut(node any) {
 // check holds the body of an answer against the closed schema of its status.
 func (s strict) check(t testing.TB, op *openapi3.Operation, answer *http.Response) {
 	t.Helper()
+	if answer.StatusCode == http.StatusNoContent {
+		return
+	}
 	response := op.Responses.Status(answer.StatusCode)
 	if response == nil {
 		response = op.Responses.Default()

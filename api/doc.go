@@ -12,6 +12,10 @@
 //	GET  /v1/catalog/{name}      one catalogue
 //	GET  /v1/canon/{name}        one canonical solution, arguments in the query
 //	GET  /v1/schema/case         JSON Schema of a case
+//	POST /v1/records             keeps an answer; GET lists what is kept
+//	GET  /v1/records/{id}        a record, or its answer in a form; DELETE removes it
+//	GET  /embed/{id} /oembed     a record for a page of others, in a frame or as a picture
+//	GET  /docs                   these operations, to look through and try
 //	GET  /problems/{id}          what a problem type means
 //	GET  /healthz /readyz /version /openapi.yaml /openapi.json
 //

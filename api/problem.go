@@ -26,6 +26,7 @@ type Problem struct {
 	Place      string          `json:"pointer,omitzero"`  // of malformed JSON: where reading stopped
 	Offset     *int64          `json:"offset,omitzero"`   // of malformed JSON: after how many bytes
 	Violations []ViolationItem `json:"violations,omitempty"`
+	Candidates []string        `json:"candidates,omitempty"` // of an ambiguous id: the ids that begin so
 }
 
 // ViolationItem is one violation as it is sent.

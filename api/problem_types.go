@@ -29,6 +29,8 @@ var (
 		Doc: "No resource has this path or name. The detail names the nearest one where there is one."}
 	methodNotAllowed = &ProblemType{ID: "method-not-allowed", Title: "Wrong method", Status: http.StatusMethodNotAllowed,
 		Doc: "The path exists and answers other methods: those in the header Allow."}
+	notAcceptable = &ProblemType{ID: "not-acceptable", Title: "Not in this form", Status: http.StatusNotAcceptable,
+		Doc: "The path has an answer, but in none of the media types that the header Accept asks for. The detail says which one it has."}
 	requestTimeout = &ProblemType{ID: "request-timeout", Title: "The body took too long", Status: http.StatusRequestTimeout,
 		Doc: "The body did not arrive within the time that the server waits. Send it again."}
 	tooLarge = &ProblemType{ID: "payload-too-large", Title: "The body is too large", Status: http.StatusRequestEntityTooLarge,
@@ -50,7 +52,8 @@ var (
 )
 
 var problemTypes = []*ProblemType{malformedJSON, badRequest, notFound, methodNotAllowed, requestTimeout, tooLarge,
-	unsupportedMedia, invalidCase, invalidQuery, internal, unavailable, tooManyPoints}
+	unsupportedMedia, invalidCase, invalidQuery, internal, unavailable, tooManyPoints, notAcceptable,
+	recordsOff, recordsUnavailable, recordsFull, recordsDamaged, invalidRecord, ambiguousRecord, outdatedCase, unknownEmbedFormat}
 
 // codes are the codes of violations, with what they mean.
 var codes = []codeRecord{
@@ -64,7 +67,7 @@ var codes = []codeRecord{
 	{input.WrongDimension, "the unit measures something else"},
 	{input.WrongMeaning, "the unit has the right dimension and the wrong meaning, such as a gauge pressure for an absolute one"},
 	{input.MissingUnit, "a bare number stands where a unit is needed"},
-	{input.BadQuantity, "the text can't be read as a number and a unit"},
+	{input.BadQuantity, "the text can't be read as what stands here: a number and a unit, a time, a cursor"},
 	{"bad-range", "the lower end of a range lies above the upper one"},
 	{"negative-uncertainty", "a standard deviation is negative"},
 	{"below-absolute-zero", "a temperature lies below absolute zero"},

@@ -42,35 +42,73 @@ type classifyQuery struct {
 	WhatIf  *string  `query:"what_if" validate:"omitempty,oneof=true false"`
 }
 
-// classifyOptions reads which members of the answer are wanted, and what is asked
-// about the case besides. explore says whether it is explored where the query
-// does not say.
-func classifyOptions(c echo.Context, explore bool) (render.Fields, whatif.Options, error) {
-	if c.Request().URL.RawQuery == "" {
-		return render.All, whatif.Options{Explore: explore}, nil
-	}
-	values, violations, err := parameters(c, "fields", "samples", "what_if")
+// classifyOptions reads which members of the answer are wanted, in which form
+// (nil: JSON), and what is asked about the case besides. explore says whether it
+// is explored where the query does not say.
+func classifyOptions(c echo.Context, explore bool) (render.Fields, *format, whatif.Options, error) {
+	only, values, o, err := caseOptions(c, explore, func(values url.Values, bad []input.Violation) []input.Violation {
+		return checkForm(bad, values.Get("format"), values.Has("format"), values.Has("fields"))
+	}, "format")
 	if err != nil {
-		return 0, whatif.Options{}, err
+		return 0, nil, o, err
+	}
+	form, err := wantedForm(c, values.Get("format"), values.Has("fields"))
+	return only, form, o, err
+}
+
+// answerOptions reads what is asked about a case whose answer is kept whole.
+func answerOptions(c echo.Context) (whatif.Options, error) {
+	values, violations, err := parameters(c, "samples", "what_if")
+	if err != nil {
+		return whatif.Options{}, err
+	}
+	var q classifyQuery
+	violations = append(append(violations, q.read(values)...), check(&q, values)...)
+	if len(violations) > 0 {
+		return whatif.Options{}, violated(invalidQuery, "The query", violations)
+	}
+	return q.options(true), nil
+}
+
+// caseOptions reads the parameters that every path with cases has. Others may
+// stand beside them, which checkOthers adds its violations about; nil: none.
+func caseOptions(c echo.Context, explore bool, checkOthers func(url.Values, []input.Violation) []input.Violation, others ...string) (render.Fields, url.Values, whatif.Options, error) {
+	if c.Request().URL.RawQuery == "" {
+		return render.All, nil, whatif.Options{Explore: explore}, nil
+	}
+	values, violations, err := parameters(c, append([]string{"fields", "samples", "what_if"}, others...)...)
+	if err != nil {
+		return 0, nil, whatif.Options{}, err
 	}
 	var q classifyQuery
 	violations = append(violations, q.read(values)...)
 	violations = append(violations, check(&q, values)...)
+	if checkOthers != nil {
+		violations = checkOthers(values, violations)
+	}
 	if len(violations) > 0 {
-		return 0, whatif.Options{}, violated(invalidQuery, "The query", violations)
+		return 0, nil, whatif.Options{}, violated(invalidQuery, "The query", violations)
 	}
 	only, err := render.ParseFields(q.Fields)
 	if err != nil {
-		return 0, whatif.Options{}, problem(invalidQuery, "The answer has no such member.")
+		return 0, nil, whatif.Options{}, problem(invalidQuery, "The answer has no such member.")
 	}
+	o := q.options(explore)
+	o.Explore = o.Explore && only.Explored()
+	return only, values, o, nil
+}
+
+// options is what the parameters ask about a case; explore is what holds where
+// they do not say.
+func (q *classifyQuery) options(explore bool) whatif.Options {
+	o := whatif.Options{Explore: explore}
 	if q.WhatIf != nil {
-		explore = *q.WhatIf == "true"
+		o.Explore = *q.WhatIf == "true"
 	}
-	o := whatif.Options{Explore: explore && only.Explored()}
 	if q.Samples != nil {
 		o.Samples = *q.Samples
 	}
-	return only, o, nil
+	return o
 }
 
 // read reads the parameters as they stand; what is no number is a violation.

@@ -21,9 +21,13 @@ func (s *Server) routes() {
 		s.get("/v1/catalog/"+name, plainQuery(s.fixed.catalogs[name]))
 	}
 	s.get("/v1/canon/:name", s.canon)
+	s.recordRoutes()
 	s.get("/v1/schema/case", plainQuery(s.fixed.schema))
 	s.get("/problems", s.fixed.problemIndex.answer)
 	s.get("/problems/:id", s.problem)
+	s.pageRoutes()
+	s.embedRoutes()
+	s.docsRoutes()
 	s.get("/healthz", s.fixed.health.answer)
 	s.get("/readyz", s.ready)
 	s.get("/version", s.fixed.version.answer)

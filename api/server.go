@@ -11,6 +11,7 @@ import (
 
 	"github.com/labstack/echo/v4"
 
+	"regimed/api/store"
 	"regimed/regime/input"
 	"regimed/regime/kind"
 )
@@ -28,6 +29,13 @@ type Config struct {
 	StreamIdleTimeout time.Duration // of a batch, which has no other: how long it may stand still; 60 s
 	DrainDelay        time.Duration // from "not ready" to the end of accepting; none
 	ShutdownTimeout   time.Duration // for requests in flight; 15 s. A batch is told to end after half of it
+
+	Records  store.Store               // keeps answers; none: the paths of records say that they are off
+	Clock    func() time.Time          // when a record is made; time.Now
+	MayWrite func(*http.Request) error // refuses those who may not make or delete records; none: everybody may
+
+	FrameAncestors []string // who may show embedded records in a frame, as [FrameAncestors] reads it; nobody
+	PublicURL      string   // under which people reach the service, for links that leave it; the Host of the request
 }
 
 // Limits that no operator has a reason to change.
@@ -40,6 +48,9 @@ const (
 func (c Config) withDefaults() Config {
 	if c.Logger == nil {
 		c.Logger = slog.New(slog.DiscardHandler)
+	}
+	if c.Clock == nil {
+		c.Clock = time.Now
 	}
 	if c.BodyLimit <= 0 {
 		c.BodyLimit = defaultBodyLimit
@@ -73,12 +84,15 @@ type Server struct {
 
 	streams    context.Context // ends when no stream may go on reading
 	endStreams context.CancelFunc
+	ancestors  string // who may frame a page, as the policy has it
+	publicURL  string // without a slash at its end; empty: not set
 }
 
 // New makes a server. Everything that does not depend on a request is written
 // once, here.
 func New(config Config) *Server {
 	s := &Server{config: config.withDefaults(), echo: echo.New(), schema: kind.Schema()}
+	s.configureEmbedding()
 	s.fixed = newDocuments()
 	s.streams, s.endStreams = context.WithCancel(context.Background())
 	s.echo.HTTPErrorHandler = s.answerError

@@ -196,42 +196,51 @@ func (p *page) conditions(a *regime.Answer) {
 		}
 	}
 	for _, w := range waiting(a) {
-		p.room = append(append(p.room[:0], w.input...), " not given: "...)
-		for i := range w.list {
-			if i > 0 {
-				p.room = append(p.room, "; "...)
-			}
-			p.room = append(p.room, w.list[i].entry.ID...)
-			before := len(p.room)
-			p.room = appendHold(p.room, w.list[i].hold, " holds ")
-			if len(p.room) == before {
-				p.room = append(p.room, " waits for it"...)
-			}
-		}
-		p.wrap(yellow, "  - ", append(p.room, '.'))
+		p.room = appendWaitingInput(p.room[:0], &w)
+		p.wrap(yellow, "  - ", p.room)
 	}
-	p.settled(r)
+	for _, s := range settledSentences(r) {
+		p.wrap(yellow, "  - ", []byte(s))
+	}
 }
 
-// settled says which class an assumption would lead to that turned out not to
-// hold, in one line a class.
-func (p *page) settled(r *ladder.Recommendation) {
+// appendWaitingInput says what waits for a missing input, and how far each holds.
+func appendWaitingInput(dst []byte, w *waitingInput) []byte {
+	dst = append(append(dst, w.input...), " not given: "...)
+	for i := range w.list {
+		if i > 0 {
+			dst = append(dst, "; "...)
+		}
+		dst = append(dst, w.list[i].entry.ID...)
+		before := len(dst)
+		dst = appendHold(dst, w.list[i].hold, " holds ")
+		if len(dst) == before {
+			dst = append(dst, " waits for it"...)
+		}
+	}
+	return append(dst, '.')
+}
+
+// settledSentences say which class an assumption would lead to that turned out
+// not to hold, in one sentence a class.
+func settledSentences(r *ladder.Recommendation) []string {
+	var all []string
 	for i := range r.IfSettled {
 		c := r.IfSettled[i].Class
 		if slices.ContainsFunc(r.IfSettled[:i], func(s ladder.Settled) bool { return s.Class == c }) {
 			continue
 		}
-		p.room = append(p.room[:0], "If "...)
 		var list []*assumption.Entry
 		for _, s := range r.IfSettled[i:] {
 			if s.Class == c {
 				list = append(list, s.Entry)
 			}
 		}
-		p.room = appendIDs(p.room, list, " or ")
-		p.room = append(p.room, " turns out not to hold, the class becomes "...)
-		p.wrap(yellow, "  - ", append(appendClass(p.room, c), '.'))
+		dst := appendIDs([]byte("If "), list, " or ")
+		dst = append(dst, " turns out not to hold, the class becomes "...)
+		all = append(all, string(append(appendClass(dst, c), '.')))
 	}
+	return all
 }
 
 // waitingInput is a missing input with what waits for it, hardest bound first.
@@ -326,26 +335,35 @@ func (p *page) groups(a *regime.Answer) {
 
 // waitingGroups lists the groups that wait for an input, by input.
 func (p *page) waitingGroups(a *regime.Answer) {
+	for _, s := range waitingGroups(a) {
+		p.wrap(dim, "  ", []byte(s))
+	}
+}
+
+// waitingGroups names the groups that wait for an input, in one sentence an input.
+func waitingGroups(a *regime.Answer) []string {
 	waits := func(id group.ID) bool { return !group.Of(id).Core && a.Groups.State(id) == group.Missing }
 	var done [group.Count]bool
+	var all []string
 	for id := range group.Count {
 		if !waits(id) || done[id] {
 			continue
 		}
 		need := a.Groups.Need(id).Input
-		p.room = appendGroupReason(p.room[:0], a, id)
-		p.room = append(p.room[:len(p.room)-1], ": "...)
+		dst := appendGroupReason(nil, a, id)
+		dst = append(dst[:len(dst)-1], ": "...)
 		sep := ""
 		for other := id; other < group.Count; other++ {
 			if waits(other) && a.Groups.Need(other).Input == need {
 				done[other] = true
-				p.room = append(append(p.room, sep...), group.Of(other).Title...)
-				p.room = append(append(append(p.room, " ("...), group.Of(other).Symbol...), ')')
+				dst = append(append(dst, sep...), group.Of(other).Title...)
+				dst = append(append(append(dst, " ("...), group.Of(other).Symbol...), ')')
 				sep = ", "
 			}
 		}
-		p.wrap(dim, "  ", append(p.room, '.'))
+		all = append(all, string(append(dst, '.')))
 	}
+	return all
 }
 
 const (

@@ -212,29 +212,38 @@ func verdictStyle(f *finding.Finding) style {
 
 // moot lists what cannot occur, by reason.
 func (p *page) moot(a *regime.Answer) {
+	list := mootSentences(a)
+	if len(list) == 0 {
+		return
+	}
+	p.heading("Cannot occur here")
+	for _, s := range list {
+		p.wrap(dim, "   ", []byte(s))
+	}
+}
+
+// mootSentences say why assumptions hold whose effect cannot occur, in one
+// sentence a reason.
+func mootSentences(a *regime.Answer) []string {
+	var all []string
 	done := make([]bool, len(a.Findings))
-	begun := false
 	for i := range a.Findings {
-		f := &a.Findings[i]
-		if f.Main() != nil || done[i] {
+		if a.Findings[i].Main() != nil || done[i] {
 			continue
 		}
-		if !begun {
-			p.heading("Cannot occur here")
-			begun = true
-		}
-		reason := string(appendBecause(nil, a, f))
-		p.room = append(p.room[:0], strings.TrimSuffix(reason, ".")...)
+		reason := string(appendBecause(nil, a, &a.Findings[i]))
+		dst := []byte(strings.TrimSuffix(reason, "."))
 		sep := " ("
 		for j := i; j < len(a.Findings); j++ {
 			g := &a.Findings[j]
 			if g.Main() == nil && !done[j] && string(appendBecause(nil, a, g)) == reason {
-				p.room = append(append(p.room, sep...), assumption.Catalogue[j].ID...)
+				dst = append(append(dst, sep...), assumption.Catalogue[j].ID...)
 				sep, done[j] = ", ", true
 			}
 		}
-		p.wrap(dim, "   ", append(p.room, ")."...))
+		all = append(all, string(append(dst, ")."...)))
 	}
+	return all
 }
 
 // sortWaiting puts the bounds that are hardest to keep first.

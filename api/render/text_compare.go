@@ -148,7 +148,7 @@ func (p *page) verdictPairs(c *similar.Comparison, a, b string) {
 	t := &grid{heads: []string{"assumption", a, b, "error/limit in " + a, "in " + b}}
 	for i := range c.Verdicts {
 		v := &c.Verdicts[i]
-		t.add(styleOf(v.B), v.Entry.ID, v.A.String(), v.B.String(), figure(v.UtilisationA), figure(v.UtilisationB))
+		t.add(styleOf(v.B), v.Entry.ID, v.A.String(), v.B.String(), fourDigits(v.UtilisationA), fourDigits(v.UtilisationB))
 	}
 	p.grid(t)
 }
@@ -163,8 +163,8 @@ func styleOf(v finding.Verdict) style {
 	return plain
 }
 
-// figure writes a number as pages do, a dash where there is none.
-func figure(x float64) string {
+// fourDigits writes a number as pages do, a dash where there is none.
+func fourDigits(x float64) string {
 	if math.IsNaN(x) || math.IsInf(x, 0) {
 		return "-"
 	}
@@ -186,7 +186,7 @@ func (p *page) distorted(c *similar.Comparison, a, b string) {
 	p.heading("Groups distorted")
 	t := &grid{heads: []string{"", a, b, b + "/" + a, ""}}
 	for _, g := range list {
-		t.add(plain, group.Of(g.ID).Symbol, figure(g.A), figure(g.B), figure(g.Factor), group.Of(g.ID).Title+", "+changed(g.Factor))
+		t.add(plain, group.Of(g.ID).Symbol, fourDigits(g.A), fourDigits(g.B), fourDigits(g.Factor), group.Of(g.ID).Title+", "+changed(g.Factor))
 	}
 	p.grid(t)
 }
@@ -233,7 +233,7 @@ func (p *page) kept(c *similar.Comparison) {
 	for i := range c.Groups {
 		if g := &c.Groups[i]; g.Kept {
 			p.room = p.listed(p.room)
-			p.room = append(append(append(p.room, group.Of(g.ID).Title...), ' '), figure(g.B)...)
+			p.room = append(append(append(p.room, group.Of(g.ID).Title...), ' '), fourDigits(g.B)...)
 		}
 	}
 	if len(p.room) == 0 {
@@ -260,7 +260,7 @@ func (p *page) alone(title string, ids []group.ID, has, lacks *group.Set) {
 	p.room = p.room[:0]
 	for _, id := range ids {
 		p.room = p.listed(p.room)
-		p.room = append(append(append(p.room, group.Of(id).Title...), ' '), figure(has.Get(id))...)
+		p.room = append(append(append(p.room, group.Of(id).Title...), ' '), fourDigits(has.Get(id))...)
 		switch lacks.State(id) {
 		case group.Missing:
 			p.room = append(append(append(p.room, " (the other needs "...), lacks.Need(id).Input...), ')')

@@ -99,7 +99,7 @@ func heldAt(now float64, f similar.Factor) string {
 	case f == similar.Length:
 		return "at " + similar.Ratio(now)
 	}
-	return "at " + figure(now)
+	return "at " + fourDigits(now)
 }
 
 func (p *page) remedy(s *similar.Scaling, m similar.Remedy) []byte {
@@ -107,7 +107,7 @@ func (p *page) remedy(s *similar.Scaling, m similar.Remedy) []byte {
 	if m.Factor == similar.Length {
 		return []byte(fmt.Sprintf("%s at %s.", title, similar.Ratio(m.Needed)))
 	}
-	said := fmt.Sprintf("%s %s than it is: a factor of %s, %s", title, changed(m.Change), figure(m.Needed), m.Powers.Formula())
+	said := fmt.Sprintf("%s %s than it is: a factor of %s, %s", title, changed(m.Change), fourDigits(m.Needed), m.Powers.Formula())
 	if x, k, known := s.Property(m.Factor); known {
 		said += fmt.Sprintf(" (%s against %s)", units.Format(x*m.Needed, k), units.Format(x, k))
 	}
@@ -133,7 +133,7 @@ func (p *page) factors(s *similar.Scaling) {
 			formula = ""
 		}
 		d := similar.FactorOf(f.Factor)
-		t.add(s, d.Symbol, figure(f.Value), formula, why, d.Title)
+		t.add(s, d.Symbol, fourDigits(f.Value), formula, why, d.Title)
 	}
 	p.grid(t)
 }
@@ -162,7 +162,7 @@ func (p *page) scaledQuantities(s *similar.Scaling) {
 		if math.IsNaN(q.Value) {
 			formula = ""
 		}
-		t.add(plain, q.Title, figure(q.Value), formula, strings.Join(rests, ", "))
+		t.add(plain, q.Title, fourDigits(q.Value), formula, strings.Join(rests, ", "))
 	}
 	p.grid(t)
 }
@@ -175,7 +175,7 @@ func (p *page) scaledFields(s *similar.Scaling) {
 	t := &grid{heads: []string{"", "prototype", "model", "factor"}}
 	for i := range s.Model.Fields {
 		f := &s.Model.Fields[i]
-		t.add(plain, f.Place.Path(), units.Format(f.Prototype, f.Kind), units.Format(f.Model, f.Kind), figure(f.Model/f.Prototype))
+		t.add(plain, f.Place.Path(), units.Format(f.Prototype, f.Kind), units.Format(f.Model, f.Kind), fourDigits(f.Model/f.Prototype))
 	}
 	p.grid(t)
 }
@@ -192,7 +192,7 @@ func (p *page) judgedModel(s *similar.Scaling) {
 		p.heading("Kept, as judged")
 		t := &grid{heads: []string{"", "model/prototype", ""}}
 		for _, k := range s.Groups {
-			t.add(keptStyle(k), group.Of(k.Group).Symbol, figure(k.Judged), group.Of(k.Group).Title+keptSaid(k))
+			t.add(keptStyle(k), group.Of(k.Group).Symbol, fourDigits(k.Judged), group.Of(k.Group).Title+keptSaid(k))
 		}
 		p.grid(t)
 	}

@@ -16,6 +16,9 @@ import (
 	"regimed/api"
 )
 
+// listFormats are the forms of a list; the first is the default.
+var listFormats = []string{"text", "json"}
+
 func newCatalog() *cobra.Command {
 	var format string
 	cmd := &cobra.Command{
@@ -30,7 +33,7 @@ printed in full. With --format json a catalogue is what the service sends.`,
 		Args:              cobra.ArbitraryArgs,
 		ValidArgsFunction: completeCatalog,
 		RunE: func(cmd *cobra.Command, args []string) error {
-			if err := knownFormat(format); err != nil {
+			if err := knownFormat(format, listFormats); err != nil {
 				return err
 			}
 			out, err := catalog(format, args)
@@ -41,8 +44,8 @@ printed in full. With --format json a catalogue is what the service sends.`,
 			return err
 		},
 	}
-	cmd.Flags().StringVarP(&format, "format", "f", formats[0], "form of the list: text or json")
-	completeFlag(cmd, "format", completeFrom(func() []string { return formats }))
+	cmd.Flags().StringVarP(&format, "format", "f", listFormats[0], "form of the list: text or json")
+	completeFlag(cmd, "format", completeFrom(func() []string { return listFormats }))
 	return cmd
 }
 

@@ -31,7 +31,7 @@ listed as distorted is what differs between them.`,
 		Args:              arguments(2, 2, "name two files; one of them may be - for standard input"),
 		ValidArgsFunction: completeCases,
 		RunE: func(cmd *cobra.Command, args []string) error {
-			if err := knownFormat(format); err != nil {
+			if err := knownFormat(format, []string{"text", "json"}); err != nil {
 				return err
 			}
 			if err := knownTolerance(tolerance); err != nil {

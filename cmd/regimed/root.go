@@ -78,7 +78,7 @@ a model cannot keep what it should; 2 bad input, an unknown name or a wrong use;
 		SilenceUsage:  true,
 	}
 	root.SetFlagErrorFunc(func(_ *cobra.Command, err error) error { return &usageError{err} })
-	root.AddCommand(newServe(), newClassify(), newBatch(), newCheck(), newSweep(), newMap(), newCompare(), newScale(), newCanon(), newCatalog(), newSchema(), newVersion())
+	root.AddCommand(newServe(), newClassify(), newRecord(), newBatch(), newCheck(), newSweep(), newMap(), newCompare(), newScale(), newCanon(), newCatalog(), newSchema(), newVersion())
 	return root
 }
 

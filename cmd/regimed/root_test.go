@@ -19,7 +19,7 @@ func TestHelpHasExamples(t *testing.T) {
 		}
 		ran++
 	}
-	if ran != 12 {
+	if ran != 13 {
 		t.Errorf("saw %d commands", ran)
 	}
 	if got := regimed(""); got.status != statusMet || !strings.Contains(got.out, "Examples:\n") {
@@ -48,6 +48,13 @@ func TestWrongUse(t *testing.T) {
 		{[]string{"catalog", "kinds", "cylindre"}, "Did you mean cylinder?"},
 		{[]string{"schema", "more"}, "takes none"},
 		{[]string{"serve", "--listen", "nowhere"}, "nowhere"},
+		{[]string{"serve", "--listen", "127.0.0.1:0", "--data", path}, "not a directory"},
+		{[]string{"serve", "--frame-ancestors", "wiki.example"}, "--frame-ancestors: \"wiki.example\" is no origin"},
+		{[]string{"serve", "--public-url", "regimed.example"}, "--public-url: \"regimed.example\" is no address"},
+		{[]string{"record"}, "name one file, or -"},
+		{[]string{"record", path}, "--data"},
+		{[]string{"record", path, "--data", path}, "not a directory"},
+		{[]string{"record", path, "--data", t.TempDir(), "--tag", "a", "--tag", "a", "--title", " "}, "given twice"},
 	}
 	ran := 0
 	for _, row := range rows {
@@ -57,7 +64,7 @@ func TestWrongUse(t *testing.T) {
 		}
 		ran++
 	}
-	if ran != 15 {
+	if ran != 22 {
 		t.Errorf("ran %d rows", ran)
 	}
 }

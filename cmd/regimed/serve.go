@@ -15,13 +15,21 @@ import (
 )
 
 func newServe() *cobra.Command {
-	var listen string
+	var listen, data string
 	var config api.Config
 	cmd := &cobra.Command{
 		Use:   "serve",
 		Short: "Answer cases over HTTP",
 		Long: `Serves POST /v1/classify and /v1/batch, the catalogues and the canonical
 solutions over HTTP. The contract stands at /openapi.yaml.
+
+With --data it keeps answers that are posted to /v1/records, in the file
+records.db of that directory, and gives each a permanent address. Without, the
+paths of records say that they are off.
+
+Pages of others may show a record in a frame, at /embed/ID, only where
+--frame-ancestors names their origin; its pictures anybody may show. Behind a
+proxy, --public-url is the address that people use, for links to records.
 
 On SIGTERM or an interrupt it stops without losing a request: /readyz says 503,
 every connection closes after its next answer, and when --drain is over the
@@ -30,9 +38,14 @@ after half of --shutdown-timeout, and says how far it came. A second signal ends
 once.`,
 		Example: `  regimed serve
   regimed serve --listen 0.0.0.0:8610 --drain 10s
+  regimed serve --data /var/lib/regimed
+  regimed serve --data records --public-url https://regimed.example --frame-ancestors https://wiki.example
   curl -d @riser.json -H 'Content-Type: application/json' localhost:8610/v1/classify`,
 		Args: arguments(0, 0, "serve takes only flags"),
 		RunE: func(cmd *cobra.Command, _ []string) error {
+			if err := checkEmbedding(config); err != nil {
+				return err
+			}
 			listener, err := net.Listen("tcp", listen)
 			if err != nil {
 				return err
@@ -44,8 +57,10 @@ once.`,
 				stop() // from now on a signal ends the process
 			}()
 			config.Logger = slog.New(slog.NewJSONHandler(cmd.ErrOrStderr(), nil))
-			fmt.Fprintf(cmd.OutOrStdout(), "listening on http://%s\n", listener.Addr())
-			return api.New(config).Run(ctx, listener)
+			return withRecords(cmd.Context(), data, &config, func() error {
+				fmt.Fprintf(cmd.OutOrStdout(), "listening on http://%s\n", listener.Addr())
+				return api.New(config).Run(ctx, listener)
+			})
 		},
 	}
 	flags := cmd.Flags()
@@ -55,8 +70,22 @@ once.`,
 	flags.Int64Var(&config.BodyLimit, "body-limit", 1<<20, "largest body of a request, and line of a batch, in bytes")
 	flags.DurationVar(&config.StreamIdleTimeout, "stream-idle-timeout", time.Minute, "for how long a batch may stand still")
 	flags.Int64Var(&config.SweepLimit, "sweep-limit", 1_000_000, "most points of a sweep in one request")
-	for _, name := range []string{"listen", "drain", "shutdown-timeout", "body-limit", "sweep-limit", "stream-idle-timeout"} {
+	flags.StringVar(&data, "data", "", "directory of the records, made where it is missing (default none: no records are kept)")
+	flags.StringSliceVar(&config.FrameAncestors, "frame-ancestors", nil, "origins whose pages may show records in a frame, such as https://wiki.example, or self, or * for all (default none)")
+	flags.StringVar(&config.PublicURL, "public-url", "", "address under which people reach the service (default that of the request)")
+	for _, name := range []string{"frame-ancestors", "public-url", "listen", "drain", "shutdown-timeout", "body-limit", "sweep-limit", "stream-idle-timeout"} {
 		completeFlag(cmd, name, cobra.NoFileCompletions)
 	}
 	return cmd
+}
+
+// checkEmbedding checks what is said of embedding, before anything is started.
+func checkEmbedding(config api.Config) error {
+	if _, err := api.FrameAncestors(config.FrameAncestors); err != nil {
+		return &usageError{fmt.Errorf("--frame-ancestors: %w", err)}
+	}
+	if _, err := api.PublicURL(config.PublicURL); err != nil {
+		return &usageError{fmt.Errorf("--public-url: %w", err)}
+	}
+	return nil
 }

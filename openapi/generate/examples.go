@@ -2,6 +2,7 @@ package main
 
 import (
 	"bytes"
+	"errors"
 	"fmt"
 	"net/http"
 	"net/http/httptest"
@@ -21,6 +22,8 @@ type example struct {
 	request       *http.Request
 	status        int
 	show          func(jsontext.Value) (jsontext.Value, error) // nil: the whole answer
+	of            http.Handler                                 // nil: the usual server
+	value         jsontext.Value                               // shown as it is; nothing is asked
 }
 
 // cases are the files of the request examples, with their summaries.
@@ -36,17 +39,21 @@ var cases = []struct{ name, file, summary string }{
 	{"ScalingRequestExcluded", "scale-excluded.json", "Two groups that exclude each other"},
 }
 
-// server answers the examples; stopping is one that is about to stop.
-var server, stopping = api.New(api.Config{}).Handler(), drained()
-
+// drained is a server that is about to stop.
 func drained() http.Handler {
 	s := api.New(api.Config{})
 	s.Drain()
 	return s.Handler()
 }
 
-// examples are the examples of the contract, as YAML.
-func examples(folder string) ([]byte, error) {
+// examples are the examples of the contract, as YAML. An example without a name
+// is asked for what it leaves behind, and not shown.
+func examples(folder string) (text []byte, err error) {
+	recording, cleanUp, err := keeping()
+	if err != nil {
+		return nil, err
+	}
+	defer func() { err = errors.Join(err, cleanUp()) }()
 	list := object{}
 	bodies := map[string][]byte{}
 	for _, c := range cases {
@@ -57,12 +64,14 @@ func examples(folder string) ([]byte, error) {
 		bodies[c.name] = body
 		list = append(list, shown(c.name, c.summary, body))
 	}
-	for _, e := range requests(bodies) {
-		value, err := e.answer()
+	for _, e := range append(requests(bodies), recordRequests(bodies)...) {
+		value, err := e.answer(recording)
 		if err != nil {
 			return nil, fmt.Errorf("%s: %w", e.name, err)
 		}
-		list = append(list, shown(e.name, e.summary, value))
+		if e.name != "" {
+			list = append(list, shown(e.name, e.summary, value))
+		}
 	}
 	schema, err := head(api.CaseSchema(), "$schema", "$id", "title", "description", "type", "required", "additionalProperties")
 	if err != nil {
@@ -103,6 +112,7 @@ func requests(bodies map[string][]byte) []example {
 		{name: "CanonResult", summary: "A cylinder at a Stokes number of 36", request: get("/v1/canon/OscillatingCylinder?R=36"), status: 200},
 		{name: "ProblemIndex", summary: "The first type", request: get("/problems"), status: 200, show: firstOf("problems")},
 		{name: "ProblemType", summary: "Invalid case", request: get("/problems/invalid-case"), status: 200},
+		{name: "DemoCases", summary: "The first case", request: get("/examples.json"), status: 200, show: firstOf("examples")},
 		{name: "Health", summary: "It lives", request: get("/healthz"), status: 200},
 		{name: "Ready", summary: "It is ready", request: get("/readyz"), status: 200},
 		{name: "Version", summary: "Engine and rules", request: get("/version"), status: 200},
@@ -111,10 +121,12 @@ func requests(bodies map[string][]byte) []example {
 		{name: "ProblemMalformedJSON", summary: "A body that ends too early", request: post("/v1/classify", []byte(`{"structure": {"kind": "cylinder"`)), status: 400},
 		{name: "ProblemNotFound", summary: "A name that is not known", request: get("/v1/canon/OscillatingCilinder"), status: 404},
 		{name: "ProblemMethodNotAllowed", summary: "A method that the path does not answer", request: request(http.MethodDelete, "/v1/catalog", nil), status: 405},
+		{name: "ProblemNotAcceptable", summary: "A page asked for as JSON", request: accepting("application/json", get("/")), status: 406},
+		{name: "ProblemNotAcceptableForm", summary: "An answer asked for as a film", request: accepting("video/*", post("/v1/classify", bodies["CaseMarineRiser"])), status: 406},
 		{name: "ProblemRequestTimeout", summary: "A body that did not arrive", request: late(), status: 408},
 		{name: "ProblemPayloadTooLarge", summary: "A body of two megabytes", request: post("/v1/classify", make([]byte, 2<<20)), status: 413},
 		{name: "ProblemUnsupportedMediaType", summary: "A form", request: form(), status: 415},
-		{name: "ProblemUnavailable", summary: "A server that is about to stop", request: get("/readyz"), status: 503},
+		{name: "ProblemUnavailable", summary: "A server that is about to stop", request: get("/readyz"), status: 503, of: drained()},
 	}
 	for _, name := range api.CatalogNames() {
 		list = append(list, example{name: "Catalog" + titled(name), summary: "The first record", request: get("/v1/catalog/" + name), status: 200, show: firstOf("records")})
@@ -186,6 +198,11 @@ func form() *http.Request {
 	return r
 }
 
+func accepting(media string, r *http.Request) *http.Request {
+	r.Header.Set("Accept", media)
+	return r
+}
+
 // late is a request whose body does not arrive.
 func late() *http.Request {
 	r := post("/v1/classify", nil)
@@ -199,10 +216,13 @@ func (overdue) Read([]byte) (int, error) { return 0, os.ErrDeadlineExceeded }
 func (overdue) Close() error             { return nil }
 
 // answer asks the server.
-func (e *example) answer() (jsontext.Value, error) {
-	handler := server
-	if e.status == http.StatusServiceUnavailable {
-		handler = stopping
+func (e *example) answer(usual http.Handler) (jsontext.Value, error) {
+	if e.value != nil {
+		return e.value, nil
+	}
+	handler := usual
+	if e.of != nil {
+		handler = e.of
 	}
 	w := httptest.NewRecorder()
 	handler.ServeHTTP(w, e.request)
