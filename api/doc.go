@@ -8,6 +8,9 @@
 //	POST /v1/classify            a case in, the answer out
 //	POST /v1/batch               cases in, a line each, answers out, a line each
 //	POST /v1/sweeps              a case and axes in, a row a point out
+//	POST /v1/map                 a case and two axes in, the map of classes out
+//	POST /v1/compare             two cases in, what differs out
+//	POST /v1/scale               a case and scales in, the model's case and what is distorted out
 //	GET  /v1/catalog             what the engine knows, by catalogue
 //	GET  /v1/catalog/{name}      one catalogue
 //	GET  /v1/canon/{name}        one canonical solution, arguments in the query
@@ -15,6 +18,7 @@
 //	POST /v1/records             keeps an answer; GET lists what is kept
 //	GET  /v1/records/{id}        a record, or its answer in a form; DELETE removes it
 //	GET  /embed/{id} /oembed     a record for a page of others, in a frame or as a picture
+//	GET  /                       the case sheet, a page on which to build a case
 //	GET  /docs                   these operations, to look through and try
 //	GET  /problems/{id}          what a problem type means
 //	GET  /healthz /readyz /version /openapi.yaml /openapi.json

@@ -46,17 +46,15 @@ func embeddedOf(r *store.Record, look embedLook, base string) (*embedded, error)
 // restsOn names the assumptions of a class; nil: the engine in force does not
 // know the class.
 func restsOn(class string) map[string]bool {
-	for i := range ladder.Classes {
-		if ladder.Classes[i].ID != class {
-			continue
-		}
-		names := map[string]bool{}
-		for _, e := range ladder.Classes[i].RestsOn {
-			names[e.ID] = true
-		}
-		return names
+	c := ladder.Find(class)
+	if c == nil {
+		return nil
 	}
-	return nil
+	names := map[string]bool{}
+	for _, e := range c.RestsOn {
+		names[e.ID] = true
+	}
+	return names
 }
 
 // readableSuffix is that of the form that a person reads best.

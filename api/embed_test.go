@@ -83,7 +83,7 @@ func TestEmbeddingIsOff(t *testing.T) {
 	if policy := r.Header.Get("Content-Security-Policy"); !strings.HasSuffix(policy, "frame-ancestors 'none'") || r.Header.Get("X-Frame-Options") != "DENY" || r.Header.Get("Cross-Origin-Resource-Policy") != "" {
 		t.Errorf("headers %v", r.Header)
 	}
-	for _, form := range formatNames() {
+	for _, form := range FormatNames() {
 		r := k.ask(t, http.MethodGet, "/v1/records/"+id+"."+form, "")
 		if policy := r.Header.Get("Content-Security-Policy"); r.StatusCode != http.StatusOK || !strings.HasSuffix(policy, "; frame-ancestors 'none'") {
 			t.Errorf(".%s: %d, policy %s", form, r.StatusCode, policy)
@@ -353,8 +353,8 @@ func TestOembedDiscovery(t *testing.T) {
 	for _, suffix := range append([]string{""}, suffixes()...) {
 		r := k.ask(t, http.MethodGet, "/v1/records/"+id+suffix, "")
 		links := r.Header.Values("Link")
-		if len(links) != 2 {
-			t.Fatalf("%s: links %q", suffix, links)
+		if len(links) != 2 || r.Header.Get("Vary") != "Host" {
+			t.Fatalf("%s: links %q, varying with %q", suffix, links, r.Header.Get("Vary"))
 		}
 		for i, format := range []string{"json", "xml"} {
 			address, rest, _ := strings.Cut(strings.TrimPrefix(links[i], "<"), ">")
@@ -381,7 +381,7 @@ func TestOembedDiscovery(t *testing.T) {
 
 func suffixes() []string {
 	var list []string
-	for _, name := range formatNames() {
+	for _, name := range FormatNames() {
 		list = append(list, "."+name)
 	}
 	return list
@@ -405,8 +405,9 @@ func TestHostIsNotTrusted(t *testing.T) {
 	public := New(Config{Records: k.records, PublicURL: "https://regimed.example"})
 	r := newGet(t, "/v1/records/"+id)
 	r.Host = "other.example"
-	if links := serve(t, public.Handler(), r).Header.Values("Link"); len(links) != 2 || !strings.HasPrefix(links[0], "<https://regimed.example/oembed?") {
-		t.Errorf("%q", links)
+	h := serve(t, public.Handler(), r).Header
+	if links := h.Values("Link"); len(links) != 2 || !strings.HasPrefix(links[0], "<https://regimed.example/oembed?") || h.Get("Vary") != "" {
+		t.Errorf("%q, varying with %q", links, h.Get("Vary"))
 	}
 }
 

@@ -46,13 +46,14 @@ func formatNamed(name string) (*format, string) {
 			return &answerFormats[i], ""
 		}
 	}
-	if near := input.Nearest(name, formatNames()); len(near) > 0 {
+	if near := input.Nearest(name, FormatNames()); len(near) > 0 {
 		return nil, "Did you mean ." + strings.Join(near, " or .") + "?"
 	}
-	return nil, "There are ." + strings.Join(formatNames(), ", .") + "."
+	return nil, "There are ." + strings.Join(FormatNames(), ", .") + "."
 }
 
-func formatNames() []string {
+// FormatNames lists the forms that an answer comes in.
+func FormatNames() []string {
 	var names []string
 	for i := range answerFormats {
 		names = append(names, answerFormats[i].name)

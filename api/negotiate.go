@@ -4,6 +4,7 @@ import (
 	"fmt"
 	"mime"
 	"net/http"
+	"slices"
 	"strconv"
 	"strings"
 
@@ -63,7 +64,7 @@ func formAlias(name string) string {
 func mediaTypes() []string {
 	var list []string
 	for i := range answerFormats {
-		if media := answerFormats[i].media(); !contains(list, media) {
+		if media := answerFormats[i].media(); !slices.Contains(list, media) {
 			list = append(list, media)
 		}
 	}
@@ -171,9 +172,6 @@ func sendForm(c echo.Context, f *format, a *regime.Answer) error {
 	c.Response().Header().Set(echo.HeaderContentSecurityPolicy, recordPolicy)
 	return send(c, http.StatusOK, f.mediaType, body)
 }
-
-// FormatNames lists the forms that an answer comes in.
-func FormatNames() []string { return formatNames() }
 
 // Draw draws an answer in a form by its name, as the service does.
 func Draw(name string, a *regime.Answer) ([]byte, error) {

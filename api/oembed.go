@@ -293,6 +293,9 @@ func (s *Server) discovery(c echo.Context, r *store.Record, v *view) {
 	}
 	address := base + "/oembed?url=" + url.QueryEscape(base+recordPath(r.ID)) + "&format="
 	h := c.Response().Header()
+	if s.publicURL == "" {
+		h.Add(echo.HeaderVary, "Host")
+	}
 	for _, format := range []string{"json", "xml"} {
 		h.Add("Link", fmt.Sprintf(`<%s%s>; rel="alternate"; type="%s"`, address, format, discoveryType(format)))
 	}

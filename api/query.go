@@ -5,6 +5,7 @@ import (
 	"fmt"
 	"net/url"
 	"reflect"
+	"slices"
 	"strconv"
 	"strings"
 
@@ -160,7 +161,7 @@ func parameters(c echo.Context, known ...string) (url.Values, []input.Violation,
 	for name, list := range values {
 		pointer := "/" + escapePointer(name)
 		switch {
-		case !contains(known, name):
+		case !slices.Contains(known, name):
 			bad.Add(pointer, input.UnknownField, unknownParameter(name, known), jsonString(list[0]))
 		case len(list) > 1:
 			bad.Add(pointer, input.Duplicate, fmt.Sprintf("%s is given %d times.", name, len(list)), jsonString(list[1]))

@@ -23,7 +23,7 @@ const (
 	headerEngine  = "Regimed-Engine"   // of the record: version and catalogue
 	headerDrawnBy = "Regimed-Drawn-By" // of what was drawn anew
 
-	// A record never changes, so neither does what its full id answers.
+	// A record never changes, so most of what its full id answers need not be asked for twice.
 	cacheForever = "max-age=31536000, immutable"
 	cacheAsking  = "no-cache"
 
@@ -143,7 +143,7 @@ func (s *Server) getRecord(c echo.Context) error {
 type view struct {
 	mediaType string
 	body      []byte
-	lasting   bool   // it is the same whichever engine is in force
+	lasting   bool   // a cache may keep it without asking
 	drawnBy   string // the engine in force, where it made this
 }
 
@@ -189,7 +189,8 @@ func drawnView(ctx context.Context, r *store.Record, form *format, now bool) (*v
 		return nil, err
 	}
 	note := again.note(r)
-	v.lasting = note == "" && !now
+	// Who may frame a page stands in its headers, and an operator may change that.
+	v.lasting = note == "" && !now && form.mediaType != typeHTML
 	if note != "" && form.mark != nil {
 		v.body, err = form.mark(v.body, note)
 	}

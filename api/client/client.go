@@ -47,11 +47,14 @@ func New(base string, options ...Option) *Client {
 	return c
 }
 
-// Parameters are those of a classification; the zero value asks for everything.
+// Parameters are those of a classification. The zero value asks for what the
+// service gives unless told otherwise, which is everything, but for drivers and
+// turning points in a batch.
 type Parameters struct {
 	Fields   []string // members of the answer; empty: all
 	Samples  int      // of an uncertain case; 0: the service's default
 	NoWhatIf bool     // leave out drivers and turning points
+	WhatIf   bool     // with them, in a batch too; not together with NoWhatIf
 }
 
 func (p Parameters) query() string {
@@ -61,6 +64,9 @@ func (p Parameters) query() string {
 	}
 	if p.Samples > 0 {
 		q.Set("samples", strconv.Itoa(p.Samples))
+	}
+	if p.WhatIf {
+		q.Set("what_if", "true")
 	}
 	if p.NoWhatIf {
 		q.Set("what_if", "false")

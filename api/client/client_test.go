@@ -235,6 +235,80 @@ func TestBatch(t *testing.T) {
 	}
 }
 
+// A real service answers a batch line by line, with what was asked for and as
+// it answers a case by itself.
+func TestBatchOfTheService(t *testing.T) {
+	c := service(t)
+	ctx := t.Context()
+	uncertain := strings.Replace(riser, "1.2 kn", "1.2 +- 0.3 kn", 1)
+	bad := strings.Replace(riser, "0.3 m", "0.3 kg", 1)
+	for _, p := range []client.Parameters{{}, {WhatIf: true}, {NoWhatIf: true}, {Samples: 128, NoWhatIf: true}, {Fields: []string{"recommendation"}}} {
+		lines, err := client.Lines(riser, bad, json.RawMessage(`{"id": "a7", "case": `+uncertain+`}`))
+		if err != nil {
+			t.Fatal(err)
+		}
+		var got []client.Line
+		for line, err := range c.Batch(ctx, lines, p) {
+			if err != nil {
+				t.Fatalf("%+v: %v", p, err)
+			}
+			got = append(got, line)
+		}
+		if len(got) != 3 || got[0].Problem != nil || got[2].Problem != nil || string(got[2].ID) != `"a7"` {
+			t.Fatalf("%+v: %+v", p, got)
+		}
+		if q := got[1].Problem; got[1].Answer != nil || got[1].Number != 2 || q == nil || q.Violations[0].Pointer != "/structure/diameter" {
+			t.Errorf("%+v: %+v", p, got[1])
+		}
+		if n := len(got[0].Answer.TurningPoints); n > 0 != p.WhatIf {
+			t.Errorf("%+v: %d turning points", p, n)
+		}
+		if !p.WhatIf {
+			p.NoWhatIf = true // as a batch has it
+		}
+		for i, kase := range map[int]string{0: riser, 2: uncertain} {
+			if alone, err := c.Classify(ctx, kase, p); err != nil || string(alone.Raw) != string(got[i].Answer.Raw) {
+				t.Errorf("%+v: %v: a batch answers\n%.300s\na case by itself\n%.300s", p, err, got[i].Answer.Raw, alone.Raw)
+			}
+		}
+	}
+}
+
+// Samples and NoWhatIf reach the service, and a record says what it was made with.
+func TestParameters(t *testing.T) {
+	c := service(t)
+	ctx := t.Context()
+	uncertain := strings.Replace(riser, "1.2 kn", "1.2 +- 0.3 kn", 1)
+	full, err := c.Classify(ctx, uncertain, client.Parameters{})
+	if err != nil || len(full.TurningPoints) == 0 || len(full.Recommendation.Probability) == 0 {
+		t.Fatalf("%v: %+v", err, full)
+	}
+	less, err := c.Classify(ctx, uncertain, client.Parameters{Samples: 64, NoWhatIf: true})
+	var spread struct {
+		Uncertainty struct {
+			Samples int `json:"samples"`
+		} `json:"uncertainty"`
+	}
+	if err != nil || len(less.TurningPoints) != 0 {
+		t.Fatalf("%v: %+v", err, less)
+	}
+	if err := json.Unmarshal(less.Raw, &spread); err != nil || spread.Uncertainty.Samples != 64 {
+		t.Errorf("%v: %+v", err, spread)
+	}
+	var p *client.Problem
+	if _, err := c.Classify(ctx, uncertain, client.Parameters{Samples: 1}); !errors.As(err, &p) || p.Violations[0].Pointer != "/samples" {
+		t.Errorf("%v", err)
+	}
+	made, _, err := c.CreateRecord(ctx, client.RecordRequest{Case: uncertain, Samples: 64, NoWhatIf: true})
+	if err != nil || made.Options != (client.Options{Samples: 64}) || string(made.Answer.Raw) != string(less.Raw) {
+		t.Errorf("%v: %+v", err, made)
+	}
+	usual, _, err := c.CreateRecord(ctx, client.RecordRequest{Case: riser})
+	if err != nil || usual.Options != (client.Options{Samples: 1024, WhatIf: true}) {
+		t.Errorf("%v: %+v", err, usual)
+	}
+}
+
 // A stream that breaks off, or is none, ends with an error, after what came.
 func TestBatchThatFails(t *testing.T) {
 	const good = `{"line":1,"answer":{}}` + "\n"

@@ -17,6 +17,9 @@ type RecordRequest struct {
 	Title  string
 	Tags   []string
 	Author string
+
+	Samples  int  // of an uncertain case; 0: the service's default
+	NoWhatIf bool // keep no drivers and turning points
 }
 
 // RecordHead is a record without its long parts.
@@ -29,6 +32,13 @@ type RecordHead struct {
 	Kind    string    `json:"kind"`
 	Class   string    `json:"class"`
 	Engine  Engine    `json:"engine"`
+	Options Options   `json:"options"`
+}
+
+// Options are what an answer was made with.
+type Options struct {
+	Samples int  `json:"samples"`
+	WhatIf  bool `json:"what_if"`
 }
 
 // Engine says who answered.
@@ -80,7 +90,8 @@ func (c *Client) CreateRecord(ctx context.Context, wanted RecordRequest) (record
 	if err != nil {
 		return nil, false, err
 	}
-	raw, status, err := c.ask(ctx, http.MethodPost, recordsPath, body)
+	p := Parameters{Samples: wanted.Samples, NoWhatIf: wanted.NoWhatIf}
+	raw, status, err := c.ask(ctx, http.MethodPost, recordsPath+p.query(), body)
 	if err != nil {
 		return nil, false, err
 	}

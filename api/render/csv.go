@@ -20,14 +20,30 @@ import (
 // figure for is empty.
 //
 //	part          answer, class, axis, condition, finding, estimate, criterion, group,
-//	              scale, setup, frequency, mode, warning or caution
-//	id, title     of the row's subject
-//	value, unit   in SI units, as in JSON; of a finding the estimate
+//	              scale, setup, frequency, mode, turn, driver, uncertain, probability,
+//	              warning or caution
+//	id, title     of the row's subject; of a turn, a driver and an uncertain input
+//	              the input
+//	value, unit   in SI units, as in JSON; of a finding the estimate, of a driver the
+//	              sensitivity, of a probability the share of the draws
 //	limit, utilisation, factor, margin, verdict, of_interest, measure, basis
-//	              of a finding, or of an estimate beside the one that governs
+//	              of a finding, or of an estimate beside the one that governs. Of a
+//	              turn: the factor on the value of the case, the verdict that the
+//	              finding turns to, and "gauge" as basis of a gauge pressure. Of a
+//	              probability the verdict, of an uncertain input the form as basis
 //	because       a sentence: reason, rule or origin
 //	source        short
-var CSVColumns = []string{"part", "id", "title", "value", "unit", "limit", "utilisation", "factor", "margin", "verdict", "of_interest", "measure", "basis", "because", "source"}
+//	p05, p50, p95 of a group and of a finding's utilisation, where inputs are
+//	              uncertain: the values below which 5, 50 and 95 % of the draws lie
+//	spread        of an uncertain input: one standard deviation, or half the width
+//	standard_error
+//	              of a probability
+//	finding, class
+//	              of a turn: what turns, and the class that is recommended beyond;
+//	              of a probability one of them, whose it is; of a driver the finding
+//	direction     of a turn: up or down
+var CSVColumns = []string{"part", "id", "title", "value", "unit", "limit", "utilisation", "factor", "margin", "verdict", "of_interest", "measure", "basis", "because", "source",
+	"p05", "p50", "p95", "spread", "standard_error", "finding", "class", "direction"}
 
 // csvRow is a row of the table, in the order of the columns.
 type csvRow struct {
@@ -35,10 +51,13 @@ type csvRow struct {
 	limit, utilisation, factor, margin string
 	verdict, interest, measure, basis  string
 	because, source                    string
+	p05, p50, p95, spread, deviation   string
+	finding, class, direction          string
 }
 
 func (r *csvRow) cells() []string {
-	return []string{r.part, r.id, r.title, r.value, r.unit, r.limit, r.utilisation, r.factor, r.margin, r.verdict, r.interest, r.measure, r.basis, r.because, r.source}
+	return []string{r.part, r.id, r.title, r.value, r.unit, r.limit, r.utilisation, r.factor, r.margin, r.verdict, r.interest, r.measure, r.basis, r.because, r.source,
+		r.p05, r.p50, r.p95, r.spread, r.deviation, r.finding, r.class, r.direction}
 }
 
 // CSV returns the answer as one table by RFC 4180, with the columns of
@@ -49,7 +68,7 @@ func CSV(a *regime.Answer) ([]byte, error) {
 	w := csv.NewWriter(&b)
 	w.UseCRLF = true
 	rows := [][]string{CSVColumns}
-	for _, list := range [][]csvRow{csvHead(a), csvFindings(a), csvGroups(a), csvScales(a), csvFigures(a), csvNotes(a)} {
+	for _, list := range [][]csvRow{csvHead(a), csvFindings(a), csvGroups(a), csvScales(a), csvFigures(a), csvVaried(a), csvNotes(a)} {
 		for i := range list {
 			rows = append(rows, list[i].cells())
 		}
@@ -138,6 +157,9 @@ func csvFindings(a *regime.Answer) []csvRow {
 		if m := f.Main(); m != nil {
 			row.estimate(m)
 		}
+		if s := a.Spread; s != nil && s.Samples > 0 {
+			row.quantiles(s.Utilisations[i])
+		}
 		rows = append(rows, row)
 		for j := range f.Parts() {
 			if j != int(f.Governing) {
@@ -188,6 +210,11 @@ func csvGroups(a *regime.Answer) []csvRow {
 		row := csvRow{part: "group", id: d.ID, title: d.Title, value: csvNumber(a.Groups.Get(id)), unit: "1", because: d.Symbol + " = " + d.Definition}
 		if !a.Groups.Has(id) {
 			row.because = string(appendGroupReason(nil, a, id))
+		}
+		if a.Spread != nil {
+			if q, known := a.Spread.Groups[id]; known {
+				row.quantiles(q)
+			}
 		}
 		rows = append(rows, row)
 	}

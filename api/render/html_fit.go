@@ -12,6 +12,8 @@ const (
 	pageWidth                     = 513.0
 	pageHeight                    = 782.0
 	printedWidth                  = 130 // of the chart, in mm
+	narrowWidth                   = 106 // of the chart of a case with very much to say
+	fewestTurns                   = 4   // of the turning points that paper shows
 	mostLetters                   = 8.5
 	legible                       = 6.6
 	leastLetters                  = 5.5
@@ -19,41 +21,51 @@ const (
 	lineStep                      = 1.24       // from line to line, likewise
 	introMeasured, tablesMeasured = 0.88, 0.80 // real over estimated height, in a browser
 	fillOfPage                    = 0.88       // what the estimate leaves is its own error
+	fillOfFlow                    = 0.92       // likewise, where both parts flow: their errors are seldom of one sign
 )
 
 // print is how an answer is printed.
 type print struct {
-	Letters float64 // size of the letters in points
-	Apart   bool    // the tables begin on a page of their own
-	Dense   bool    // without what a reader finds on screen: formulas of groups, reasons why an effect cannot occur
+	Letters    float64 // size of the letters in points
+	Apart      bool    // the tables begin on a page of their own
+	ChartWidth float64 // of the margins, in millimetres
+	Turns      int     // how many turning points are printed
+	Driven     bool    // with what drives the findings
+	Dense      bool    // without what a reader finds on screen: formulas of groups, reasons why an effect cannot occur
 }
 
 // fit chooses the largest letters with which an answer fills two pages: with the
 // tables on a page of their own where both parts fit, and flowing where they don't.
-// What does not fit in legible letters is printed densely. A case with still more
-// takes another page.
+// What does not fit in legible letters is printed densely, and then with a smaller
+// chart, fewer turning points and no drivers. A case with still more takes another page.
 func fit(r *report, chart *marginchart.Chart) print {
 	const millimetre = 72 / 25.4
 	wide, drawn := chart.Size()
-	high := drawn * printedWidth * millimetre / wide
-	for letters := mostLetters; letters >= legible; letters -= 0.1 {
-		if p, ok := fits(r, high, print{Letters: letters}); ok {
-			return p
+	steps := []struct {
+		least float64
+		print
+	}{
+		{legible, print{ChartWidth: printedWidth, Turns: mostTurns, Driven: true}},
+		{leastLetters, print{ChartWidth: printedWidth, Turns: mostTurns, Driven: true, Dense: true}},
+		{leastLetters, print{ChartWidth: narrowWidth, Turns: fewestTurns, Dense: true}},
+	}
+	for _, step := range steps {
+		high := drawn * step.ChartWidth * millimetre / wide
+		for letters := mostLetters; letters >= step.least; letters -= 0.1 {
+			step.Letters = letters
+			if p, ok := fits(r, high, step.print); ok {
+				return p
+			}
 		}
 	}
-	for letters := mostLetters; letters >= leastLetters; letters -= 0.1 {
-		if p, ok := fits(r, high, print{Letters: letters, Dense: true}); ok {
-			return p
-		}
-	}
-	return print{Letters: leastLetters, Dense: true}
+	return print{Letters: leastLetters, ChartWidth: narrowWidth, Turns: fewestTurns, Dense: true}
 }
 
 func fits(r *report, chart float64, p print) (print, bool) {
-	first, second := firstHeight(r, chart, p.Letters), secondHeight(r, &p)
+	first, second := firstHeight(r, chart, &p), secondHeight(r, &p)
 	sum := first + second
 	p.Letters, p.Apart = round(p.Letters), max(first, second) <= fillOfPage*pageHeight
-	return p, p.Apart || sum <= 2*fillOfPage*pageHeight && sum > 1.2*pageHeight
+	return p, p.Apart || sum <= 2*fillOfFlow*pageHeight && sum > 1.2*pageHeight
 }
 
 func round(x float64) float64 { return math.Round(10*x) / 10 }
@@ -78,7 +90,8 @@ const (
 )
 
 // firstHeight estimates how high the first part becomes around its chart.
-func firstHeight(r *report, chart, letters float64) float64 {
+func firstHeight(r *report, chart float64, p *print) float64 {
+	letters := p.Letters
 	whole, why := textColumn{letters, 1}, textColumn{letters, 0.45}
 	n := 7.0 + whole.lines(r.Why, r.Beside) + whole.lines(r.Study) + whole.lines(r.Caution) + 2
 	for _, list := range [][]string{r.Conditions, r.Warnings, r.Hazards} {
@@ -92,10 +105,56 @@ func firstHeight(r *report, chart, letters float64) float64 {
 		}
 		n += math.Max(1, math.Ceil(total*letterWidth*letters/(why.share*pageWidth))) + rowLines
 	}
-	if len(r.Changes) > 0 {
-		n += headingLines + 1 + float64(len(r.Changes))*(1+rowLines)
-	}
+	n += variedLines(&r.varied, p)
 	return (n+headingLines)*lineStep*letters*introMeasured + chart
+}
+
+// variedLines counts the lines of what varying the inputs showed.
+func variedLines(v *varied, p *print) float64 {
+	letters := p.Letters
+	whole, odds := textColumn{letters, 1}, textColumn{letters, 0.75}
+	n := 0.0
+	if v.Draws != "" {
+		n += headingLines + whole.lines(append(textsOf(v.Uncertain), v.Draws)...)
+	}
+	if len(v.Likely) > 0 {
+		n += headingLines + 1 + float64(len(v.Likely))*(1+rowLines)
+	}
+	if len(v.Odds) > 0 {
+		n += headingLines + 1
+	}
+	for _, x := range v.Odds {
+		n += odds.lines(x.Value) + rowLines
+	}
+	if !v.Explored {
+		return n
+	}
+	n += headingLines + 2
+	input, value, turns, class := textColumn{letters, 0.22}, textColumn{letters, 0.24}, textColumn{letters, 0.22}, textColumn{letters, 0.28}
+	shown := v.Changes[:min(len(v.Changes), p.Turns)]
+	for i := range shown {
+		c := &shown[i]
+		n += max(input.lines(c.Input), value.lines(c.Value), turns.lines(c.Verdict), class.lines(c.Class)) + rowLines
+	}
+	if len(shown) < len(v.Changes) {
+		n++
+	}
+	if !p.Driven || len(v.Drivers) == 0 {
+		return n
+	}
+	driven := []string{driversRule}
+	for _, d := range v.Drivers {
+		driven = append(driven, d.Finding, d.Inputs, "   ")
+	}
+	return n + whole.lines(driven...)
+}
+
+func textsOf(list []pair) []string {
+	var texts []string
+	for _, x := range list {
+		texts = append(texts, x.Name, x.Value, "   ")
+	}
+	return texts
 }
 
 func listLines(c textColumn, list []string) float64 {
@@ -134,7 +193,7 @@ func secondHeight(r *report, p *print) float64 {
 		if p.Dense {
 			formula = ""
 		}
-		cells += half.lines(g.Title, g.Reason, formula, g.Band, g.With, "        ") + rowLines
+		cells += half.lines(g.Title, g.Reason, formula, g.Band, g.With, g.Spread, "        ") + rowLines
 	}
 	n += cells/2 + 1 + headingLines
 	if cells = 2; len(r.Scales) > 0 {

@@ -13,8 +13,9 @@ func Markdown(a *regime.Answer) ([]byte, error) {
 	r := newReport(a)
 	m := &markdown{}
 	m.recommendation(r)
+	m.likely(&r.varied)
 	m.list("On condition that", r.Conditions)
-	m.changes(r.Changes)
+	m.changes(&r.varied)
 	m.rungs(r.Rungs)
 	m.findings(r)
 	m.list("Cannot occur here", r.Moot)
@@ -92,16 +93,54 @@ func (m *markdown) recommendation(r *report) {
 	m.WriteString("\n\nTolerance " + safe(r.Study) + "\n")
 }
 
-func (m *markdown) changes(list []change) {
-	if len(list) == 0 {
+// likely shows what the uncertain inputs make of the answer.
+func (m *markdown) likely(v *varied) {
+	if v.Draws == "" {
+		return
+	}
+	m.heading("Uncertain inputs")
+	for _, x := range v.Uncertain {
+		m.WriteString("- " + code(x.Name) + " " + safe(x.Value) + "\n")
+	}
+	m.WriteString("\n" + safe(v.Draws) + "\n")
+	var rows [][]string
+	for _, c := range v.Likely {
+		title := safe(c.Title)
+		if c.Recommended {
+			title = "**" + title + "**"
+		}
+		rows = append(rows, []string{title + " (" + code(c.ID) + ")", c.Probability, c.StandardError})
+	}
+	m.section("How likely each class is to be the one", []string{"Class", ":Probability", ":±"}, rows)
+	rows = nil
+	for _, x := range v.Odds {
+		rows = append(rows, []string{code(x.Name), safe(x.Value)})
+	}
+	m.section("Assumptions that hold or fall with them", []string{"Assumption", "Verdicts"}, rows)
+}
+
+func (m *markdown) changes(v *varied) {
+	if !v.Explored {
 		return
 	}
 	m.heading("What would change the answer")
-	var rows [][]string
-	for _, c := range list {
-		rows = append(rows, []string{code(c.Input), safe(c.Value), safe(c.Verdict), safe(c.Class)})
+	if len(v.Changes) == 0 {
+		m.WriteString(noTurn + "\n")
+	} else {
+		m.WriteString(turnsOrder + "\n\n")
+		var rows [][]string
+		for _, c := range v.Changes {
+			rows = append(rows, []string{code(c.Input), safe(c.Value), safe(c.Verdict), safe(c.Class)})
+		}
+		m.table([]string{"Input", ":Value", "What turns", "Class"}, rows)
 	}
-	m.table([]string{"Input", ":Value", "What turns", "Class"}, rows)
+	if len(v.Drivers) == 0 {
+		return
+	}
+	m.WriteString("\n" + driversRule + "\n\n")
+	for _, d := range v.Drivers {
+		m.WriteString("- " + code(d.Finding) + " " + safe(d.Inputs) + "\n")
+	}
 }
 
 func (m *markdown) rungs(list []rung) {
@@ -159,6 +198,11 @@ func (m *markdown) findings(r *report) {
 
 func (m *markdown) groups(r *report) {
 	m.heading("Dimensionless groups")
+	heads := []string{"Symbol", ":Value", "Group", "Definition", "Range", "With"}
+	varies := r.hasSpreads()
+	if varies {
+		heads = append(heads, "90 % of draws")
+	}
 	var rows [][]string
 	for i := range r.Groups {
 		g := &r.Groups[i]
@@ -166,9 +210,13 @@ func (m *markdown) groups(r *report) {
 		if g.Reason != "" {
 			value, meaning = "–", safe(g.Reason)
 		}
-		rows = append(rows, []string{formula(g.Symbol), value, safe(g.Title), meaning, safe(g.Band), safe(g.With)})
+		row := []string{formula(g.Symbol), value, safe(g.Title), meaning, safe(g.Band), safe(g.With)}
+		if varies {
+			row = append(row, g.Spread)
+		}
+		rows = append(rows, row)
 	}
-	m.table([]string{"Symbol", ":Value", "Group", "Definition", "Range", "With"}, rows)
+	m.table(heads, rows)
 	if len(r.WaitingGroups) > 0 {
 		m.WriteString("\n" + safe(strings.Join(r.WaitingGroups, " ")) + "\n")
 	}

@@ -27,21 +27,21 @@ type report struct {
 	Study                  string
 	Rungs                  []rung
 	Conditions             []string
-	Changes                []change
-	Findings               []findingRow
-	Moot                   []string
-	MootIDs                string // the same without reasons
-	Criteria               []criterionRow
-	Groups                 []groupRow
-	WaitingGroups          []string
-	Scales                 []scaleRow
-	Modes                  []modeRow
-	Setup                  []setupRow
-	Frequencies            []frequencyRow
-	Warnings, Hazards      []string
-	Caution                string
-	Digest                 string
-	Version, Catalogue     string
+	varied
+	Findings           []findingRow
+	Moot               []string
+	MootIDs            string // the same without reasons
+	Criteria           []criterionRow
+	Groups             []groupRow
+	WaitingGroups      []string
+	Scales             []scaleRow
+	Modes              []modeRow
+	Setup              []setupRow
+	Frequencies        []frequencyRow
+	Warnings, Hazards  []string
+	Caution            string
+	Digest             string
+	Version, Catalogue string
 }
 
 type pair struct{ Name, Value string }
@@ -52,9 +52,6 @@ type rung struct {
 	Recommended, Fell        bool
 	Reasons                  []string
 }
-
-// change is a row of what would change the answer.
-type change struct{ Input, Value, Verdict, Class string }
 
 type findingRow struct {
 	ID, Title, Verdict, Mark    string
@@ -70,6 +67,7 @@ type groupRow struct {
 	Symbol, Title, Value string
 	Formula, Rest        string // the definition: its formula, and what that means
 	Band, With, Reason   string
+	Spread               string // what 90 % of the draws lie between
 }
 
 type scaleRow struct{ Symbol, Title, Value, Origin string }
@@ -94,7 +92,7 @@ func newReport(a *regime.Answer) *report {
 	r.recommendation(a)
 	r.rungs(a)
 	r.conditions(a)
-	r.Changes = changes(a)
+	r.varied = newVaried(a)
 	r.findings(a)
 	r.Moot = mootSentences(a)
 	r.MootIDs = strings.Join(mootIDs(a), ", ")
@@ -119,10 +117,6 @@ func warningText(w *kind.Warning) string {
 	}
 	return w.Pointer + ": " + w.Sentence
 }
-
-// changes is the place of what would change the answer: one row for each turning
-// point. An answer that was not explored has none.
-func changes(*regime.Answer) []change { return nil }
 
 func (r *report) recommendation(a *regime.Answer) {
 	x := &a.Recommendation
@@ -287,6 +281,7 @@ func (r *report) groups(a *regime.Answer) {
 		if a.Groups.Has(id) {
 			row.Value = string(units.AppendNumber(nil, a.Groups.Get(id), 4))
 			row.With = groupWith(a, id)
+			row.Spread = groupSpread(a, id)
 		} else {
 			row.Reason = string(appendGroupReason(nil, a, id))
 		}

@@ -2,6 +2,7 @@ package render
 
 import (
 	"bytes"
+	"context"
 	"encoding/json"
 	"encoding/xml"
 	"errors"
@@ -16,6 +17,7 @@ import (
 	"regimed/regime"
 	"regimed/regime/input"
 	"regimed/regime/kind"
+	"regimed/regime/whatif"
 )
 
 // shipped answers every demo case, by the name of its file.
@@ -45,21 +47,37 @@ func shipped(t testing.TB) map[string]*regime.Answer {
 				t.Fatal(err)
 			}
 		}
-		all[e.Name()] = classify(t, string(text))
+		all[e.Name()] = classifyAll(t, string(text))
 	}
 	return all
 }
 
-// classifyRapid answers a case in a property test.
+// classifyAll answers a case with all that varying its inputs adds, from as few
+// draws as are allowed.
+func classifyAll(t testing.TB, doc string) *regime.Answer {
+	t.Helper()
+	c, bad, err := input.Decode([]byte(doc), kind.Schema())
+	if err != nil || len(bad) > 0 {
+		t.Fatalf("%s\n%v %+v", doc, err, bad)
+	}
+	a, bad, err := whatif.Classify(t.Context(), c, whatif.Options{Samples: whatif.MinSamples, Explore: true})
+	if err != nil || len(bad) > 0 {
+		t.Fatalf("%s\n%v %+v", doc, err, bad)
+	}
+	return a
+}
+
+// classifyRapid answers a case in a property test, with all that varying its
+// inputs adds.
 func classifyRapid(t *rapid.T, doc string) *regime.Answer {
 	t.Helper()
 	c, bad, err := input.Decode([]byte(doc), kind.Schema())
 	if err != nil || len(bad) > 0 {
 		t.Fatalf("%s\n%v %+v", doc, err, bad)
 	}
-	a, bad := regime.Classify(c)
-	if len(bad) > 0 {
-		t.Fatalf("%+v", bad)
+	a, bad, err := whatif.Classify(context.Background(), c, whatif.Options{Samples: whatif.MinSamples, Explore: true})
+	if err != nil || len(bad) > 0 {
+		t.Fatalf("%v %+v", err, bad)
 	}
 	return a
 }

@@ -25,17 +25,22 @@ func (p *page) spread(a *regime.Answer) {
 		lead := left([]byte("   "), at.Path(), idColumn+8)
 		p.wrap(plain, string(lead), appendUncertain(p.room[:0], a.Case.At(at), at))
 	}
-	p.room = append(strconv.AppendInt(append(p.room[:0], "What follows is from "...), int64(s.Samples), 10), " draws of them"...)
-	if s.Outside > 0 {
-		p.room = append(strconv.AppendInt(append(p.room, "; "...), int64(s.Outside), 10), " more lay outside what the case allows and were left out"...)
-	}
-	p.room = append(p.room, ". ± is one standard deviation above, and one standard error below. Single numbers elsewhere on this page are those at the middles."...)
+	p.room = appendDraws(p.room[:0], s)
 	p.wrap(dim, "   ", p.room)
 	if s.Samples == 0 {
 		return
 	}
 	p.likelyClasses(a)
 	p.straddling(a)
+}
+
+// appendDraws says how the uncertain inputs were sampled.
+func appendDraws(dst []byte, s *regime.Spread) []byte {
+	dst = append(strconv.AppendInt(append(dst, "What follows is from "...), int64(s.Samples), 10), " draws of them"...)
+	if s.Outside > 0 {
+		dst = append(strconv.AppendInt(append(dst, "; "...), int64(s.Outside), 10), " more lay outside what the case allows and were left out"...)
+	}
+	return append(dst, ". ± is one standard deviation above, and one standard error below. Single numbers elsewhere on this page are those at the middles."...)
 }
 
 // appendUncertain writes "1.2 m/s ± 0.24 m/s, normal", the second number one standard
@@ -100,9 +105,21 @@ func appendLikelihood(dst []byte, q regime.Probability) []byte {
 // sure is the probability from which on a verdict is not shown as an open one.
 const sure = 0.99
 
-// straddling lists the assumptions of interest whose verdict is not sure, the
-// least sure first.
+// straddling shows the assumptions whose verdict is not sure.
 func (p *page) straddling(a *regime.Answer) {
+	list := unsure(a)
+	if len(list) == 0 {
+		return
+	}
+	p.heading("Assumptions that hold or fall with them")
+	for _, e := range list {
+		p.wrap(plain, string(left([]byte("   "), e.ID, idColumn+2)), appendOdds(p.room[:0], a, e))
+	}
+}
+
+// unsure lists the assumptions of interest whose verdict is not sure, the least
+// sure first.
+func unsure(a *regime.Answer) []*assumption.Entry {
 	type open struct {
 		entry *assumption.Entry
 		most  float64
@@ -117,14 +134,12 @@ func (p *page) straddling(a *regime.Answer) {
 			list = append(list, open{e, most})
 		}
 	}
-	if len(list) == 0 {
-		return
-	}
 	slices.SortStableFunc(list, func(x, y open) int { return cmp.Compare(x.most, y.most) })
-	p.heading("Assumptions that hold or fall with them")
-	for _, o := range list {
-		p.wrap(plain, string(left([]byte("   "), o.entry.ID, idColumn+2)), appendOdds(p.room[:0], a, o.entry))
+	entries := make([]*assumption.Entry, len(list))
+	for i := range list {
+		entries[i] = list[i].entry
 	}
+	return entries
 }
 
 // appendOdds writes "valid 51.4 %, marginal 12.2 %, invalid 36.4 %; error/limit

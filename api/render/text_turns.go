@@ -6,7 +6,6 @@ import (
 
 	"regimed/regime"
 	"regimed/regime/assumption"
-	"regimed/units"
 )
 
 // Lines of a page on what would change the answer.
@@ -25,9 +24,9 @@ func (p *page) turns(a *regime.Answer) {
 	}
 	p.heading("What would change the answer")
 	if len(a.Turns) == 0 {
-		p.wrap(dim, "   ", []byte("No input by itself, within two decades either way and what is plausible."))
+		p.wrap(dim, "   ", []byte(noTurn))
 	} else {
-		p.wrap(dim, "   ", []byte("Each input by itself, the others as given; the nearest turning points first."))
+		p.wrap(dim, "   ", []byte(turnsOrder))
 	}
 	shown := a.Turns[:min(len(a.Turns), mostTurns)]
 	wide := 0
@@ -71,17 +70,10 @@ func (p *page) drivers(a *regime.Answer, shown []regime.Turn) {
 			continue
 		}
 		if !begun {
-			p.wrap(dim, "   ", []byte("Error/limit changes by so many per cent for one per cent of an input:"))
+			p.wrap(dim, "   ", []byte(driversRule))
 			begun = true
 		}
-		p.room = p.room[:0]
-		for i, d := range list {
-			if i > 0 {
-				p.room = append(p.room, ", "...)
-			}
-			p.room = append(append(p.room, d.Place.Path()...), ' ')
-			p.room = units.AppendNumber(p.room, d.Sensitivity, digits)
-		}
+		p.room = appendDriven(p.room[:0], list)
 		p.wrap(plain, string(left([]byte("   "), e.ID, idColumn)), p.room)
 	}
 }

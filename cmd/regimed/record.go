@@ -57,6 +57,7 @@ func plainCause(err error) error {
 func newRecord() *cobra.Command {
 	var data string
 	var about recordTexts
+	options := whatif.Options{Explore: true}
 	cmd := &cobra.Command{
 		Use:   "record FILE|-",
 		Short: "Answer a case and keep the answer",
@@ -74,6 +75,9 @@ the title, the tags and the author that it was given, and its id is printed.`,
 			if data == "" {
 				return &usageError{errors.New("--data names the directory of the records")}
 			}
+			if err := knownSamples(options.Samples); err != nil {
+				return err
+			}
 			d, err := readDocument(args[0], cmd.InOrStdin())
 			if err != nil {
 				return said(cmd, err)
@@ -83,14 +87,16 @@ the title, the tags and the author that it was given, and its id is printed.`,
 				return said(cmd, err)
 			}
 			a.Release() // it is known to hold; what is kept is made with the record
-			return about.keep(cmd, data, d.raw)
+			return about.keep(cmd, data, d.raw, options)
 		},
 	}
 	cmd.Flags().StringVar(&data, "data", "", "directory of the records, made where it is missing")
 	cmd.Flags().StringVar(&about.Title, "title", "", "title of the record (default that of the case)")
 	cmd.Flags().StringArrayVar(&about.Tags, "tag", nil, "tag of the record; may be given several times")
 	cmd.Flags().StringVar(&about.Author, "author", "", "who made the record")
-	for _, name := range []string{"title", "tag", "author"} {
+	cmd.Flags().IntVar(&options.Samples, "samples", whatif.DefaultSamples, "most draws of uncertain inputs")
+	cmd.Flags().BoolVar(&options.Explore, "what-if", true, "say what would change the answer")
+	for _, name := range []string{"title", "tag", "author", "samples"} {
 		completeFlag(cmd, name, cobra.NoFileCompletions)
 	}
 	return cmd
@@ -104,7 +110,7 @@ type recordTexts struct {
 	Author string         `json:"author,omitzero"`
 }
 
-func (r *recordTexts) keep(cmd *cobra.Command, dir string, raw []byte) error {
+func (r *recordTexts) keep(cmd *cobra.Command, dir string, raw []byte, options whatif.Options) error {
 	r.Case = raw
 	body, err := json.Marshal(r)
 	if err != nil {
@@ -122,7 +128,7 @@ func (r *recordTexts) keep(cmd *cobra.Command, dir string, raw []byte) error {
 	if err != nil {
 		return err
 	}
-	wanted.Ask = whatif.Options{Explore: true}
+	wanted.Ask = options
 	kept, isNew, violations, err := api.Keep(cmd.Context(), records, wanted, time.Now())
 	if closed := records.Close(); err == nil {
 		err = closed

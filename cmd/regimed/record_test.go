@@ -38,6 +38,34 @@ func TestRecord(t *testing.T) {
 	}
 }
 
+// The options of classify are those of record, and are kept.
+func TestRecordWithOptions(t *testing.T) {
+	dir := t.TempDir()
+	uncertain := strings.Replace(pileJSON, `"0.5 m"`, `"0.5 m +- 5 %"`, 1)
+	made := regimed(uncertain, "record", "--data", dir, "--samples", "64", "--what-if=false", "-")
+	if made.status != statusMet || made.errOut != "" {
+		t.Fatalf("%+v", made)
+	}
+	records, err := store.OpenSQLite(context.Background(), dir)
+	if err != nil {
+		t.Fatal(err)
+	}
+	defer records.Close()
+	r, err := records.Get(context.Background(), strings.TrimSpace(made.out))
+	if err != nil {
+		t.Fatal(err)
+	}
+	if want := served(t, http.MethodPost, "/v1/classify?samples=64&what_if=false", uncertain); string(r.Answer) != want {
+		t.Errorf("kept %.300s\nwant %.300s", r.Answer, want)
+	}
+	if string(r.Options) != `{"samples":64,"what_if":false}` {
+		t.Errorf("%s", r.Options)
+	}
+	if bad := regimed(uncertain, "record", "--data", dir, "--samples", "1", "-"); bad.status != statusRefuse || bad.out != "" {
+		t.Errorf("%+v", bad)
+	}
+}
+
 func TestRecordOfABadCase(t *testing.T) {
 	dir := t.TempDir()
 	got := regimed("", "record", "--data", dir, file(t, "bad.json", strings.Replace(pileJSON, "0.5 m", "0.5 kg", 1)))
