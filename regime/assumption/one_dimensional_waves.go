@@ -11,15 +11,15 @@ var OneDimensionalWaves = &Entry{
 	ID:        "one-dimensional-waves",
 	Title:     "One-dimensional pressure waves",
 	LeavesOut: "cross modes of the column, and inertia of the wall",
-	Estimated: "scale: diameter over the length of the pressure wave f D/a of the mode, and of the front D/(π a t_c), against 0.1",
+	Estimated: "scale: diameter over the length of the pressure wave f D/a of the mode, and of the surge D/(4ℓ_c + 2a t_c), against 0.1",
 	Measures:  []finding.Measure{finding.Scale},
-	Sources:   []*cite.Source{cite.WylieStreeter1993},
+	Sources:   []*cite.Source{cite.WylieStreeter1993, cite.Skalak1956},
 	Estimate:  estimateOneDimensionalWaves,
 }
 
 var (
 	waveLong  = finding.Say("The bore is {wave_diameter} of a pressure wave at the wet frequency; waves are plane below 0.1.")
-	frontLong = finding.Say("The bore is {front_diameter} of the front that the closure makes; waves are plane below 0.1.")
+	surgeLong = finding.Say("The bore is {surge_diameter} of the pressure wave that the closure makes; waves are plane below 0.1.")
 	noColumn  = finding.Say("There is no column of fluid in a tube.")
 	waveSoft  = finding.Say("The tube carries a pulse wave, whose length has a finding of its own.")
 	noWave    = finding.Say("Neither a frequency nor a closure time says how long the pressure waves are; plane waves are those longer than ten bores.")
@@ -36,7 +36,7 @@ func estimateOneDimensionalWaves(x *finding.Context) {
 	case !x.Is(group.Column):
 		x.NotApplicable(noColumn)
 		return
-	case x.Is(group.StaticOnly) && x.State(group.FrontDiameter) == group.Absent:
+	case x.Is(group.StaticOnly) && x.State(group.SurgeDiameter) == group.Absent:
 		x.NotApplicable(noWave)
 		return
 	}
@@ -44,6 +44,6 @@ func estimateOneDimensionalWaves(x *finding.Context) {
 	if !x.Is(group.StaticOnly) {
 		x.AddOrWait(p, group.WaveDiameter, identity)
 	}
-	p.Say = frontLong
-	x.AddOrWait(p, group.FrontDiameter, identity)
+	p.Say, p.Source = surgeLong, cite.Skalak1956
+	x.AddOrWait(p, group.SurgeDiameter, identity)
 }

@@ -37,7 +37,7 @@ func estimateQuasiSteady(x *finding.Context) {
 	case !flows(x, group.Flow): // said why
 	case x.Is(group.StaticOnly):
 		x.NotApplicable(noFrequency)
-	case x.Is(group.Axial):
+	case x.Is(group.Axial) && !x.Is(group.PanelLike): // a narrow flag is bent as a wide one is
 		x.NotApplicable(memoryNone)
 	case x.Is(group.Bluff) && !x.Is(group.Cross):
 		x.NotApplicable(memoryAlong)
@@ -75,7 +75,8 @@ func memoryOfWake(x *finding.Context) {
 
 // panelMemory is what a panel's flow remembers: below Mach 1 the potential flow
 // over a wave of wave number k answers to (1 + κ)², κ = ω/(Uk), of which the
-// quasi-steady flow keeps the 1; above it, piston theory is quasi-steady to
+// quasi-steady flow keeps the 1, and so does that along a slender body, whose load
+// is the virtual mass times (∂/∂t + U ∂/∂x)²; above it, piston theory is quasi-steady to
 // the order κ/(M² − 1).
 func panelMemory(x *finding.Context) {
 	p := finding.Part{Measure: finding.Load, Basis: finding.Canonical, Factor: 1.5, Say: memoryPanel, Source: cite.Dowell1975}

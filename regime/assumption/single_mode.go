@@ -25,6 +25,7 @@ var (
 	modesCoriolis = finding.Say("The Coriolis force of the flow couples the mode to the next and shifts it by {e:%}.")
 	modesUniform  = finding.Say("A uniform section in a uniform fluid couples no modes through the fluid.")
 	modesCompete  = finding.Say("A second mode lies at {lock_in_next} of its band of lock-in: more than one mode competes for the wake.")
+	modesApart    = finding.Say("A second mode comes to {lock_in_next} of its band of lock-in, and leaves the wake to the first.")
 )
 
 func estimateSingleMode(x *finding.Context) {
@@ -55,6 +56,16 @@ func estimateSingleMode(x *finding.Context) {
 			return share * mu / (1 + mu) / math.Max(math.Abs(ratio*ratio-1), 1e-9)
 		})
 	}
-	x.AddOrWait(finding.Part{Measure: finding.Scale, Basis: finding.Threshold, Limit: 1, Factor: 3, Say: modesCompete, Source: cite.ThisMethod},
-		group.LockInNext, identity)
+	addCompetition(x)
+}
+
+// addCompetition adds how near a second mode comes to the wake. The edge of the
+// band is known to within a half; which of two modes wins inside it is not known
+// short of a solution of both, hence the wider factor there.
+func addCompetition(x *finding.Context) {
+	p := finding.Part{Measure: finding.Scale, Basis: finding.Threshold, Limit: 1, Factor: 1.5, Inner: 3, Say: modesCompete, Source: cite.ThisMethod}
+	if next := x.Get(group.LockInNext); x.Has(group.LockInNext) && next*p.Factor <= 1 {
+		p.Say = modesApart
+	}
+	x.AddOrWait(p, group.LockInNext, identity)
 }

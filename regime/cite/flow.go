@@ -107,6 +107,11 @@ var (
 		Full:    "Wylie E.B., Streeter V.L., Fluid Transients in Systems, Prentice-Hall, 1993",
 		Locator: "chapter 1, wave speed and its support conditions", Memory: true,
 	}
+	Skalak1956 = &Source{
+		ID: "skalak-1956", Short: "Skalak 1956",
+		Full:    "Skalak R., An extension of the theory of water hammer, Transactions of the ASME 78, 105-116, 1956",
+		Locator: "front of a sudden closure: dispersion by radial inertia", Memory: true,
+	}
 	Moens1878 = &Source{
 		ID: "moens-1878", Short: "Moens 1878",
 		Full:    "Moens A.I., Die Pulscurve, Brill, Leiden, 1878",
@@ -180,7 +185,7 @@ var flow = []*Source{
 	Theodorsen1935, TheodorsenGarrick1940, HodgesPierce2011,
 	GregoryPaidoussis1966, Paidoussis1998, Eloy2007, Eloy2008, DenHartog1956,
 	Connors1970, PettigrewTaylor1991,
-	Joukowsky1898, Korteweg1878, WylieStreeter1993, Moens1878, WomersleyWave1957,
+	Joukowsky1898, Korteweg1878, WylieStreeter1993, Skalak1956, Moens1878, WomersleyWave1957,
 	Glauert1928, Liepmann1957,
 	Airy1845, DeanDalrymple1991, MacCamyFuchs1954, Abramson1966,
 	DennisChang1970, Kaplun1957, Wieselsberger1921, Roshko1961, Blasius1908,

@@ -190,6 +190,7 @@ const (
 	ShockPeriod
 
 	PullIn
+	SurgeDiameter
 
 	Count // number of groups
 )
@@ -548,7 +549,9 @@ var table = [Count]Def{
 	WaveDiameter: {ID: "wave_diameter", Symbol: "f D/a", Title: "diameter over pressure wavelength",
 		Definition: "wet natural frequency × inner diameter / pressure wave speed"},
 	FrontDiameter: {ID: "front_diameter", Symbol: "D/(π a t_c)", Title: "diameter over length of the wave front",
-		Definition: "inner diameter / (π × pressure wave speed × closure time)"},
+		Definition: "inner diameter / (π × pressure wave speed × closure time); nothing rests on it"},
+	SurgeDiameter: {ID: "surge_diameter", Symbol: "D/(4ℓ_c + 2a t_c)", Title: "diameter over length of the surge",
+		Definition: "inner diameter / (4 × length of the column + 2 × pressure wave speed × closure time)"},
 	PipeWeight: {ID: "pipe_weight", Symbol: "γ_w", Title: "weight over bending stiffness",
 		Definition: "(m + m_f − m_displaced) g ℓ³ sin(inclination)/(E I), positive where the downstream end hangs lower"},
 	PipeCompression: {ID: "pipe_compression", Symbol: "Π", Title: "axial compression over bending stiffness",

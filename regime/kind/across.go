@@ -150,25 +150,36 @@ func (w *wake) strouhalNear(r *Resolver, fd float64) float64 {
 }
 
 // worstMode finds the mode nearest to lock-in at the worst speed of operation,
-// and how near the next one comes. Modes count up to one and a half times the
-// highest shedding frequency, and the first always.
+// and how near the next one comes. Modes are taken as the worst up to one and a
+// half times the highest shedding frequency, and the first always; the next one is
+// looked for among all of them, since it nears the wake gradually.
 func (w *wake) worstMode() {
-	best, second := -1.0, -1.0
+	best := -1.0
+	var order topTwo
 	for i, ratio := range w.modes { // ratio: f_w,n/f_w,1
 		lo, hi := w.xLow/ratio, w.xHigh/ratio
-		if i > 0 && hi < 1/1.5 {
-			break
-		}
 		x := nearest(lo, hi, w.bandLow, w.end)
 		u := math.Min(x/w.bandLow, w.end/x)
-		if u > best {
-			second = best
+		order.add(u)
+		if u > best && (i == 0 || hi >= lastShed) {
 			best, w.position, w.mode = u, x, i+w.first
-		} else if u > second {
-			second = u
 		}
 	}
-	w.next = second
+	w.next = order.second
+}
+
+// lastShed is St U/(f_w D) of a mode at one and a half times the frequency of
+// shedding, beyond which no mode is taken as the one that locks in.
+const lastShed = 1 / 1.5
+
+// topTwo keeps the two largest of positive values, 0 where there is none.
+type topTwo struct{ first, second float64 }
+
+func (t *topTwo) add(v float64) {
+	if v > t.first {
+		t.first, v = v, t.first
+	}
+	t.second = math.Max(t.second, v)
 }
 
 // nearest returns the value of lo … hi that lies deepest in the band.
@@ -301,7 +312,7 @@ func (w *wake) groups(s *scale.Set, g *group.Set) {
 	g.Put(group.LockInEnd, w.end)
 	g.Put(group.LockInPosition, w.position)
 	g.Put(group.LockInMode, float64(w.mode))
-	if w.next >= 0 {
+	if w.next > 0 {
 		g.Put(group.LockInNext, w.next)
 	}
 	if !math.IsNaN(w.amplitude) {

@@ -143,11 +143,7 @@ func (f *flapper) masses(r *Resolver) {
 	r.derive(scale.AddedMassFree, added, units.MassPerArea, "2ρ/k, less what escapes round the sides")
 	r.derive(scale.AddedMass, added, units.MassPerArea, "2ρ/k, less what escapes round the sides")
 	r.addedNeeds(units.MassPerArea)
-	viscous := 1 / k
-	if atMost(f.width, f.l) {
-		viscous = f.width / 2
-	}
-	r.derive(scale.ViscousLength, viscous, units.Length, "half the width, 1/k of a wide flag")
+	r.derive(scale.ViscousLength, math.Min(f.width/2, 1/k), units.Length, "half the width, 1/k of a wide flag")
 	r.closeGroups()
 }
 
@@ -186,14 +182,37 @@ func (f *flapper) frequencies(r *Resolver) {
 	r.frequencies(derived, "1.8751²/(2πL²) √(B/m″)", r.gamma(f.viscous))
 }
 
-// viscous is Γ of the viscous solution: the ribbon for a flag no wider than
-// long, else Stokes' layer along a bent sheet, 1 + (1 − i)kδ/2.
+// viscous is Γ of the viscous solution, of the first mode.
 func (f *flapper) viscous(freq, nu float64) (gr, gi float64, err error) {
-	if atMost(f.width, f.l) {
-		return ribbon(2 * math.Pi * freq * f.width * f.width / 4 / nu)
+	k := f.wave(1)
+	return sheetViscous(k, f.width, 8/(8+math.Pi*k*f.width), freq, nu)
+}
+
+// sheetViscous is Γ of the viscous solution of a sheet of wave number k and width
+// H that is bent at a frequency, with the share s that the flow round its sides has
+// in what limits its added mass.
+func sheetViscous(k, width, s, freq, nu float64) (gr, gi float64, err error) {
+	re, im, err := ribbon(2 * math.Pi * freq * width * width / 4 / nu)
+	if err != nil {
+		return 0, 0, err
 	}
-	layer := f.wave(1) * math.Sqrt(nu/(math.Pi*freq)) / 2
-	return 1 + layer, layer, nil
+	layer := k * math.Sqrt(nu/(math.Pi*freq)) / 2
+	g := sheetFactor(s, complex(re, -im), complex(1+layer, -layer))
+	return real(g), -imag(g), nil
+}
+
+// sheetFactor is Γ of a bent sheet of any width, joined of those of a narrow
+// ribbon and of a wide sheet as their added masses are.
+//
+//	1/Γ = s/Γ_r + (1 − s)/Γ_w, s = −∂ln m_a/∂ln(1/m_r)
+//
+// Symbols: Γ_r of the ribbon, whose ideal added mass per area is m_r = ρπH/4; Γ_w =
+// 1 + (1 − i)kδ/2 of Stokes' layer along a wavy sheet, m_w = 2ρ/k; s [1] the share
+// of the ribbon: 8/(8 + πkH) where 1/m_a = 1/m_r + 1/m_w. Range: 0 ≤ s ≤ 1.
+// Accuracy: exact at both ends, that of the joined masses between. Check: Γ_r =
+// Γ_w: the same; s ½: the harmonic mean of the two. Source: as the added mass.
+func sheetFactor(s float64, narrow, wide complex128) complex128 {
+	return 1 / (complex(s, 0)/narrow + complex(1-s, 0)/wide)
 }
 
 // stability finds the speed at which the flag loses stability: flutter of a
@@ -204,15 +223,40 @@ func (f *flapper) stability(r *Resolver) {
 	case math.IsNaN(b*m*rho) || !(rho > 0):
 	case f.inverted:
 		f.onset = math.Sqrt(invertedOnset(f.width/f.l) * b / (rho * f.l * f.l * f.l))
-	case f.strip:
-		f.conveyingOnset(b, m, rho, r.X(scale.Speed))
 	default:
-		ratio := math.Max(1e-6, math.Min(rho*f.l/m, 1e6))
-		u, err := canon.FlagCritical(ratio, math.Max(1e-3, math.Min(f.width/f.l, 1e9)))
-		if err == nil {
-			f.onset = u / f.l * math.Sqrt(b/m)
-		}
+		f.onset = f.flutterOnset(b, m, rho)
+		f.conveys(b, m, rho, r.X(scale.Speed))
 	}
+}
+
+// wideFlag is width over length from which on a flag flutters as a wide one.
+const wideFlag = 1
+
+// flutterOnset is the speed at which a flag flutters: that of a slender body up to
+// H/L 0.3, that of waves on a sheet from 1 on. Between them it goes from one to the
+// other as a power of H/L, since measured onsets vary smoothly with the width
+// (Eloy et al. 2008, from memory) where the two theories lie up to a factor of
+// three apart.
+func (f *flapper) flutterOnset(b, m, rho float64) float64 {
+	share := within(math.Log(f.width/f.l/slenderFlag)/math.Log(wideFlag/slenderFlag), 0, 1)
+	onset := 1.0
+	if share < 1 {
+		onset = math.Pow(f.slenderOnset(b, m, rho), 1-share)
+	}
+	if share > 0 {
+		onset *= math.Pow(f.wideOnset(b, m, rho), share)
+	}
+	return onset
+}
+
+// wideOnset is that of waves on a sheet, NaN where it is not known.
+func (f *flapper) wideOnset(b, m, rho float64) float64 {
+	ratio := math.Max(1e-6, math.Min(rho*f.l/m, 1e6))
+	u, err := canon.FlagCritical(ratio, math.Max(1e-3, math.Min(f.width/f.l, 1e9)))
+	if err != nil {
+		return math.NaN()
+	}
+	return u / f.l * math.Sqrt(b/m)
 }
 
 // invertedOnset is κ = ρU²L³/B at which a plate clamped at its trailing edge
@@ -225,18 +269,32 @@ func (f *flapper) stability(r *Resolver) {
 // Source: Sader et al. 2016, from memory, with the lift slope of a finite wing.
 func invertedOnset(aspect float64) float64 { return 1.85 * (1 + 2/aspect) }
 
-// conveyingOnset is that of a slender body whose virtual mass πρH²/4 follows it,
-// the equation of a cantilevered pipe that conveys fluid.
-func (f *flapper) conveyingOnset(b, m, rho, speed float64) {
-	virtual := rho * math.Pi * f.width * f.width / 4
-	f.beta = virtual / (virtual + m*f.width)
-	unit := math.Sqrt(b*f.width/virtual) / f.l
-	f.conveying = speed / unit
+// slenderOnset is that of a slender body whose virtual mass πρH²/4 follows it,
+// the equation of a cantilevered pipe that conveys fluid; NaN where it is not known.
+func (f *flapper) slenderOnset(b, m, rho float64) float64 {
+	beta, unit := f.followed(b, m, rho)
 	// the solution ends at β 0.95, above which the onset rises further
-	u, _, err := canon.ConveyingPipe(math.Max(1e-4, math.Min(f.beta, 0.95)), 0, 0, canon.PipeCantilever)
-	if err == nil {
-		f.onset = u * unit
+	u, _, err := canon.ConveyingPipe(math.Max(1e-4, math.Min(beta, 0.95)), 0, 0, canon.PipeCantilever)
+	if err != nil {
+		return math.NaN()
 	}
+	return u * unit
+}
+
+// followed is the share of the virtual mass in the mass, and the unit of speed of
+// the pipe that a slender flag is.
+func (f *flapper) followed(b, m, rho float64) (beta, unit float64) {
+	virtual := rho * math.Pi * f.width * f.width / 4
+	return virtual / (virtual + m*f.width), math.Sqrt(b*f.width/virtual) / f.l
+}
+
+// conveys puts the numbers of the pipe that a slender flag is.
+func (f *flapper) conveys(b, m, rho, speed float64) {
+	if !f.strip {
+		return
+	}
+	beta, unit := f.followed(b, m, rho)
+	f.beta, f.conveying = beta, speed/unit
 }
 
 // bodyStrouhal is by how much a plate behind a body may lower its Strouhal
@@ -281,14 +339,11 @@ func (f *flapper) resonate(r *Resolver) {
 	if st == 0 || math.IsNaN(st) {
 		st = f.wake.st
 	}
-	f.wake.next = -1
+	var order topTwo
 	for n := 1; n <= group.MaxModes; n++ {
 		wet := f.wetRatio(n, m, rho) * first
 		x := st / (wet * f.body)
 		lo, hi := low*x*r.X(scale.SpeedLow), x*r.X(scale.SpeedHigh)
-		if n > 1 && hi < 1/1.5 {
-			break
-		}
 		am, err := canon.WakeLockInParameter(math.Max(1e-3, math.Min(st, 1)), math.Max(1e-3, math.Min((m+rho*sheetMass(f.wave(n), f.width))*f.l/(rho*f.body*f.body), 1e12)))
 		if err != nil {
 			return
@@ -299,15 +354,14 @@ func (f *flapper) resonate(r *Resolver) {
 		}
 		y := nearest(lo, hi, bandLow, bandHigh)
 		u := math.Min(y/bandLow, bandHigh/y)
-		if u > best {
-			f.wake.next = best
+		order.add(u)
+		if u > best && (n == 1 || hi >= lastShed) {
 			best, f.wake.position, f.wake.mode = u, y, n
 			f.wake.bandLow, f.wake.bandHigh, f.wake.end = bandLow, bandHigh, bandHigh
-		} else {
-			f.wake.next = math.Max(f.wake.next, u)
 		}
 		f.wake.solved = true
 	}
+	f.wake.next = order.second
 }
 
 // wetRatio is the wet frequency of mode n over that of the first.
@@ -405,12 +459,9 @@ func (f *flapper) flowGroups(s *scale.Set, g *group.Set) {
 	waveLayer(g, f.l, f.wave(1))
 	f.bodyGroups(s, g)
 	g.Put(group.AspectRatio, f.width/f.l)
-	if f.strip {
-		g.Drop(group.ReducedFrequency)
-		if !math.IsNaN(f.conveying) {
-			g.Put(group.ConveyingSpeed, f.conveying)
-			g.Put(group.ConveyingMass, f.beta)
-		}
+	if !math.IsNaN(f.conveying) {
+		g.Put(group.ConveyingSpeed, f.conveying)
+		g.Put(group.ConveyingMass, f.beta)
 	}
 	id := group.FlutterSpeed
 	if f.inverted {
@@ -453,7 +504,7 @@ func (f *flapper) bodyGroups(s *scale.Set, g *group.Set) {
 	g.Put(group.LockInEnd, f.wake.end)
 	g.Put(group.LockInPosition, f.wake.position)
 	g.Put(group.LockInMode, float64(f.wake.mode))
-	if f.wake.next >= 0 {
+	if f.wake.next > 0 {
 		g.Put(group.LockInNext, f.wake.next)
 	}
 }

@@ -83,7 +83,7 @@ func TestOnsetOfFlags(t *testing.T) {
 	}
 	above, _ := resolveCase(t, text(0.301))
 	below, _ := resolveCase(t, text(0.299))
-	if r := above.Groups().Get(group.FlutterSpeed) / below.Groups().Get(group.FlutterSpeed); r < 0.5 || r > 2 {
+	if r := above.Groups().Get(group.FlutterSpeed) / below.Groups().Get(group.FlutterSpeed); r < 0.98 || r > 1.02 {
 		t.Errorf("the two criteria differ by %g where they meet", r)
 	}
 }

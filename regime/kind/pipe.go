@@ -817,6 +817,9 @@ func (p *pipe) surges(s *scale.Set, g *group.Set) {
 	if tc > 0 {
 		putOrWait(s, g, group.FrontDiameter, p.d/(math.Pi*a*tc), scale.SoundSpeed, scale.Density, scale.Thickness, scale.Young)
 	}
+	if !math.IsNaN(tc) {
+		putOrWait(s, g, group.SurgeDiameter, surgeDiameter(p.d, l, a*tc), scale.ColumnLength, scale.SoundSpeed, scale.Density, scale.Thickness, scale.Young)
+	}
 	sudden := s.X(scale.Density) * a * change
 	gauge := s.X(scale.Pressure) - s.X(scale.AmbientPressure)
 	switch {
@@ -834,6 +837,25 @@ func (p *pipe) surges(s *scale.Set, g *group.Set) {
 	}
 	apart := math.Max(s.X(scale.Pressure)-s.X(scale.VapourPressure), 1e-6*s.X(scale.Pressure))
 	p.putSurge(s, g, group.ColumnSeparation, group.ColumnSeparationSudden, sudden/apart, ratio, append(needs, scale.VapourPressure))
+}
+
+// surgeDiameter is the bore over the length of the pressure wave that a change of
+// the flow makes.
+//
+//	D/λ, λ = 2(2ℓ_c + a t_c)
+//
+// Symbols: D bore (m), ℓ_c length of the column (m), a t_c length of the front
+// (m). The pressure at the valve lasts 2ℓ_c/a + t_c, which is half a period; for a
+// closure at once λ is the period 4ℓ_c/a of the water hammer. The front alone is
+// no measure: radial inertia smooths the steepest one over a few bores, and the
+// mean pressure of the section behind it is that of the balance of momentum, ρaΔU,
+// however fast the valve is. Range: ℓ_c > 0, t_c ≥ 0. Accuracy: a threshold; for
+// some bores behind a front that is shorter than the bore the pressure rings about
+// its mean, in an undamped tube 27 % above it (the integral of Airy's function).
+// Check: D 0.5, ℓ_c 2000, t_c 0: 6.25e-5. Source: Wylie & Streeter 1993; Skalak
+// 1956 for the front, both from memory.
+func surgeDiameter(bore, column, front float64) float64 {
+	return bore / (4*column + 2*front)
 }
 
 // putSurge puts a pressure ratio of a sudden change, and that of the change at

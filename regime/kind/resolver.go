@@ -39,7 +39,10 @@ func newResolver(c *input.Case, k *Kind) *Resolver {
 func (r *Resolver) trait(t group.Traits) { r.Traits |= t }
 
 func (r *Resolver) warn(f *input.Field, code, sentence string) {
-	r.warnings = append(r.warnings, Warning{Pointer: f.Pointer(), Code: code, Sentence: sentence})
+	w := Warning{Pointer: f.Pointer(), Code: code, Sentence: sentence}
+	if !slices.Contains(r.warnings, w) { // several steps may notice the same
+		r.warnings = append(r.warnings, w)
+	}
 }
 
 func (r *Resolver) contradict(f *input.Field, sentence string) {

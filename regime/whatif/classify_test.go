@@ -83,3 +83,22 @@ func TestProbabilityColumns(t *testing.T) {
 		t.Errorf("%v", err)
 	}
 }
+
+// Of an assumption that has no such number the names that it has are offered.
+func TestNamesNearAColumn(t *testing.T) {
+	rows := []struct{ name, near string }{
+		{"reynlds", "Did you mean reynolds?"},
+		{"still-fluid.verdict", "Did you mean still-fluid or still-fluid.utilisation?"},
+		{"nothing.verdict", `"nothing.verdict".`},
+	}
+	ran := 0
+	for _, row := range rows {
+		if _, err := FindColumn(row.name); err == nil || !strings.HasSuffix(err.Error(), row.near) {
+			t.Errorf("%s: %v", row.name, err)
+		}
+		ran++
+	}
+	if ran != 3 {
+		t.Errorf("%d rows", ran)
+	}
+}

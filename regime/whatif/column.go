@@ -86,10 +86,20 @@ func (e *UnknownColumnError) Error() string {
 func FindColumn(name string) (Column, error) {
 	c, known := columnOf(name)
 	if !known {
-		return Column{}, &UnknownColumnError{Name: name, Near: input.Nearest(name, ColumnNames())}
+		return Column{}, &UnknownColumnError{Name: name, Near: nearColumns(name)}
 	}
 	c.Name = name
 	return c, nil
+}
+
+// nearColumns lists the names that may have been meant. Of an assumption whose
+// number has no such name these are its verdict and its first number.
+func nearColumns(name string) []string {
+	near := input.Nearest(name, ColumnNames())
+	if head, _, dotted := strings.Cut(name, "."); len(near) == 0 && dotted && assumption.Find(head) != nil {
+		near = []string{head, head + "." + findingNumbers[0].name}
+	}
+	return near
 }
 
 func columnOf(name string) (Column, bool) {
