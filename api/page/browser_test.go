@@ -12,6 +12,7 @@ import (
 	"testing"
 	"time"
 
+	"github.com/chromedp/cdproto/browser"
 	"github.com/chromedp/cdproto/emulation"
 	"github.com/chromedp/cdproto/log"
 	"github.com/chromedp/cdproto/network"
@@ -134,7 +135,11 @@ func (p *tab) listen(event any) {
 	defer p.lock.Unlock()
 	switch e := event.(type) {
 	case *runtime.EventExceptionThrown:
-		p.mistakes = append(p.mistakes, e.ExceptionDetails.Text)
+		what := e.ExceptionDetails.Text
+		if thrown := e.ExceptionDetails.Exception; thrown != nil {
+			what += ": " + thrown.Description
+		}
+		p.mistakes = append(p.mistakes, what)
 	case *runtime.EventConsoleAPICalled:
 		if e.Type == "error" || e.Type == "warning" {
 			p.mistakes = append(p.mistakes, fmt.Sprint("console: ", e.Args))
@@ -157,6 +162,9 @@ func (p *tab) check() {
 		p.t.Error(m)
 	}
 	for _, address := range p.asked {
+		if strings.HasPrefix(address, "data:image/") || strings.HasPrefix(address, "blob:"+p.base+"/") {
+			continue // what the page holds already
+		}
 		if !strings.HasPrefix(address, p.base+"/") {
 			p.t.Errorf("a request to %s", address)
 		}
@@ -219,12 +227,12 @@ func (p *tab) state(name string) {
 	p.until(fmt.Sprintf("document.documentElement.dataset.state === %q", name))
 }
 
-// answered waits for the answer to the case as it stands in the address: the
-// page keeps it there.
+// answered waits for the answer to the case as it stands in the address, where
+// the page keeps it, and for what would change it.
 func (p *tab) answered() {
 	p.t.Helper()
 	p.state("answered")
-	p.until(`!document.querySelector("#answer-body").hasAttribute("aria-busy")`)
+	p.until(`!document.querySelector("#answer [aria-busy], #answer-body[aria-busy]")`)
 }
 
 // example opens a demo case.
@@ -240,4 +248,26 @@ func (p *tab) dark() {
 	_, err := chromedp.Call(p.ctx, emulation.SetEmulatedMedia, emulation.SetEmulatedMediaParams{
 		Features: []*emulation.MediaFeature{{Name: "prefers-color-scheme", Value: "dark"}}})
 	p.must(err)
+}
+
+// saveTo lets the tab save files in a folder.
+func (p *tab) saveTo(folder string) {
+	p.t.Helper()
+	_, err := chromedp.Call(p.ctx, browser.SetDownloadBehavior, browser.SetDownloadBehaviorParams{
+		Behavior: browser.SetDownloadBehaviorBehaviorAllow, BrowserContextID: chromedp.FromContext(p.ctx).BrowserContextID, DownloadPath: folder})
+	p.must(err)
+}
+
+// saved waits for a file that the browser saves, and returns what it holds. The
+// browser gives a file its name once it is whole.
+func (p *tab) saved(name string) []byte {
+	p.t.Helper()
+	for range 400 {
+		if body, err := os.ReadFile(name); err == nil && len(body) > 0 {
+			return body
+		}
+		p.text(`new Promise((go) => setTimeout(go, 25))`)
+	}
+	p.t.Fatalf("no file %s", name)
+	return nil
 }

@@ -24,8 +24,8 @@ var expressions = []struct{ module, expression, want string }{
 	{"quantity", `m.scaled("50 °F +- 2 °F", 1.02)`, "60.193 °F +- 2.04 °F"},
 	{"quantity", `m.scaled("0.004", 3.3)`, "0.0132"},
 	{"quantity", `m.scaled("many", 2)`, "many"},
-	{"quantity", `m.kelvin("10 degC")`, "283.15"},
-	{"quantity", `m.kelvin("3 m")`, "NaN"},
+	{"quantity", `m.scaled("4.2 barg", 2, 4, 1.013)`, "9.413 barg"}, // from no pressure at all
+	{"quantity", `m.ends([1, 2, 3]) + "," + m.ends([2, 2, 2]) + "," + m.ends(undefined) + "," + m.ends([null, null, null])`, "1 … 3,,,"},
 	{"quantity", `m.leading("−3.5e2 m")`, "-350"},
 	{"quantity", `m.isNumber("1e400")`, "false"},
 	{"quantity", `m.isNumber(" .5 ")`, "true"},

@@ -3,6 +3,7 @@ package page_test
 import (
 	"fmt"
 	"net/http"
+	"path/filepath"
 	"strings"
 	"testing"
 
@@ -261,50 +262,158 @@ func TestModes(t *testing.T) {
 	p.until(`document.querySelector("#f-structure-modes-0-frequency_dry").value === "31 Hz" && !document.querySelector("#f-structure-modes-1-frequency_dry")`)
 }
 
-// turns are members that an answer may have one day more than today.
-const turns = `(() => {
-	const ask = window.fetch;
-	window.fetch = async (path, options) => {
-		const r = await ask(path, options);
-		if (path !== "/v1/classify" || !r.ok) return r;
-		const a = await r.json();
-		a.turning_points = [
-			{input: "flow.speed", pointer: "/flow/speed", direction: "up", value: 99, unit: "m/s", factor: 1.5, finding: "no-lock-in", verdict: "valid", class: "steady-load"},
-			{input: "flow.speed", pointer: "/flow/speed", direction: "down", value: 1, unit: "m/s", factor: 0.004, finding: "still-fluid", verdict: "valid", class: "added-mass"},
-			{input: "fluid.temperature", pointer: "/fluid/temperature", direction: "up", value: 320.5, unit: "K", factor: null, finding: "no-cavitation", verdict: "invalid", class: "two-way-implicit"},
-			{input: "motion.amplitude", pointer: "/motion/amplitude", direction: "up", value: 0.25, unit: "m", factor: null, finding: "small-stroke", verdict: "invalid", class: "two-way-implicit"}];
-		a.recommendation.probability = {[a.recommendation.class]: 0.75, "steady-load": {share: 0.249, standard_error: 0.01}, "added-mass": 0.001};
-		return new Response(JSON.stringify(a));
-	};
+// uncertain is a demo case with a length around the one at which its class turns.
+const uncertain = `(async () => {
+	const kase = (await (await fetch("/examples.json")).json()).examples.find((e) => e.name === "outfall-span").case;
+	kase.structure.length = "17.5 +- 1 m";
+	document.querySelector("#paste").value = JSON.stringify(kase);
+	document.querySelector("#paste-read").click();
 })()`
 
-// Turning points become marks of the sliders, and those that no slider can show
-// are told; the classes are shown with their probabilities.
-func TestTurningPoints(t *testing.T) {
+// The uncertainty of an input makes each class probable in so far; the numbers
+// are those of the service.
+func TestProbabilities(t *testing.T) {
 	p := open(t, "/", wide)
-	p.text(turns)
-	p.example("outfall-span")
-	if got := p.text(`document.querySelectorAll("#part-whatif .turn-marks path").length`); got < "2" {
-		t.Errorf("%s marks", got)
-	}
-	if got := p.text(`document.querySelector("#part-whatif .slider input").id`); got != "if-fluid-temperature" { // 47 °C is 1.13 times 10 °C
-		t.Errorf("the first slider is %s, and not that of the nearest turn", got)
-	}
-	if got := p.text(`Number(document.querySelector("#if-flow-speed").min) * Math.log(10) / 230 < Math.log(0.004)`); got != "true" {
-		t.Error("the slider ends before the turn")
-	}
-	told := p.text(`document.querySelector("#part-whatif").innerText`)
-	if !strings.Contains(told, "motion.amplitude from 250 mm: Two-way, implicit") {
-		t.Errorf("a turn without a factor is lost: %s", told)
-	}
-	p.text(`[...document.querySelectorAll("#part-whatif .slider")].find((s) => s.querySelector("#if-flow-speed")).querySelector(".turns button").click()`)
-	p.until(`document.querySelector("#if-flow-speed-class").textContent.match(/^(still|then) /)`)
+	p.text(uncertain)
+	p.until(`document.querySelector(".chances")`)
+	p.answered()
 	chances := p.text(`document.querySelector(".chances").innerText.replaceAll("\n", " ")`)
-	for _, part := range []string{"75 %", "Steady load on the undeformed shape 25 %", "Added mass from potential flow < 1 %"} {
+	for _, part := range []string{"Added mass from potential flow 56 % Wake oscillator 44 %", "From 1024 draws of structure.length; standard error 0.19 % at most."} {
 		if !strings.Contains(chances, part) {
 			t.Errorf("no %q in %q", part, chances)
 		}
 	}
+	about := p.text(`document.querySelector("#about-no-lock-in").textContent`)
+	for _, part := range []string{"marginal 54 %, invalid 44 %", "; error over limit 0.928 … 1.35 (5 to 95 %).", "Driven by structure.length (to the power "} {
+		if !strings.Contains(about, part) {
+			t.Errorf("no %q in %q", part, about)
+		}
+	}
+	if got := p.text(`document.querySelector("#part-numbers").innerText.includes("5 to 95 %")`); got != "true" {
+		t.Error("no group has its quantiles")
+	}
+	if got := p.text(`document.querySelector("#part-whatif .slider input").id`); got != "if-structure-length" {
+		t.Errorf("the first slider is %s, and not that of the nearest turn", got)
+	}
+}
+
+// Turning points become marks of the sliders. One that is picked moves its slider
+// there, and the service answers with the class that the turn has named: with a
+// temperature and a gauge pressure too, which count from no zero.
+func TestTurningPoints(t *testing.T) {
+	p := open(t, "/", wide)
+	ran := 0
+	for _, name := range []string{"outfall-span", "damper-membrane", "lock-main", "thrust-plate"} {
+		p.example(name)
+		p.text(`document.querySelector("#more-sliders") && (document.querySelector("#more-sliders").open = true)`)
+		if marks, turns := p.text(`document.querySelectorAll("#part-whatif .turn-marks path").length`), p.text(`document.querySelectorAll("#part-whatif .turns button").length`); marks != turns || marks < "2" {
+			t.Errorf("%s: %s marks for %s turns", name, marks, turns)
+		}
+		var count int
+		p.must(json.Unmarshal([]byte(p.text(`document.querySelectorAll("#part-whatif .turns button").length`)), &count))
+		for i := range count {
+			turn := fmt.Sprintf(`document.querySelectorAll("#part-whatif .turns button")[%d]`, i)
+			p.text(turn + `.click()`)
+			slider := turn + `.closest(".slider")`
+			outcome := slider + `.querySelector(".outcome")`
+			p.until(fmt.Sprintf(`%s.dataset.value === %s.querySelector(".value").textContent`, outcome, slider))
+			told := p.text(turn + `.parentElement.textContent`)
+			if got := strings.TrimPrefix(p.text(outcome+`.textContent`), "then "); !strings.Contains(told, " "+got+" (") {
+				t.Errorf("%s: %q comes to %q", name, told, got)
+			}
+			ran++
+		}
+	}
+	if ran < 18 {
+		t.Errorf("%d turns", ran)
+	}
+}
+
+// Where no slider can show a turn it is told; where the service has no time to
+// look for turns the answer stands without.
+func TestTurnsWithoutSlider(t *testing.T) {
+	p := open(t, "/", wide)
+	p.text(`(() => {
+		const ask = window.fetch;
+		window.fetch = async (path, options) => {
+			const r = await ask(path, options);
+			if (path !== "/v1/classify" || !r.ok) return r;
+			if (window.late) return new Response(JSON.stringify({type: "/problems/answer-took-too-long", title: "x", status: 503, detail: "y"}), {status: 503});
+			const a = await r.json();
+			a.turning_points.push({input: "motion.amplitude", pointer: "/motion/amplitude", direction: "up", value: 0.25, unit: "m", factor: null, finding: "small-stroke", verdict: "invalid", class: "two-way-implicit", sentence: "."});
+			return new Response(JSON.stringify(a));
+		};
+	})()`)
+	p.example("outfall-span")
+	if told := p.text(`document.querySelector("#part-whatif").innerText`); !strings.Contains(told, "motion.amplitude above 250 mm: Two-way, implicit") {
+		t.Errorf("a turn without a factor is lost: %s", told)
+	}
+	p.text(`(() => { window.late = true; })()`)
+	p.example("mast")
+	if told := p.text(`document.querySelector("#part-whatif").innerText`); !strings.Contains(told, "were not found in time") || p.text(`document.querySelectorAll("#part-whatif .slider").length > 2`) != "true" {
+		t.Errorf("%s", told)
+	}
+}
+
+// While someone types, what was asked before is given up: the answer is that of
+// the last text, also where the first takes longest.
+func TestLastOneCounts(t *testing.T) {
+	p := open(t, "/", wide)
+	p.example("mast")
+	p.text(`(() => {
+		const ask = window.fetch;
+		window.paths = [];
+		window.fetch = async (path, options) => {
+			window.paths.push(path);
+			if (options?.body?.includes("first title")) await new Promise((go) => { window.go = go; }); // and never mind the signal
+			return ask(path, {...options, signal: undefined});
+		};
+	})()`)
+	typeTitle := func(text string) {
+		p.text(fmt.Sprintf(`(() => { const f = document.querySelector("#f-title"); f.value = %q; f.dispatchEvent(new Event("input")); })()`, text))
+	}
+	typeTitle("first title")
+	p.until(`window.go`)
+	typeTitle("second title")
+	p.until(`window.paths.length === 3`)
+	p.answered()
+	p.text(`window.go()`)
+	p.text(`document.querySelector("#copy-markdown").click()`)
+	p.until(`document.querySelector("#copied").value.includes("second title")`)
+	if got := p.text(`window.paths.join(" ")`); got != "/v1/classify?what_if=false /v1/classify?what_if=false /v1/classify" {
+		t.Errorf("asked %s", got)
+	}
+}
+
+// Reports come as files, and the map as a picture that says what is on it.
+func TestReportsAndMap(t *testing.T) {
+	p := open(t, "/", wide)
+	folder := t.TempDir()
+	p.saveTo(folder)
+	p.example("outfall-span")
+	for format, begin := range map[string]string{"html": "<!doctype html>", "md": "# ", "png": "\x89PNG"} {
+		p.text(fmt.Sprintf(`document.querySelector("#save-%s").click()`, format))
+		p.until(fmt.Sprintf(`document.querySelector(".copies").innerText.includes(".%s.")`, format))
+		digest := p.shownDigest()[:8]
+		name := filepath.Join(folder, "regimed-EL-0218-"+digest+"."+format)
+		p.until(fmt.Sprintf(`document.querySelector(".copies").innerText.includes(%q)`, filepath.Base(name)))
+		body := p.saved(name)
+		if !strings.HasPrefix(strings.ToLower(string(body)), strings.ToLower(begin)) {
+			t.Errorf("%s begins with %.40q", name, body)
+		}
+	}
+
+	if got := p.text(`document.querySelector("#map-x").value + " " + document.querySelector("#map-y").value`); got != "structure.length structure.diameter" {
+		t.Errorf("the map is offered over %s", got)
+	}
+	p.text(`document.querySelector("#map-draw").click()`)
+	p.until(`document.querySelector(".map img")?.complete && document.querySelector(".map img").naturalWidth > 100`)
+	alt := p.text(`document.querySelector(".map img").alt`)
+	if !strings.Contains(alt, "over structure.length from") || !strings.Contains(alt, "Wake oscillator") {
+		t.Errorf("the map says %q", alt)
+	}
+	p.text(`(() => { document.querySelector("#map-y").value = "structure.length"; document.querySelector("#map-draw").click(); })()`)
+	p.until(`document.querySelector(".map").innerText.includes("two different inputs")`)
 }
 
 // Nothing runs over at 320 px.

@@ -1,7 +1,7 @@
 // The answer, as the service gives it: the class, the ladder, the numbers.
 
 import { h, put, picture } from './dom.js';
-import { shown, quantityShown, share } from './quantity.js';
+import { shown, ends, quantityShown, share } from './quantity.js';
 import { margins } from './margins.js';
 import { plain } from './schema.js';
 
@@ -11,7 +11,7 @@ export class Answer {
   constructor(root, sheet, parts) {
     this.root = root;
     this.sheet = sheet;
-    this.parts = parts; // {whatif, copies}: elements
+    this.parts = parts; // {whatif, map, copies}: elements
     this.onAdd = () => {}; // asked for an input by its pointer
   }
 
@@ -25,6 +25,7 @@ export class Answer {
       ['ladder', 'Ladder', this.ladder(a)],
       ['margins', 'Margins', margins(a, this)],
       ['whatif', 'What if', this.parts.whatif],
+      ['map', 'Map', this.parts.map],
       ['numbers', 'Numbers', this.numbers(a)],
       ['copies', 'Take it away', this.parts.copies],
     ];
@@ -45,7 +46,7 @@ export class Answer {
       h('p', { class: 'class', id: 'class' }, r.title, ' ', h('code', {}, r.class)),
       h('p', {}, `Solves ${r.solves}.`),
       r.beside && h('p', {}, `Beside it, for the natural frequencies: ${r.beside.title.toLowerCase()} (${r.beside.class}).`),
-      this.probabilities(r.probability),
+      this.probabilities(r, a.uncertainty),
       r.conditions.length > 0 && h('div', { class: 'conditions' }, h('h3', {}, r.conditions.length === 1 ? 'On one condition' : 'On conditions'), h('ul', {}, r.conditions.map((c) => h('li', {}, c)))),
       this.settled(r.if_settled),
       h('details', { class: 'fold', id: 'axes' }, h('summary', {}, 'What the model has, axis by axis'),
@@ -54,11 +55,14 @@ export class Answer {
       this.warnings(a));
   }
 
-  probabilities(of) {
-    if (!of) return undefined;
-    const rows = Object.entries(of).map(([id, p]) => [id, typeof p === 'number' ? p : p.share ?? p.value]).filter(([, p]) => p > 0).sort((x, y) => y[1] - x[1]);
+  probabilities(r, u) {
+    if (!r.probability) return undefined;
+    const rows = Object.entries(r.probability).filter(([, p]) => p > 0).sort((x, y) => y[1] - x[1]);
+    const error = Math.max(...Object.values(r.standard_error));
     return h('div', { class: 'chances' }, h('h3', {}, 'With the uncertainty of the inputs'),
-      h('ul', {}, rows.map(([id, p]) => h('li', {}, h('span', { class: 'chance-name' }, this.title(id)), h('meter', { min: 0, max: 1, value: p, 'aria-label': `Probability of ${this.title(id)}` }, share(p)), h('span', { class: 'number' }, share(p))))));
+      h('ul', {}, rows.map(([id, p]) => h('li', {}, h('span', { class: 'chance-name' }, this.title(id)), h('meter', { min: 0, max: 1, value: p, 'aria-label': `Probability of ${this.title(id)}` }, share(p)), h('span', { class: 'number' }, share(p))))),
+      u && h('p', { class: 'quiet' }, `From ${u.samples} draws of ${u.inputs.map((x) => x.input).join(', ')}; standard error ${shown(100 * error, 2)} % at most.`,
+        u.outside > 0 && ` ${u.outside} more lay beyond what an input or a property may be, and were left out.`));
   }
 
   settled(list) {
@@ -74,7 +78,7 @@ export class Answer {
   }
 
   warnings(a) {
-    const list = [...a.warnings.map((w) => ({ ...w, mark: 'mark-marginal' }))];
+    const list = [...new Map(a.warnings.map((w) => [w.pointer + w.sentence, w])).values()];
     return [
       list.length > 0 && h('details', { class: 'fold', id: 'warnings' }, h('summary', {}, list.length === 1 ? '1 warning' : `${list.length} warnings`),
         h('ul', { class: 'told' }, list.map((w) => h('li', {}, w.sentence, ' ', w.pointer && h('button', { type: 'button', class: 'link', onclick: () => this.onAdd(w.pointer) }, 'to the input', h('span', { class: 'unseen' }, ' ' + w.pointer)))))),
@@ -115,9 +119,9 @@ export class Answer {
   groups(a) {
     const all = Object.values(a.groups);
     const known = all.filter((g) => g.value !== null);
-    const uncertain = known.some((g) => g.quantiles);
+    const uncertain = known.some((g) => ends(g.quantiles) !== '');
     const row = (g) => [symbol(g.symbol), h('span', {}, g.title, g.band && h('span', { class: 'tag' }, g.band)), shown(g.value, 4),
-      ...(uncertain ? [g.quantiles ? `${shown(g.quantiles[0], 3)} … ${shown(g.quantiles[2], 3)}` : ''] : []),
+      ...(uncertain ? [ends(g.quantiles)] : []),
       h('span', {}, g.definition, h('span', { class: 'with' }, Object.entries(g.with ?? {}).map(([k, v]) => `${k} = ${v}`).join(', ')))];
     const absent = all.filter((g) => g.value === null);
     return [

@@ -3,6 +3,7 @@
 import { h } from './dom.js';
 import { shown, quantityShown, times } from './quantity.js';
 import { toLink } from './case.js';
+import { report } from './service.js';
 
 // Copies holds the buttons and the text that they make. The text is always shown
 // too: a browser may refuse to copy.
@@ -13,12 +14,26 @@ export class Copies {
     this.out = h('div', { hidden: true }, this.label, this.text);
     this.say = say;
     const button = (id, name, make) => h('button', { type: 'button', id: 'copy-' + id, onclick: () => this.take(name, make(current())) }, name);
+    const download = (format, name) => h('button', { type: 'button', id: 'save-' + format, onclick: () => this.save(format, current()) }, name);
+    this.saved = h('p', { hidden: true });
     this.element = h('div', { class: 'copies' }, h('p', { class: 'tools' },
       button('link', 'Copy link', ({ kase }) => link(kase)),
       button('json', 'Copy JSON', ({ kase }) => JSON.stringify(kase, null, 2)),
       button('curl', 'Copy curl line', ({ kase }) => curl(kase)),
       button('markdown', 'Copy Markdown', ({ kase, answer }) => markdown(kase, answer))),
-    h('p', { class: 'quiet' }, 'The link holds the case itself, behind the #: no server sees it.'), this.out);
+    h('p', { class: 'quiet' }, 'The link holds the case itself, behind the #: no server sees it.'),
+    h('p', { class: 'tools' }, download('html', 'Save report to print'), download('md', 'Save report in Markdown'), download('png', 'Save chart of margins (PNG)')), this.saved, this.out);
+  }
+
+  // save asks the service for a report on the case that is answered, and hands it
+  // to the browser as a file.
+  async save(format, { kase, answer }) {
+    const result = await report(kase, format);
+    const name = `regimed-${(answer.reference ?? answer.title ?? answer.kind).replace(/[^\p{L}\p{N}]+/gu, '-').slice(0, 40)}-${answer.digest.slice(0, 8)}.${format}`;
+    if (result.blob) download(result.blob, name);
+    this.saved.hidden = false;
+    this.saved.textContent = result.blob ? `Saved as ${name}.` : result.failure ?? 'The service refuses this case.';
+    this.say(this.saved.textContent);
   }
 
   async take(name, text) {
@@ -34,6 +49,12 @@ export class Copies {
     }
     this.say(this.label.textContent);
   }
+}
+
+function download(blob, name) {
+  const href = URL.createObjectURL(blob);
+  h('a', { href, download: name }).click();
+  setTimeout(() => URL.revokeObjectURL(href), 60_000); // a browser may read it late
 }
 
 export const link = (kase) => `${location.origin}/#case=${toLink(kase)}`;

@@ -2,7 +2,7 @@
 // logarithmic scale around 1.
 
 import { h, s, picture } from './dom.js';
-import { times, share, quantityShown } from './quantity.js';
+import { times, ends, share, quantityShown } from './quantity.js';
 
 const decades = 3; // shown on either side of the limit
 const order = ['invalid', 'marginal', 'undetermined', 'valid'];
@@ -64,8 +64,9 @@ function about(f, answer) {
     h('p', {}, 'Leaves out ', f.leaves_out, '.'),
     f.needs?.length > 0 && h('p', {}, 'Needs ', answer.inputs(f.needs), '.'),
     f.holds_up_to?.length > 0 && h('p', {}, 'Holds with ', f.holds_up_to.map((x) => `${x.input} ${x.bound ?? 'up to'} ${quantityShown(x.value, x.unit)}`).join('; '), '.'),
-    f.drivers?.length > 0 && h('p', {}, 'Driven by ', f.drivers.map((d) => `${d.input} (to the power ${d.sensitivity.toFixed(1)})`).join(', '), '.'),
-    f.probability && h('p', {}, 'With the uncertainty of the inputs: ', Object.entries(f.probability).map(([verdict, p]) => [verdict, typeof p === 'number' ? p : p?.share]).filter(([, p]) => p > 0).map(([verdict, p]) => `${verdict} ${share(p)}`).join(', '), '.'),
+    f.drivers?.length > 0 && h('p', {}, 'Driven by ', f.drivers.map((d) => `${d.input} (to the power ${d.sensitivity.toFixed(1).replace('-', '−')})`).join(', '), '.'),
+    f.probability && h('p', {}, 'With the uncertainty of the inputs: ', Object.entries(f.probability).filter(([, p]) => p > 0).map(([verdict, p]) => `${words[verdict]} ${share(p)}`).join(', '),
+      ends(f.quantiles, times) && `; error over limit ${ends(f.quantiles, times)} (5 to 95 %)`, '.'),
     f.parts?.length > 0 && h('ul', {}, f.parts.map((p) => h('li', {}, `${words[p.verdict] ?? p.verdict}: ${p.because}`))),
     f.published?.length > 0 && h('ul', {}, f.published.map((p) => h('li', {}, `${p.standard}, ${p.clause} (${p.edition}): ${p.verdict ?? 'no verdict'}${typeof p.utilisation === 'number' ? `, ${times(p.utilisation)} of its limit` : ''}`))),
     f.source && h('p', { class: 'quiet' }, `φ = ${f.factor ?? '–'}, ${f.basis ?? ''}. Source: ${f.source}.`));

@@ -43,22 +43,15 @@ function inParts(v) {
   return undefined;
 }
 
-// offsets of the scales of temperature: kelvin = (x + offset)·factor.
-const scales = [[/(°C|℃|\bdegC\b)/, 273.15, 1], [/(°F|℉|\bdegF\b)/, 459.67, 5 / 9]];
+// offsets of the scales of temperature: absolute zero lies at −offset.
+const scales = [[/(°C|℃|\bdegC\b)/, 273.15], [/(°F|℉|\bdegF\b)/, 459.67]];
 
 const scaleOf = (text) => scales.find(([unit]) => unit.test(text));
 
-// kelvin is the absolute temperature that a text in one of these scales gives;
-// NaN for any other text.
-export function kelvin(text) {
-  const [, shift, factor] = scaleOf(text) ?? [0, NaN, NaN];
-  return (leading(text) + shift) * factor;
-}
-
 // scaled multiplies a quantity that stands in a text, its uncertainty with it,
-// and keeps its unit. A temperature is multiplied from absolute zero.
-export function scaled(text, factor, digits = 4) {
-  const shift = scaleOf(text)?.[1] ?? 0;
+// and keeps its unit. A temperature is multiplied from absolute zero; another
+// scale that doesn't count from zero needs a shift, in its unit.
+export function scaled(text, factor, digits = 4, shift = scaleOf(text)?.[1] ?? 0) {
   const times = (x) => plain((x + shift) * factor - shift, shift ? digits + 1 : digits);
   const m = first.exec(text);
   if (!m) return text;
@@ -114,6 +107,12 @@ export function quantityShown(value, unit, digits = 3) {
 
 // times writes how often the limit is used up.
 export const times = (u) => (u >= 1e4 ? '> 10⁴' : u < 1e-3 ? '< 0.001' : shown(u, 3));
+
+// ends writes the outer ones of three quantiles; nothing where they are one.
+export function ends(quantiles, write = shown) {
+  const [low, , high] = quantiles ?? [];
+  return typeof low !== 'number' || typeof high !== 'number' || write(low) === write(high) ? '' : `${write(low)} … ${write(high)}`;
+}
 
 // share writes a probability in per cent.
 export const share = (p) => (p > 0 && p < 0.005 ? '< 1 %' : p < 1 && p > 0.995 ? '> 99 %' : `${Math.round(p * 100)} %`);

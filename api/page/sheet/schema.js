@@ -109,7 +109,12 @@ export class Sheet {
   // labelOf names the field at a place, or in which a place lies.
   labelOf(pointer, kind) {
     const all = this.sections(kind).flatMap((s) => s.fields);
-    return all.find((f) => f.pointer === pointer)?.label ?? plain(pointer.split('/').pop());
+    const f = all.find((x) => x.pointer === pointer) ?? all.find((x) => pointer.startsWith(x.pointer + '/'));
+    if (!f) return plain(pointer.split('/').pop());
+    if (f.pointer === pointer) return f.label;
+    const [at, name] = pointer.slice(f.pointer.length + 1).split('/');
+    if (f.type === 'interval') return `${f.label}, ${at === '0' ? 'from' : 'to'}`;
+    return `${f.label}, ${Number(at) + 1}: ${f.row?.find((x) => x.name === name)?.label.toLowerCase() ?? name}`;
   }
 
   study() {

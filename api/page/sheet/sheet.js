@@ -9,12 +9,13 @@ import { Form } from './form.js';
 import { Adder } from './adder.js';
 import { Answer } from './answer.js';
 import { WhatIf } from './whatif.js';
+import { RegimeMap } from './map.js';
 import { Copies } from './copies.js';
 
 const pause = 250; // ms after the last change before the service is asked
 
 const state = { kase: {}, aside: new Map(), former: undefined, answered: undefined, told: undefined, violations: [] };
-let sheet, form, answer, whatif, copies, running;
+let sheet, form, answer, whatif, map, copies, running;
 
 start();
 
@@ -31,7 +32,8 @@ async function start() {
   form.onTouched = () => report(state.violations, state.answered?.answer.warnings ?? []);
   whatif = new WhatIf(sheet, askClass, useValue);
   copies = new Copies(() => ({ kase: ordered(state.answered.kase, sheet), answer: state.answered.answer }), say);
-  answer = new Answer(at('answer-body'), sheet, { whatif: whatif.element, copies: copies.element });
+  map = new RegimeMap(say);
+  answer = new Answer(at('answer-body'), sheet, { whatif: whatif.element, map: map.element, copies: copies.element });
   answer.onAdd = (pointer) => form.reveal(pointer, true) ?? go(at('case'));
   kindPicker();
   examplePicker();
@@ -198,10 +200,10 @@ function open(kase) {
   changed.now();
 }
 
-function message(text, isBad) {
+function message(text, isBad, ...more) {
   at('message').hidden = text === '';
   at('message').className = isBad ? 'message bad' : 'message';
-  at('message').textContent = text;
+  put(at('message'), text, more);
   if (text) say(text);
 }
 
@@ -217,6 +219,8 @@ function changed() {
 }
 changed.now = () => asked.now();
 
+// ask asks twice: for the answer alone, which is there at once, and then for what
+// would change it. A change of the case gives both up.
 async function ask() {
   keepAddress();
   running?.abort();
@@ -226,10 +230,14 @@ async function ask() {
   const { signal } = running;
   const kase = copy(state.kase);
   at('answer-body').setAttribute('aria-busy', 'true');
-  const result = await classify(kase, signal);
-  if (signal.aborted || result === undefined) return undefined;
+  const first = await classify(kase, signal, { what_if: false });
+  if (signal.aborted || first === undefined) return;
   at('answer-body').removeAttribute('aria-busy');
-  return take(kase, result);
+  take(kase, first);
+  if (!first.answer) return;
+  const whole = await classify(kase, signal);
+  if (signal.aborted || whole === undefined) return;
+  explored(kase, first.answer, whole);
 }
 
 function keepAddress() {
@@ -253,16 +261,12 @@ function nothingYet() {
 }
 
 function take(kase, result) {
-  if (result.failure) return failed(result.failure);
+  if (result.failure) return failed(result);
   if (document.documentElement.dataset.state === 'failed') message('');
   if (result.violations) return refused(result.violations);
-  state.answered = { kase, answer: result.answer };
   report([], result.answer.warnings);
-  const focus = focusIn(at('answer'));
-  whatif.show(kase, result.answer);
-  answer.show(result.answer);
-  focus();
   fresh();
+  show(kase, result.answer, () => whatif.wait(kase, result.answer));
   const r = result.answer.recommendation;
   strip(r.title);
   say(`Recommended: ${r.title}${r.provisional ? ', provisional' : ''}.`);
@@ -270,9 +274,25 @@ function take(kase, result) {
   return undefined;
 }
 
-function failed(text) {
-  stale(text);
-  message(text, true);
+// explored shows what would change the answer. Where that can't be had, the
+// answer stands without it.
+function explored(kase, a, whole) {
+  const lacks = whole.late ? 'The values at which the class turns were not found in time; the sliders have no marks.' : whole.failure;
+  show(kase, whole.answer ?? a, () => whatif.show(kase, whole.answer ?? a, lacks));
+}
+
+function show(kase, a, vary) {
+  state.answered = { kase, answer: a };
+  const focus = focusIn(at('answer'));
+  vary();
+  map.offer(kase, whatif.offered);
+  answer.show(a);
+  focus();
+}
+
+function failed({ failure, late }) {
+  stale(failure);
+  message(failure, !late, ' ', h('button', { type: 'button', id: 'again', onclick: () => changed.now() }, 'Ask again'));
   document.documentElement.dataset.state = 'failed';
 }
 
@@ -325,7 +345,7 @@ function strip(text) {
 }
 
 async function askClass(kase, signal) {
-  const result = await classify(kase, signal, 'recommendation');
+  const result = await classify(kase, signal, { fields: 'recommendation' });
   if (result?.answer) return result.answer.recommendation;
   return { failure: result?.failure ?? 'No case: ' + (result?.violations[0].detail ?? '') };
 }

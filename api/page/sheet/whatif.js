@@ -3,12 +3,12 @@
 
 import { h, s, put, later } from './dom.js';
 import { get, set, copy } from './case.js';
-import { leading, kelvin, scaled, textOf, plain, quantityShown, shown } from './quantity.js';
+import { leading, scaled, textOf, plain, quantityShown, shown } from './quantity.js';
 
 const atLeast = Math.log(10); // to either side, of ln factor
 const step = atLeast / 230; // about one hundredth of the value, and ten times it exactly
 const atMost = Math.log(1e5);
-const beyond = 0.02; // past a turn, where the other class is safe to be the answer
+const beyond = 0.001; // past a turn, of ln factor: where the other class is the answer
 const first = 5; // sliders that stand open
 
 // WhatIf shows the sliders of an answer. It asks with ask(case, signal), which
@@ -22,17 +22,37 @@ export class WhatIf {
     this.element = h('div', { class: 'whatif' });
   }
 
-  show(kase, answer) {
+  // offered are the inputs that can be moved.
+  offered = [];
+
+  // wait takes a new case while it isn't known yet where its class turns: the
+  // sliders of the former one stay where they are, if it is of the same kind.
+  wait(kase, answer) {
     this.stop();
+    const isAlike = this.kase?.structure.kind === kase.structure.kind;
+    this.kase = kase;
+    this.now = answer.recommendation;
+    this.element.setAttribute('aria-busy', 'true');
+    if (isAlike) return;
+    this.offered = [];
+    put(this.element, h('p', { class: 'quiet' }, 'The values at which the class turns are being looked for…'));
+  }
+
+  // show makes the sliders of an answer; lacks says why it names no turns.
+  show(kase, answer, lacks = '') {
+    this.stop();
+    this.element.removeAttribute('aria-busy');
     this.kase = kase;
     this.now = answer.recommendation;
     const inputs = this.inputs(answer);
+    this.offered = inputs;
     const sliders = inputs.map((input) => this.slider(input));
     const turns = inputs.some((i) => i.turns.length);
     put(this.element,
+      lacks && h('p', { class: 'note' }, lacks),
       h('p', { class: 'quiet' }, inputs.length === 0 ? 'There is no input to vary.' : turns ? 'Move an input; the answer beside it is that of the moved value. Marks show where the class turns.' : 'Move an input; the answer beside it is that of the moved value.'),
       sliders.slice(0, first),
-      this.loose.length > 0 && h('ul', { class: 'turns' }, this.loose.map((t) => h('li', {}, h('code', {}, t.input), ` ${t.direction === 'up' ? 'from' : 'below'} ${quantityShown(t.value, t.unit)}: `, h('b', {}, this.title(t.class)), why(t)))),
+      this.loose.length > 0 && h('ul', { class: 'turns' }, this.loose.map((t) => h('li', {}, h('code', {}, t.input), ` ${t.direction === 'up' ? 'above' : 'below'} ${quantityShown(t.value, t.unit)}${t.gauge ? ' gauge' : ''}: `, h('b', {}, this.title(t.class)), why(t)))),
       sliders.length > first && h('details', { class: 'fold', id: 'more-sliders' }, h('summary', {}, `${sliders.length - first} more inputs`), sliders.slice(first)));
   }
 
@@ -47,8 +67,9 @@ export class WhatIf {
   inputs(answer) {
     const found = new Map();
     this.loose = [];
-    for (const t of (answer.turning_points ?? []).map((turn) => this.placed(turn))) {
-      const input = found.get(t.pointer) ?? this.input(t.pointer, t);
+    const ambient = answer.scales.ambient_pressure?.value;
+    for (const t of answer.turning_points ?? []) {
+      const input = found.get(t.pointer) ?? this.input(t.pointer, t, ambient);
       if (input && Math.abs(Math.log(t.factor)) < atMost) found.set(t.pointer, { ...input, turns: [...input.turns, t] });
       else this.loose.push(t);
     }
@@ -58,13 +79,6 @@ export class WhatIf {
     }
     const nearest = (i) => Math.min(Infinity, ...i.turns.map((t) => Math.abs(Math.log(t.factor))));
     return [...found.values()].sort((a, b) => nearest(a) - nearest(b) || 0);
-  }
-
-  // placed gives a turn of a temperature its factor: the service has none for a
-  // value that may count from no zero.
-  placed(t) {
-    if (t.factor > 0) return t;
-    return { ...t, factor: t.value / kelvin(textOf(get(this.kase, t.pointer))) };
   }
 
   // fields lists the quantities that are given: what the surroundings do first,
@@ -77,16 +91,23 @@ export class WhatIf {
 
   // input describes one that is given, or one that a turning point names though
   // it is not: that has the value at which it was taken. One that is zero can't
-  // be multiplied.
-  input(pointer, turn) {
+  // be multiplied. A gauge pressure is multiplied from no pressure at all.
+  input(pointer, turn, ambient) {
     const given = textOf(get(this.kase, pointer));
     const name = pointer.slice(1).replaceAll('/', '.');
     const label = this.sheet.labelOf(pointer, this.kase.structure.kind);
     if (turn && !(turn.factor > 0)) return undefined;
-    if (leading(given) > 0) return { pointer, name, label, turns: [], text: (factor, digits = 3) => (factor === 1 ? given : scaled(given, factor, digits)) };
+    const shift = turn?.gauge ? ambient * leading(given) / ((turn.value + ambient) / turn.factor - ambient) : undefined;
+    if (this.isWhole(pointer)) return { pointer, name, label, turns: [], isWhole: true, text: (factor) => String(Math.max(1, Math.round((leading(given) || turn.value / turn.factor) * factor))) };
+    if (leading(given) > 0) return { pointer, name, label, turns: [], text: (factor, digits = 3) => (factor === 1 ? given : scaled(given, factor, digits, shift)) };
     if (given !== '' || !turn) return undefined;
     const base = turn.value / turn.factor;
     return { pointer, name, label, turns: [], assumed: true, text: (factor, digits = 3) => `${plain(base * factor, digits)} ${turn.unit === '1' ? '' : turn.unit}`.trim() };
+  }
+
+  // isWhole reports whether only whole numbers may stand at a place.
+  isWhole(pointer) {
+    return this.sheet.sections(this.kase.structure.kind).some((s) => s.fields.some((f) => f.pointer === pointer && f.type === 'integer'));
   }
 
   slider(input) {
@@ -99,13 +120,14 @@ export class WhatIf {
     const outcome = h('span', { class: 'outcome', id: id + '-class' });
     const use = h('button', { type: 'button', class: 'use' }, 'Use this value');
     const back = h('button', { type: 'button', class: 'back' }, 'Back');
-    const state = { input, range, value, outcome, use, back, factor: () => Math.exp(Number(range.value) * step) };
+    const state = { input, range, value, outcome, use, back, exact: undefined };
     const ask = later(() => this.moved(state), 60);
     range.addEventListener('input', () => {
+      state.exact = undefined;
       this.tell(state);
       ask();
     });
-    use.addEventListener('click', () => this.use(input.pointer, input.text(state.factor())));
+    use.addEventListener('click', () => this.use(input.pointer, given(state.input, this.textAt(state))));
     back.addEventListener('click', () => this.put(state, 0));
     this.settle(state);
     const where = (x) => (100 * (x / step - low)) / (high - low) + '%';
@@ -118,17 +140,23 @@ export class WhatIf {
   }
 
   turn(state, t) {
-    const to = Math.sign(t.at) * Math.ceil(Math.abs(t.at) / step + beyond / step);
-    return h('li', {}, h('button', { type: 'button', class: 'link', onclick: () => this.put(state, to) },
-      `${t.at > 0 ? 'from' : 'below'} ${state.input.text(t.factor)}`), ` ${this.title(t.class)}`, why(t));
+    return h('li', {}, h('button', { type: 'button', class: 'link', onclick: () => this.put(state, t.at + (t.direction === 'up' ? beyond : -beyond)) },
+      `${state.input.isWhole ? 'at' : t.direction === 'up' ? 'above' : 'below'} ${state.input.text(t.factor)}`), ` ${this.title(t.class)}`, why(t));
   }
 
   title(id) {
     return this.sheet.classes.find((c) => c.id === id)?.title ?? id;
   }
 
+  // textAt is the value at which a slider stands: a turn lies between its steps.
+  textAt(state) {
+    return state.exact === undefined ? state.input.text(Math.exp(Number(state.range.value) * step)) : state.input.text(Math.exp(state.exact), 5);
+  }
+
+  // put moves a slider to ln factor.
   put(state, position) {
-    state.range.value = position;
+    state.exact = position || undefined;
+    state.range.value = Math.round(position / step);
     this.tell(state);
     if (position === 0) {
       this.settle(state);
@@ -143,8 +171,8 @@ export class WhatIf {
   }
 
   tell(state) {
-    state.value.textContent = state.input.text(state.factor());
-    const still = Number(state.range.value) === 0;
+    state.value.textContent = this.textAt(state);
+    const still = Number(state.range.value) === 0 && state.exact === undefined;
     state.use.hidden = still;
     state.back.hidden = still;
     this.spoken(state);
@@ -159,7 +187,7 @@ export class WhatIf {
     const running = new AbortController();
     this.running = running;
     const moved = copy(this.kase);
-    set(moved, state.input.pointer, state.input.text(state.factor()));
+    set(moved, state.input.pointer, given(state.input, this.textAt(state)));
     const result = await this.ask(moved, running.signal);
     if (running.signal.aborted) return;
     this.result(state, result, false);
@@ -168,13 +196,28 @@ export class WhatIf {
   result(state, r, still) {
     state.outcome.classList.toggle('turned', !r.failure && r.class !== this.now.class);
     state.outcome.dataset.class = r.class ?? '';
+    state.outcome.dataset.value = state.value.textContent;
     put(state.outcome, r.failure ?? [r.class === this.now.class ? (still ? 'now ' : 'still ') : 'then ', h('b', {}, r.title)]);
     this.spoken(state);
   }
 }
 
-// why says which finding turns the class.
-const why = (t) => h('span', { class: 'quiet' }, t.factor > 0 ? ` (×${shown(t.factor)}` : ' (', t.finding && [t.factor > 0 ? ': ' : '', h('a', { href: '#finding-' + t.finding }, t.finding), ` turns ${t.verdict ?? ''}`], ')');
+// change writes by how much an input differs at a turn, in the form that is
+// easiest to read.
+function change(t) {
+  const signed = (x, unit) => `${x < 0 ? '−' : '+'}${shown(Math.abs(x))} ${unit}`;
+  if (t.unit === 'K') return signed(t.value - t.value / t.factor, 'K');
+  if (Math.abs(Math.log(t.factor)) < Math.log(1.25)) return signed(100 * (t.factor - 1), '%');
+  return t.factor > 1 ? `×${shown(t.factor)}` : `÷${shown(1 / t.factor)}`;
+}
+
+// given is a text of a slider as it stands in a case.
+const given = (input, text) => (input.isWhole ? Number(text) : text);
+
+// why says which finding turns the class; without one it is the domain of the
+// classes that changes.
+const why = (t) => h('span', { class: 'quiet' }, t.factor > 0 ? ` (${change(t)}: ` : ' (',
+  t.finding ? [h('a', { href: '#finding-' + t.finding }, t.finding), ` turns ${t.verdict}`] : 'other classes come into question', ')');
 
 // marks draws where the class turns, below the track.
 const marks = (turns, where) => s('svg', { class: 'turn-marks', 'aria-hidden': 'true', height: 12 },
