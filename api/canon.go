@@ -138,7 +138,7 @@ func refused(e *canon.Entry, err error, values url.Values) []input.Violation {
 		return bad.List()
 	}
 	pointer, raw := "", []byte(nil)
-	if contains(argumentNames(e), outside.Arg) {
+	if slices.Contains(argumentNames(e), outside.Arg) {
 		pointer = "/" + outside.Arg
 		if values.Has(outside.Arg) {
 			raw = jsonString(values.Get(outside.Arg))

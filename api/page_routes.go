@@ -1,9 +1,7 @@
 package api
 
 import (
-	"mime"
 	"net/http"
-	"strconv"
 	"strings"
 
 	"github.com/labstack/echo/v4"
@@ -68,41 +66,9 @@ func holds(lines []string, tag string) bool {
 	return false
 }
 
-// acceptsHTML reports whether a caller takes HTML: the most specific range of
-// its headers that covers HTML decides (RFC 9110, 12.5.1). Who says nothing
-// takes anything, as does who can't be understood.
+// acceptsHTML reports whether a caller takes HTML. Who says nothing takes
+// anything, as does who can't be understood.
 func acceptsHTML(lines []string) bool {
-	said, specific, accepts := false, -1, false
-	for _, line := range lines {
-		for one := range strings.SplitSeq(line, ",") {
-			media, parameters, err := mime.ParseMediaType(one)
-			if err != nil {
-				continue
-			}
-			said = true
-			if rank := rangeOfHTML(media); rank > specific {
-				specific, accepts = rank, wanted(parameters["q"])
-			}
-		}
-	}
-	return accepts || !said
-}
-
-// rangeOfHTML says how closely a media range names HTML; negative: not at all.
-func rangeOfHTML(media string) int {
-	switch media {
-	case "text/html":
-		return 2
-	case "text/*":
-		return 1
-	case "*/*":
-		return 0
-	}
-	return -1
-}
-
-// wanted reads a weight: everything but zero asks for the medium.
-func wanted(q string) bool {
-	x, err := strconv.ParseFloat(q, 64)
-	return err != nil || x > 0
+	ranges := acceptRanges(lines)
+	return len(ranges) == 0 || weightOf("text/html", ranges) > 0
 }

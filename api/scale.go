@@ -72,7 +72,7 @@ func readRatio(name string, raw jsontext.Value, bad *input.Violations) float64 {
 		x, ok = similar.ParseRatio(textOf(raw))
 	}
 	if !ok {
-		bad.Add("/"+name, input.WrongType, fmt.Sprintf("%s is a scale, model over prototype: 0.025 or \"1:40\".", name), raw)
+		bad.Add("/"+name, input.WrongType, fmt.Sprintf("%s is a scale above zero, model over prototype: 0.025 or \"1:40\".", name), raw)
 	}
 	return x
 }

@@ -2,14 +2,11 @@ package api
 
 import (
 	"math"
-	"slices"
 	"strconv"
 	"strings"
 
 	"github.com/go-json-experiment/json/jsontext"
 )
-
-func contains(list []string, s string) bool { return slices.Contains(list, s) }
 
 // escapePointer writes a name as part of a JSON Pointer (RFC 6901).
 func escapePointer(name string) string {

@@ -57,7 +57,7 @@ func (e *ReadError) Unwrap() error { return e.Err }
 
 // ErrOther says that a former output does not belong to the input and the
 // options of this run.
-var ErrOther = errors.New("the output there is ends with another line than this run would write; it is of another input, of other options or of another version")
+var ErrOther = errors.New("what it holds is of another input, of other options or of another version: its last line is not what this run would write")
 
 // Run answers the lines of a stream, or of a shard of it, in order. It holds a
 // few lines a worker: a slow receiver holds the reader back.

@@ -148,7 +148,11 @@ func (f *batchFlags) run(cmd *cobra.Command, name string, only render.Fields) er
 		Progress: say.line,
 	})
 	say.finish(end)
-	if err := errors.Join(f.explained(err, name), out.Close()); err != nil {
+	failed, closing := f.explained(err, name), out.Close()
+	if failed != nil && errors.Is(closing, failed) {
+		closing = nil // the buffer tells the same failure again
+	}
+	if err := errors.Join(failed, closing); err != nil {
 		return err
 	}
 	return f.finish(cmd, end)

@@ -308,3 +308,15 @@ func TestBatchProgress(t *testing.T) {
 		}
 	}
 }
+
+// A disk that is full is said once.
+func TestBatchOnAFullDisk(t *testing.T) {
+	if _, err := os.Stat("/dev/full"); err != nil {
+		t.Log("no /dev/full here: the failing writer of package batch stands for it")
+		return
+	}
+	got := regimed(batchOf(t, 40), "batch", "-", "-o", "/dev/full")
+	if got.status != statusRefuse || strings.Count(got.errOut, "no space left") != 1 {
+		t.Errorf("status %d: %s", got.status, got.errOut)
+	}
+}

@@ -20,8 +20,10 @@ func newServe() *cobra.Command {
 	cmd := &cobra.Command{
 		Use:   "serve",
 		Short: "Answer cases over HTTP",
-		Long: `Serves POST /v1/classify and /v1/batch, the catalogues and the canonical
-solutions over HTTP. The contract stands at /openapi.yaml.
+		Long: `Serves what the commands do over HTTP: cases, batches, sweeps, maps,
+comparisons, scalings, the catalogues and the canonical solutions. In a browser,
+/ is a page on which to build a case, and /docs shows the operations; the
+contract stands at /openapi.yaml.
 
 With --data it keeps answers that are posted to /v1/records, in the file
 records.db of that directory, and gives each a permanent address. Without, the

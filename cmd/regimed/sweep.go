@@ -54,10 +54,10 @@ can't be computed has no values, and says why in the column problem.
 
 The form is NDJSON, CSV or Parquet, by --format or by the ending of --output.
 Each ends with a mark: complete or interrupted. On an interrupt or SIGTERM the
-rows in hand are written and marked so; a second one ends the program at once. The same command
-with --resume goes on behind the last whole row of an NDJSON or CSV file,
-whatever stopped it, and makes the file that an undisturbed run would have made;
-where there is no file yet it begins one.
+rows in hand are written and marked so; a second one ends the program at once.
+The same command with --resume goes on behind the last whole row of an NDJSON or
+CSV file, whatever stopped it, and makes the file that an undisturbed run would
+have made; where there is no file yet it begins one.
 
 --shards and --index write one of several equal parts, each a file of its own,
 whose rows in order are those of the whole.
@@ -169,7 +169,7 @@ func (f *sweepFlags) run(cmd *cobra.Command, plan *whatif.Plan, format string) e
 	if err := errors.Join(err, out.Close()); err != nil {
 		return err
 	}
-	return f.finish(cmd, sheet, end)
+	return f.finish(cmd, sheet, format, end)
 }
 
 // open opens the output at its beginning, or behind what it holds already.
@@ -222,7 +222,7 @@ func (f *sweepFlags) write(ctx context.Context, cmd *cobra.Command, s *table.She
 }
 
 // finish says how it ended where that is not plain success.
-func (f *sweepFlags) finish(cmd *cobra.Command, s *table.Sheet, end table.End) error {
+func (f *sweepFlags) finish(cmd *cobra.Command, s *table.Sheet, format string, end table.End) error {
 	if end.Problems > 0 {
 		cmd.PrintErrf("regimed: %d of %s can't be computed; the column problem says why\n", end.Problems, count(int(end.Points), "point"))
 	}
@@ -230,13 +230,9 @@ func (f *sweepFlags) finish(cmd *cobra.Command, s *table.Sheet, end table.End) e
 		return nil
 	}
 	advice := ""
-	if f.out != "" && f.formatResumes() {
+	if f.out != "" && format != table.Parquet {
 		advice = "; the same command with --resume goes on"
 	}
 	cmd.PrintErrf("regimed: interrupted after %d of %s%s\n", end.Points, count(int(s.Rows()), "point"), advice)
 	return status(statusInterrupted)
-}
-
-func (f *sweepFlags) formatResumes() bool {
-	return !strings.EqualFold(filepath.Ext(f.out), "."+table.Parquet) && f.format != table.Parquet
 }
