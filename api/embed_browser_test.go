@@ -6,7 +6,6 @@ import (
 	"net/http"
 	"net/http/httptest"
 	"os"
-	"os/exec"
 	"strings"
 	"sync"
 	"testing"
@@ -20,6 +19,7 @@ import (
 	"github.com/chromedp/chromedp"
 
 	"regimed/api"
+	"regimed/api/browsertest"
 	"regimed/api/store"
 )
 
@@ -33,24 +33,10 @@ type browser struct {
 	asked    []string
 }
 
-// newBrowser starts a browser that ends with the test. Without one on the path
-// the test is skipped, unless the environment says that it has to run.
+// newBrowser starts a browser that ends with the test.
 func newBrowser(t *testing.T) *browser {
 	t.Helper()
-	program, err := exec.LookPath("chromium")
-	switch {
-	case err != nil && os.Getenv("REGIMED_BROWSER") == "required":
-		t.Fatal("no chromium on the path")
-	case err != nil:
-		t.Skip("no chromium on the path (apt-get install chromium); with REGIMED_BROWSER=required this is a failure")
-	}
-	options := append(chromedp.DefaultExecAllocatorOptions[:], chromedp.ExecPath(program), chromedp.UserDataDir(t.TempDir()),
-		chromedp.NoSandbox, chromedp.DisableGPU, chromedp.Flag("disable-quic", true), chromedp.Flag("disable-component-update", true))
-	ctx, end := context.WithTimeout(context.Background(), 3*time.Minute)
-	t.Cleanup(end)
-	ctx, end = chromedp.NewExecAllocator(ctx, options...)
-	t.Cleanup(end)
-	ctx, end = chromedp.NewContext(ctx)
+	ctx, end := context.WithTimeout(browsertest.Open(t), 3*time.Minute)
 	t.Cleanup(end)
 	b := &browser{t: t, ctx: ctx}
 	b.must(chromedp.Do(ctx, chromedp.EmulateViewport(1200, 900)))

@@ -13,6 +13,8 @@ import (
 	"path/filepath"
 	"strings"
 	"testing"
+
+	"regimed/api/browsertest"
 )
 
 // The checker of accessibility, fetched from the npm registry and never kept in
@@ -49,7 +51,7 @@ func fetchAxe(t *testing.T, place string) {
 	folder := t.TempDir()
 	cmd := exec.Command("npm", "pack", "axe-core@"+axeVersion, "--pack-destination", folder)
 	if out, err := cmd.CombinedOutput(); err != nil {
-		missing(t, fmt.Sprintf("npm pack axe-core@%s: %v: %s", axeVersion, err, out))
+		browsertest.Missing(t, fmt.Sprintf("npm pack axe-core@%s: %v: %s", axeVersion, err, out))
 	}
 	data, err := os.ReadFile(filepath.Join(folder, "axe-core-"+axeVersion+".tgz"))
 	if err != nil {

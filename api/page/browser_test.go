@@ -2,11 +2,9 @@ package page_test
 
 import (
 	"context"
-	"errors"
 	"fmt"
 	"net/http/httptest"
 	"os"
-	"os/exec"
 	"strings"
 	"sync"
 	"testing"
@@ -21,69 +19,23 @@ import (
 	"github.com/chromedp/chromedp/kb"
 
 	"regimed/api"
+	"regimed/api/browsertest"
 )
-
-// required makes a missing browser a failure: set in the environment where
-// every check has to run.
-const required = "REGIMED_BROWSER"
-
-// missing ends a test for which something outside this module is not there.
-func missing(t *testing.T, what string) {
-	t.Helper()
-	if os.Getenv(required) == "required" {
-		t.Fatal(what)
-	}
-	t.Skipf("%s; with %s=required this is a failure", what, required)
-}
 
 // chromium is one browser for all tests; it ends with them.
 var chromium = struct {
 	start sync.Once
 	ctx   context.Context
-	end   []func()
+	end   func()
 	err   error
 }{}
 
 func TestMain(m *testing.M) {
 	status := m.Run()
-	for i := len(chromium.end) - 1; i >= 0; i-- {
-		chromium.end[i]()
+	if chromium.end != nil {
+		chromium.end()
 	}
 	os.Exit(status)
-}
-
-// startChromium starts the browser. One that breaks down before it has shown
-// anything says nothing about the page: it is started again, twice at most.
-func startChromium(program string) {
-	for range 3 {
-		if chromium.err = tryChromium(program); chromium.err == nil {
-			return
-		}
-	}
-}
-
-func tryChromium(program string) error {
-	folder, err := os.MkdirTemp("", "regimed-page-")
-	if err != nil {
-		return err
-	}
-	options := append(chromedp.DefaultExecAllocatorOptions[:], chromedp.ExecPath(program), chromedp.UserDataDir(folder),
-		chromedp.NoSandbox, chromedp.DisableGPU, chromedp.Flag("disable-quic", true), chromedp.Flag("disable-component-update", true))
-	allocator, end := chromedp.NewExecAllocator(context.Background(), options...)
-	ctx, closed := chromedp.NewContext(allocator)
-	chromium.ctx = ctx
-	chromium.end = append(chromium.end, func() { os.RemoveAll(folder) }, end, closed)
-	return chromedp.Do(ctx)
-}
-
-// onPath finds a browser.
-func onPath() (string, error) {
-	for _, name := range []string{"chromium", "chromium-browser", "google-chrome"} {
-		if program, err := exec.LookPath(name); err == nil {
-			return program, nil
-		}
-	}
-	return "", errors.New("no browser")
 }
 
 // tab is a page in the browser, with what went wrong on it.
@@ -100,11 +52,8 @@ type tab struct {
 // open starts a service and a tab on its page, wide or narrow.
 func open(t *testing.T, path string, width int64) *tab {
 	t.Helper()
-	program, err := onPath()
-	if err != nil {
-		missing(t, "no chromium on the path (apt-get install chromium)")
-	}
-	chromium.start.Do(func() { startChromium(program) })
+	program := browsertest.Program(t)
+	chromium.start.Do(func() { chromium.ctx, chromium.end, chromium.err = browsertest.Start(program) })
 	if chromium.err != nil {
 		t.Fatal(chromium.err)
 	}

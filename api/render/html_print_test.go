@@ -2,9 +2,7 @@ package render
 
 import (
 	"context"
-	"errors"
 	"os"
-	"os/exec"
 	"path/filepath"
 	"regexp"
 	"testing"
@@ -13,41 +11,16 @@ import (
 	cdppage "github.com/chromedp/cdproto/page"
 	"github.com/chromedp/chromedp"
 
+	"regimed/api/browsertest"
 	"regimed/regime"
 )
 
 // browser starts a browser for one test; it ends with it.
 func browser(t *testing.T) context.Context {
 	t.Helper()
-	program, err := onPath()
-	if err != nil {
-		const missing = "no chromium on the path (apt-get install chromium)"
-		if os.Getenv("REGIMED_BROWSER") == "required" {
-			t.Fatal(missing)
-		}
-		t.Skip(missing + "; with REGIMED_BROWSER=required this is a failure")
-	}
-	options := append(chromedp.DefaultExecAllocatorOptions[:], chromedp.ExecPath(program), chromedp.UserDataDir(t.TempDir()),
-		chromedp.NoSandbox, chromedp.DisableGPU, chromedp.Flag("disable-quic", true), chromedp.Flag("disable-component-update", true))
-	allocator, end := chromedp.NewExecAllocator(t.Context(), options...)
-	t.Cleanup(end)
-	ctx, closed := chromedp.NewContext(allocator)
-	t.Cleanup(closed)
-	ctx, cancel := context.WithTimeout(ctx, 5*time.Minute)
+	ctx, cancel := context.WithTimeout(browsertest.Open(t), 5*time.Minute)
 	t.Cleanup(cancel)
-	if err := chromedp.Do(ctx); err != nil {
-		t.Fatal(err)
-	}
 	return ctx
-}
-
-func onPath() (string, error) {
-	for _, name := range []string{"chromium", "chromium-browser", "google-chrome"} {
-		if program, err := exec.LookPath(name); err == nil {
-			return program, nil
-		}
-	}
-	return "", errors.New("no browser")
 }
 
 var (
