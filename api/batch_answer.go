@@ -123,7 +123,7 @@ func memberOf(line []byte) batchMember {
 	var bad input.Violations
 	seen := map[string]bool{}
 	var kase jsontext.Value
-	for name, value := range objectMembers(line) {
+	for name, value := range input.Members(line) {
 		pointer := "/" + escapePointer(name)
 		switch {
 		case seen[name]:

@@ -129,7 +129,7 @@ func bodyMembers(body []byte, schema *input.Schema, known ...string) (map[string
 		return nil, bad, nil
 	}
 	members := map[string]jsontext.Value{}
-	for name, value := range objectMembers(whole) {
+	for name, value := range input.Members(whole) {
 		pointer := "/" + escapePointer(name)
 		if _, again := members[name]; again {
 			bad.Add(pointer, input.Duplicate, fmt.Sprintf("%s is given twice.", quoted(name)), value)
@@ -159,25 +159,4 @@ func unknownMember(name string, known []string) string {
 		return fmt.Sprintf("The body has no member %s. Did you mean %s?", quoted(name), input.OrList(near))
 	}
 	return fmt.Sprintf("The body has no member %s; it has %s.", quoted(name), input.OrList(known))
-}
-
-// objectMembers goes through a valid object, repeated names included.
-func objectMembers(object jsontext.Value) func(yield func(string, jsontext.Value) bool) {
-	return func(yield func(string, jsontext.Value) bool) {
-		dec := newDecoder(object)
-		if _, err := dec.ReadToken(); err != nil {
-			return
-		}
-		for dec.PeekKind() == '"' {
-			token, err := dec.ReadToken()
-			if err != nil {
-				return
-			}
-			name := token.String()
-			value, err := dec.ReadValue()
-			if err != nil || !yield(name, value.Clone()) {
-				return
-			}
-		}
-	}
 }

@@ -31,7 +31,7 @@ listed as distorted is what differs between them.`,
 		Args:              arguments(2, 2, "name two files; one of them may be - for standard input"),
 		ValidArgsFunction: completeCases,
 		RunE: func(cmd *cobra.Command, args []string) error {
-			if err := knownFormat(format, []string{"text", "json"}); err != nil {
+			if err := knownFormat(format, listFormats); err != nil {
 				return err
 			}
 			if err := knownTolerance(tolerance); err != nil {
@@ -61,17 +61,18 @@ listed as distorted is what differs between them.`,
 			return err
 		},
 	}
-	addCompareFlags(cmd, &format, &tolerance, &page)
+	addCompareFlags(cmd, listFormats, &format, &tolerance, &page)
 	return cmd
 }
 
-// addCompareFlags adds the flags of what compares two answers.
-func addCompareFlags(cmd *cobra.Command, format *string, tolerance *float64, page *render.TextOptions) {
-	cmd.Flags().StringVarP(format, "format", "f", formats[0], "form of the answer: text or json")
+// addCompareFlags adds the flags of what compares two answers; forms are those of
+// its answer, the first the default.
+func addCompareFlags(cmd *cobra.Command, forms []string, format *string, tolerance *float64, page *render.TextOptions) {
+	cmd.Flags().StringVarP(format, "format", "f", forms[0], "form of the answer: text or json")
 	cmd.Flags().Float64Var(tolerance, "tolerance", similar.Kept, "relative difference up to which a group counts as kept")
 	cmd.Flags().IntVar(&page.Width, "width", 96, "columns of the text, from 80 to 160")
 	cmd.Flags().BoolVar(&page.Colour, "colour", false, "set the text in the colours of a terminal")
-	completeFlag(cmd, "format", completeFrom(func() []string { return formats }))
+	completeFlag(cmd, "format", completeFrom(func() []string { return forms }))
 	completeFlag(cmd, "width", cobra.NoFileCompletions)
 	completeFlag(cmd, "tolerance", cobra.NoFileCompletions)
 }

@@ -83,7 +83,7 @@ be judged, 2 on bad input.`,
 	cmd.Flags().StringSliceVar(&flags.keep, "keep", nil, "groups that the model keeps, separated by commas")
 	cmd.Flags().StringSliceVar(&flags.free, "free", nil, "what may change as needed: "+input.OrList(similar.FreeNames()))
 	cmd.Flags().StringVar(&flags.fluid, "fluid", "", "fluid of the model: a name, or as in a case, {name: water, temperature: 18 degC}")
-	addCompareFlags(cmd, &format, &flags.tolerance, &page)
+	addCompareFlags(cmd, scaleFormats, &format, &flags.tolerance, &page)
 	cmd.Flags().Lookup("format").Usage = "form of the answer: text, json, or case for the model's case alone"
 	completeFlag(cmd, "keep", completeFrom(similar.GroupNames))
 	completeFlag(cmd, "free", completeFrom(similar.FreeNames))

@@ -5,6 +5,7 @@ import (
 	"errors"
 	"fmt"
 	"io"
+	"iter"
 	"math"
 	"strconv"
 	"strings"
@@ -587,6 +588,23 @@ func (d *decoder) rows(f *Field, at string, raw jsontext.Value) ([][]Value, bool
 		rows = append(rows, sub.made.given)
 	}
 	return rows, true
+}
+
+// Members goes through the members of an object that is valid JSON, repeated
+// names included. The values are the caller's to keep.
+func Members(object jsontext.Value) iter.Seq2[string, jsontext.Value] {
+	return func(yield func(string, jsontext.Value) bool) {
+		dec := jsontext.NewDecoder(bytes.NewBuffer(object), jsontext.AllowDuplicateNames(true))
+		if _, err := dec.ReadToken(); err != nil {
+			return
+		}
+		for dec.PeekKind() == '"' {
+			name, value, err := member(dec)
+			if err != nil || !yield(name, value.Clone()) {
+				return
+			}
+		}
+	}
 }
 
 func elements(raw jsontext.Value) []jsontext.Value {

@@ -121,7 +121,7 @@ func readMapAxis(c *input.Case, at string, raw jsontext.Value, bad *input.Violat
 		return MapAxis{}
 	}
 	members := map[string]jsontext.Value{}
-	for name, value := range membersOf(raw) {
+	for name, value := range input.Members(raw) {
 		switch {
 		case !slices.Contains(mapMembers, name):
 			bad.Add(at+"/"+escape(name), input.UnknownField, unknownMapMember(name), value)

@@ -121,7 +121,7 @@ func (d *requestDecoder) object(at string, raw jsontext.Value, what string, know
 		return nil, false
 	}
 	members := map[string]jsontext.Value{}
-	for name, value := range membersOf(raw) {
+	for name, value := range input.Members(raw) {
 		pointer := at + "/" + escape(name)
 		switch {
 		case !slices.Contains(known, name):
@@ -144,27 +144,6 @@ func unknownName(what, name string, known []string) string {
 		return s + ". Did you mean " + input.OrList(near) + "?"
 	}
 	return s + "; known are " + input.OrList(known) + "."
-}
-
-// membersOf goes through the members of an object that is valid JSON.
-func membersOf(raw jsontext.Value) func(yield func(string, jsontext.Value) bool) {
-	return func(yield func(string, jsontext.Value) bool) {
-		dec := jsontext.NewDecoder(bytes.NewBuffer(raw), jsontext.AllowDuplicateNames(true))
-		if _, err := dec.ReadToken(); err != nil {
-			return
-		}
-		for dec.PeekKind() == '"' {
-			token, err := dec.ReadToken()
-			if err != nil {
-				return
-			}
-			name := token.String()
-			value, err := dec.ReadValue()
-			if err != nil || !yield(name, value.Clone()) {
-				return
-			}
-		}
-	}
 }
 
 // elementsOf returns the elements of a list that is valid JSON.
@@ -236,11 +215,11 @@ func (d *requestDecoder) theCase(raw jsontext.Value) (c *input.Case, known bool)
 	if err != nil || raw.Kind() != '{' {
 		return nil, false
 	}
-	for name, value := range membersOf(raw) {
+	for name, value := range input.Members(raw) {
 		if name != "structure" || value.Kind() != '{' {
 			continue
 		}
-		for inner, kind := range membersOf(value) {
+		for inner, kind := range input.Members(value) {
 			if text, _ := textOf(kind); inner == "kind" && d.schema.Kind(text) != nil {
 				return input.NewCase(d.schema, text), false
 			}
